@@ -1,0 +1,69 @@
+import { z } from 'zod';
+import { ROLES } from '../region/roles.js';
+
+const finite = z.number();
+const positive = finite.positive();
+const point = z.tuple([finite, finite, finite]);
+const identifier = z.string().min(1).max(64);
+
+export const ShapeSchema = z.discriminatedUnion('kind', [
+  z.object({
+    kind: z.literal('ellipse'),
+    centreMm: point,
+    u: point.optional(),
+    v: point.optional(),
+    radiiMm: z.tuple([positive, positive]),
+  }),
+  z.object({ kind: z.literal('outline'), pointsMm: z.array(point).min(3) }),
+]);
+
+export const StackReferenceSchema = z.object({
+  seriesInstanceUid: z.string().min(1),
+  phasePercent: finite.optional(),
+});
+
+export const NoiseSourceSchema = z.enum(['lumen', 'wall', 'reference', 'pooled']);
+
+export const PlanRegionSchema = z.object({
+  id: identifier,
+  role: z.enum(ROLES),
+  shape: ShapeSchema,
+});
+
+export const PlanContrastSchema = z.object({
+  id: identifier,
+  lumen: identifier,
+  wall: identifier,
+  noise: NoiseSourceSchema,
+  reference: identifier.optional(),
+});
+
+export const PlanProfileSchema = z.object({
+  id: identifier,
+  fromMm: point,
+  toMm: point,
+  bandMm: finite.nonnegative(),
+  nominalMm: positive.optional(),
+});
+
+export const PlanStentSchema = z.object({
+  id: identifier,
+  centreMm: point,
+  nominalMm: positive.optional(),
+});
+
+/** The part of a note that can be measured; what the command line's `measure` reads. */
+export const PlanSchema = z.object({
+  plan: z.literal(1),
+  pair: z.object({ soft: StackReferenceSchema, sharp: StackReferenceSchema.optional() }),
+  regions: z.array(PlanRegionSchema).default([]),
+  contrasts: z.array(PlanContrastSchema).default([]),
+  profiles: z.array(PlanProfileSchema).default([]),
+  stents: z.array(PlanStentSchema).default([]),
+});
+
+export type Plan = z.infer<typeof PlanSchema>;
+export type PlanRegion = z.infer<typeof PlanRegionSchema>;
+export type PlanContrast = z.infer<typeof PlanContrastSchema>;
+export type StackReference = z.infer<typeof StackReferenceSchema>;
+export type NoiseSource = z.infer<typeof NoiseSourceSchema>;

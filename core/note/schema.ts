@@ -1,0 +1,159 @@
+import { z } from 'zod';
+import {
+  NoiseSourceSchema,
+  PlanContrastSchema,
+  PlanRegionSchema,
+  StackReferenceSchema,
+} from './plan.js';
+
+const text = z.string();
+const maybeText = z.string().nullable();
+const maybeNumber = z.number().nullable();
+const remark = z.object({ code: text, text });
+
+/** The two kernels of a pair; the note and its exports call every value by one of these. */
+export const KernelSchema = z.enum(['soft', 'sharp']);
+
+export const RegionValueSchema = z.object({
+  n: z.number().int().nonnegative(),
+  meanHu: maybeNumber,
+  sdHu: maybeNumber,
+  minHu: maybeNumber,
+  maxHu: maybeNumber,
+  medianHu: maybeNumber,
+  areaMm2: z.number(),
+  sampledAreaMm2: z.number(),
+  snr: maybeNumber,
+  sliceIndex: z.number().int().nullable(),
+  sliceOffsetMm: maybeNumber,
+  sopInstanceUid: maybeText,
+  standardErrorHu: maybeNumber,
+  placementHu: maybeNumber,
+  flags: z.array(remark),
+});
+
+/** One stack of the pair, with the labels as its files have them. */
+export const NoteStackSchema = StackReferenceSchema.extend({
+  key: text,
+  seriesNumber: maybeNumber,
+  seriesDescription: maybeText,
+  kernelLabel: maybeText,
+  pixelSpacingMm: z.tuple([z.number(), z.number()]),
+  sliceSpacingMm: maybeNumber,
+  thicknessMm: maybeNumber,
+  slices: z.number().int().positive(),
+  unit: text,
+  lossy: z.boolean(),
+  findings: z.array(remark),
+});
+
+export const EvidenceSchema = z.object({
+  check: text,
+  state: z.enum(['agrees', 'differs', 'unknown']),
+  text,
+});
+
+/** How the two plates are linked: by position in patient space, or by slice index when positions can't be compared. */
+export const LinkSchema = z.enum(['position', 'index']);
+
+export const NotePairSchema = z.object({
+  soft: NoteStackSchema,
+  sharp: NoteStackSchema.nullable(),
+  link: LinkSchema,
+  evidence: z.array(EvidenceSchema),
+});
+
+export const StudySchema = z.object({
+  studyInstanceUid: text,
+  patientId: maybeText,
+  patientName: maybeText,
+  patientBirthDate: maybeText,
+  patientSex: maybeText,
+  studyDate: maybeText,
+  studyDescription: maybeText,
+  accessionNumber: maybeText,
+});
+
+/** Conditions of the acquisition as the files state them; null where they are silent. */
+export const ConditionsSchema = z.object({
+  kvp: maybeNumber,
+  phasePercent: maybeNumber,
+  contrastAgent: maybeText,
+  thicknessMm: maybeNumber,
+  frameOfReferenceUid: maybeText,
+});
+
+export const FINDING_KINDS = [
+  'stent',
+  'non-calcified plaque',
+  'mixed plaque',
+  'calcified plaque',
+  'native lumen',
+  'reference',
+] as const;
+
+export const ASSESSABILITY = ['assessable', 'limited', 'not assessable'] as const;
+
+/** What is read at one place: a coronary segment of the 18-segment model, or none for a reference. */
+export const NoteFindingSchema = z.object({
+  id: text,
+  segment: z.number().int().min(1).max(18).nullable(),
+  kind: z.enum(FINDING_KINDS),
+  nominalMm: maybeNumber,
+  assessability: z.enum(ASSESSABILITY).nullable(),
+  reason: text,
+});
+
+export const NoteRegionSchema = PlanRegionSchema.extend({
+  /** Name shown to the reader: 'Lumen 2'. */
+  label: text,
+  /** Where in the finding the region lies, in the reader's words: 'in stent'. */
+  place: text,
+  findingId: maybeText,
+  /** Which kernel's value is quoted, and why. */
+  quote: z.enum(['soft', 'sharp', 'both']).nullable(),
+  quoteReason: text,
+  soft: RegionValueSchema.nullable(),
+  sharp: RegionValueSchema.nullable(),
+});
+
+export const NoteContrastSchema = PlanContrastSchema.extend({
+  formula: text,
+  soft: maybeNumber,
+  sharp: maybeNumber,
+  flags: z.array(remark),
+});
+
+/** The reading note, version 1: one document for each study and reader. */
+export const NoteSchema = z.object({
+  format: z.literal('diptych-note'),
+  version: z.literal(1),
+  id: text,
+  software: z.object({ name: text, version: text }),
+  createdAt: text,
+  changedAt: text,
+  reader: text,
+  completion: z.enum(['PARTIAL', 'COMPLETE']),
+  verification: z.enum(['UNVERIFIED', 'VERIFIED']),
+  synthetic: z.boolean(),
+  study: StudySchema,
+  pair: NotePairSchema,
+  conditions: ConditionsSchema,
+  /** The noise of new contrasts. */
+  noise: NoiseSourceSchema,
+  findings: z.array(NoteFindingSchema),
+  regions: z.array(NoteRegionSchema),
+  contrasts: z.array(NoteContrastSchema),
+  comment: text,
+});
+
+export type Note = z.infer<typeof NoteSchema>;
+export type NoteRegion = z.infer<typeof NoteRegionSchema>;
+export type NoteContrast = z.infer<typeof NoteContrastSchema>;
+export type NoteFinding = z.infer<typeof NoteFindingSchema>;
+export type NoteStack = z.infer<typeof NoteStackSchema>;
+export type NotePair = z.infer<typeof NotePairSchema>;
+export type Evidence = z.infer<typeof EvidenceSchema>;
+export type Link = z.infer<typeof LinkSchema>;
+export type Kernel = z.infer<typeof KernelSchema>;
+export type FindingKind = (typeof FINDING_KINDS)[number];

@@ -1,0 +1,3 @@
+export * from './roles.js';
+export * from './shape.js';
+export * from './value.js';
