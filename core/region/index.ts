@@ -1,3 +1,14 @@
+export * from './area.js';
+export * from './change.js';
+export * from './contrast.js';
+export * from './findSlice.js';
+export * from './flags.js';
+export * from './histogram.js';
+export * from './measureRegion.js';
+export * from './pixelsInside.js';
+export { shapeCentre } from './plane.js';
 export * from './roles.js';
 export * from './shape.js';
+export * from './snrBand.js';
+export * from './statistics.js';
 export * from './value.js';

@@ -1,0 +1,54 @@
+import type { Attributes } from './attributes.js';
+import type { Acquisition, Identity } from './ctImage.js';
+
+/** Drops the keys whose value is absent, so that absence stays absence. */
+function present<T extends object>(value: { [K in keyof T]: T[K] | undefined }): Partial<T> {
+  return Object.fromEntries(
+    Object.entries(value).filter(([, entry]) => entry !== undefined),
+  ) as Partial<T>;
+}
+
+/** Patient and study attributes, as the file has them. */
+export function readIdentity(attributes: Attributes, studyInstanceUid: string): Identity {
+  return {
+    studyInstanceUid,
+    ...present<Omit<Identity, 'studyInstanceUid'>>({
+      patientId: attributes.text('x00100020'),
+      patientName: attributes.text('x00100010'),
+      patientBirthDate: attributes.text('x00100030'),
+      patientSex: attributes.text('x00100040'),
+      studyDate: attributes.text('x00080020'),
+      studyTime: attributes.text('x00080030'),
+      studyDescription: attributes.text('x00081030'),
+      accessionNumber: attributes.text('x00080050'),
+    }),
+  };
+}
+
+/** Series and acquisition attributes, as the file has them. Percent phase is never computed from a trigger time. */
+export function readAcquisition(attributes: Attributes, seriesInstanceUid: string): Acquisition {
+  return {
+    seriesInstanceUid,
+    lossy: attributes.text('x00282110') === '01',
+    ...present<Omit<Acquisition, 'seriesInstanceUid' | 'lossy'>>({
+      seriesNumber: attributes.integer('x00200011'),
+      seriesDescription: attributes.text('x0008103e'),
+      seriesDate: attributes.text('x00080021'),
+      seriesTime: attributes.text('x00080031'),
+      frameOfReferenceUid: attributes.text('x00200052'),
+      kernelLabel: attributes.text('x00181210'),
+      acquisitionNumber: attributes.integer('x00200012'),
+      acquisitionDate: attributes.text('x00080022'),
+      acquisitionTime: attributes.text('x00080032'),
+      phasePercent: attributes.float('x00209241'),
+      triggerTimeMs: attributes.decimal('x00181060'),
+      kvp: attributes.decimal('x00180060'),
+      thicknessMm: attributes.decimal('x00180050'),
+      contrastAgent: attributes.text('x00180010'),
+      manufacturer: attributes.text('x00080070'),
+      model: attributes.text('x00081090'),
+      softwareVersions: attributes.text('x00181020'),
+      reconstructionDiameterMm: attributes.decimal('x00181100'),
+    }),
+  };
+}

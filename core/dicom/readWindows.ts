@@ -1,0 +1,48 @@
+import type { Finding } from '../result.js';
+import type { Attributes } from './attributes.js';
+import type { VoiFunction, VoiWindow } from './ctImage.js';
+
+const FUNCTIONS: readonly VoiFunction[] = ['LINEAR', 'LINEAR_EXACT', 'SIGMOID'];
+
+/**
+ * The windows of a file, first one first (PS3.3 C.11.2.1.2). A window that its function does not allow
+ * (LINEAR needs a width of at least 1, the others one above 0) is left out with a finding.
+ */
+export function readWindows(attributes: Attributes): {
+  windows: readonly VoiWindow[];
+  findings: readonly Finding[];
+} {
+  const centres = attributes.decimals('x00281050') ?? [];
+  const widths = attributes.decimals('x00281051') ?? [];
+  const explanations = attributes.texts('x00281055') ?? [];
+  const named = attributes.text('x00281056') ?? 'LINEAR';
+  const findings: Finding[] = [];
+  const voiFunction = FUNCTIONS.find((known) => known === named);
+  if (voiFunction === undefined) {
+    findings.push({
+      code: 'unknown-window-function',
+      text: `The window function “${named}” is not known; LINEAR is used.`,
+    });
+  }
+  const windows: VoiWindow[] = [];
+  for (let index = 0; index < Math.max(centres.length, widths.length); index++) {
+    const centre = centres[index];
+    const width = widths[index];
+    const least = (voiFunction ?? 'LINEAR') === 'LINEAR' ? 1 : Number.MIN_VALUE;
+    if (centre === undefined || width === undefined || width < least) {
+      findings.push({
+        code: 'bad-window',
+        text: `Window ${index + 1} of the file can't be used: centre ${centre ?? 'missing'}, width ${width ?? 'missing'}.`,
+      });
+      continue;
+    }
+    const explanation = explanations[index];
+    windows.push({
+      centre,
+      width,
+      function: voiFunction ?? 'LINEAR',
+      ...(explanation && { explanation }),
+    });
+  }
+  return { windows, findings };
+}

@@ -1,0 +1,22 @@
+import type { PixelEncoding } from '../dicom/index.js';
+
+/** True for a stored value that is padding: no image, in no statistics (PS3.3 C.7.5.1.1.2, inclusive range). */
+export function isPadding(stored: number, { padding }: PixelEncoding): boolean {
+  return padding !== undefined && stored >= padding.low && stored <= padding.high;
+}
+
+/** Output of the Modality LUT: slope · stored + intercept (PS3.3 C.11.1); the stored value itself without a rescale. */
+export function rescaled(stored: number, { rescale }: PixelEncoding): number {
+  return rescale === undefined ? stored : stored * rescale.slope + rescale.intercept;
+}
+
+/** HU of a stored value; undefined for padding and where the file gives no HU. */
+export function storedToHu(stored: number, pixels: PixelEncoding): number | undefined {
+  if (pixels.unit !== 'HU' || isPadding(stored, pixels)) return undefined;
+  return rescaled(stored, pixels);
+}
+
+/** HU from linear attenuation coefficients: 1000 (μ − μwater) / μwater. */
+export function attenuationToHu(mu: number, muWater: number): number {
+  return (1000 * (mu - muWater)) / muWater;
+}

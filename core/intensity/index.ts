@@ -1,0 +1,4 @@
+export * from './displayTable.js';
+export * from './hounsfield.js';
+export * from './presets.js';
+export * from './window.js';
