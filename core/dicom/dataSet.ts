@@ -44,6 +44,11 @@ export function parseDataSet(bytes: Uint8Array): Result<DataSet> {
   }
 }
 
+/** False when the bytes end between two elements before Pixel Data: the file may go on. */
+export function reachesPixelData({ parsed }: DataSet): boolean {
+  return parsed.elements[PIXEL_DATA] !== undefined;
+}
+
 /** The last element, when it says that it is longer than the bytes that are left. The parser lets that pass. */
 function overrunningElement(parsed: ParsedDataSet): Element | undefined {
   for (const element of Object.values(parsed.elements)) {
@@ -77,6 +82,17 @@ function refuseThrown(thrown: unknown, size: number): Result<never> {
     });
   }
   const offset = last.dataOffset + last.length;
+  // The head of an element is at most 12 bytes: fewer are left, so the file ends in the next one.
+  if (size - offset < 12) {
+    return refuse(
+      'cut-header',
+      `The file ends at byte ${size}, right after ${tagInWords(last.tag)}.`,
+      {
+        tag: tagInWords(last.tag),
+        offset,
+      },
+    );
+  }
   return refuse(
     'unreadable-header',
     `The data set can't be read past byte ${offset}, after ${tagInWords(last.tag)}.`,

@@ -1,6 +1,6 @@
 import type { Refusal } from '../result.js';
 import type { CtImage } from './ctImage.js';
-import { hasPreamble, parseDataSet } from './dataSet.js';
+import { hasPreamble, parseDataSet, reachesPixelData } from './dataSet.js';
 import { pixelDataPlace, readImage } from './readImage.js';
 import { TRANSFER_SYNTAX } from './uids.js';
 
@@ -29,8 +29,9 @@ export function readHeader(bytes: Uint8Array, fileSize: number): HeaderReading {
   if (!dataSet.ok) return whole ? leftOut(dataSet.refusal) : { kind: 'needMore' };
   const image = readImage(dataSet.value);
   if (!image.ok) {
-    const cutBeforePixels = image.refusal.code === 'no-image' && !whole;
-    return cutBeforePixels ? { kind: 'needMore' } : leftOut(image.refusal);
+    const saysAnotherKind = image.refusal.code === 'not-a-ct-image';
+    const mayGoOn = !whole && !saysAnotherKind && !reachesPixelData(dataSet.value);
+    return mayGoOn ? { kind: 'needMore' } : leftOut(image.refusal);
   }
   const deflated = image.value.transferSyntaxUid === TRANSFER_SYNTAX.deflated;
   const size = deflated ? dataSet.value.bytes.length : fileSize;

@@ -55,10 +55,7 @@ function metaBytes(elements: readonly WriteElement[], transferSyntaxUid: string)
     [...own.filter(({ tag }) => !replaced.has(tag)), ...given],
     META_ENCODING,
   );
-  const length = writeDataSet(
-    [{ tag: 0x00020000, vr: 'UL', value: group.length }],
-    META_ENCODING,
-  );
+  const length = writeDataSet([{ tag: 0x00020000, vr: 'UL', value: group.length }], META_ENCODING);
   const meta = new Uint8Array(length.length + group.length);
   meta.set(length);
   meta.set(group, length.length);
