@@ -1,0 +1,52 @@
+import { measure } from 'mitata';
+import { decodeImage, type StoredValues } from '../../../core/dicom/index.js';
+import { measureRegion, type Shape } from '../../../core/region/index.js';
+import { buildStacks, type Stack } from '../../../core/stack/index.js';
+import { ctSlice } from '../../corpus/ctSlice.js';
+import { pythonHas, pythonJson } from '../../support/python.js';
+import type { Row } from '../row.js';
+
+const NUMPY = `
+import json, time, numpy as np
+image = (np.arange(512 * 512).reshape(512, 512) % 997).astype(np.int16)
+ys, xs = np.mgrid[0:512, 0:512]
+def once():
+    inside = (xs - 256) ** 2 + (ys - 256) ** 2 <= 400
+    v = image[inside] * 1.0 - 1024.0
+    return v.size, v.mean(), v.std(ddof=1), v.min(), v.max(), np.median(v)
+once()
+times = []
+for _ in range(40):
+    start = time.perf_counter(); once(); once(); times.append(time.perf_counter() - start)
+print(json.dumps(sorted(times)[20] * 1000))
+`;
+
+/** Statistics of a region of 20 pixels radius on both stacks, with its placement sensitivity. */
+export async function regionStatistics(): Promise<Row> {
+  const [soft, sharp] = [makeStack('2.25.7.1'), makeStack('2.25.7.2')];
+  const shape: Shape = { kind: 'ellipse', centreMm: [54, 108, 0], radiiMm: [10, 10] };
+  const { p50 } = await measure(() => {
+    measureRegion(shape, soft.stack, soft.storedOf);
+    measureRegion(shape, sharp.stack, sharp.storedOf);
+  });
+  return {
+    work: 'region statistics on both stacks, radius 20 px, with placement',
+    measured: p50 / 1e6,
+    unit: 'ms',
+    budget: 0.3,
+    ...(pythonHas('numpy') && {
+      reference: { name: 'numpy without placement', measured: pythonJson(NUMPY) as number },
+    }),
+  };
+}
+
+function makeStack(series: string): { stack: Stack; storedOf: () => StoredValues } {
+  const stored = Int16Array.from({ length: 512 * 512 }, (_, index) => index % 997);
+  const spacing = { 0x00280030: { tag: 0x00280030, vr: 'DS', value: [0.5, 0.5] } as const };
+  const decoded = decodeImage(ctSlice({ rows: 512, columns: 512, stored, series, change: spacing }));
+  if (!decoded.ok) throw new Error(decoded.refusal.text);
+  const { image } = decoded.value;
+  const [stack] = buildStacks([{ fileId: 0, file: 'slice', image }]).stacks;
+  if (stack === undefined) throw new Error('no stack');
+  return { stack, storedOf: () => decoded.value.stored };
+}
