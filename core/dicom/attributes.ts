@@ -2,7 +2,7 @@ import { decodeText } from './characterSet.js';
 import type { DataSet } from './dataSet.js';
 import { decimalString, integerString } from './numberStrings.js';
 
-/** Typed look into a data set's top level. An empty attribute is an absent one (AWKWARD row 50: never 0). */
+/** Typed look into a data set's top level. An empty attribute is an absent one, never 0. */
 export interface Attributes {
   has(tag: string): boolean;
   /** All values of a character string, trimmed of padding; undefined when there is none. */
@@ -15,35 +15,40 @@ export interface Attributes {
   unsignedShort(tag: string): number | undefined;
   signedShort(tag: string): number | undefined;
   float(tag: string): number | undefined;
+  double(tag: string): number | undefined;
 }
 
-/** @param dataSet as {@link parseDataSet} gives it */
-export function attributesOf({ parsed, bytes }: DataSet): Attributes {
-  const characterSet = rawText('x00080005')?.split('\\')[0] ?? '';
+/** @param inheritedCharacterSet of the data set around an item, which holds unless the item has its own */
+export function attributesOf(dataSet: DataSet, inheritedCharacterSet = ''): Attributes {
+  const { bytes, littleEndian } = dataSet;
+  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.length);
+  const ownCharacterSet = valueBytes('x00080005');
+  const characterSet =
+    ownCharacterSet === undefined ? inheritedCharacterSet : decodeText(ownCharacterSet, '');
 
   function valueBytes(tag: string): Uint8Array | undefined {
-    const element = parsed.elements[tag];
-    if (element === undefined || element.length === 0 || element.length === 0xffffffff) return;
-    return bytes.subarray(element.dataOffset, element.dataOffset + element.length);
+    const place = dataSet.find(tag);
+    if (place === undefined || place.length === 0 || place.length === 0xffffffff) return undefined;
+    return bytes.subarray(place.offset, place.offset + place.length);
   }
 
-  function rawText(tag: string): string | undefined {
-    const value = valueBytes(tag);
-    return value === undefined ? undefined : decodeText(value, '');
+  function binary<T>(tag: string, size: number, read: (at: number) => T): T | undefined {
+    const place = dataSet.find(tag);
+    if (place === undefined || place.length < size || place.length === 0xffffffff) return undefined;
+    return place.offset + size <= bytes.length ? read(place.offset) : undefined;
   }
 
   function texts(tag: string): readonly string[] | undefined {
     const value = valueBytes(tag);
     if (value === undefined) return undefined;
-    const whole = decodeText(value, characterSet);
-    const values = whole.split('\\').map(trimPadding);
+    const values = decodeText(value, characterSet).split('\\').map(trimPadding);
     return values.some((one) => one !== '') ? values : undefined;
   }
 
   const decimals = (tag: string) => texts(tag)?.map(decimalString);
 
   return {
-    has: (tag) => (parsed.elements[tag]?.length ?? 0) > 0,
+    has: (tag) => (dataSet.find(tag)?.length ?? 0) > 0,
     texts,
     text: (tag) => texts(tag)?.join('\\'),
     decimals,
@@ -52,9 +57,10 @@ export function attributesOf({ parsed, bytes }: DataSet): Attributes {
       const first = texts(tag)?.[0];
       return first === undefined ? undefined : integerString(first);
     },
-    unsignedShort: (tag) => ((valueBytes(tag)?.length ?? 0) >= 2 ? parsed.uint16(tag) : undefined),
-    signedShort: (tag) => ((valueBytes(tag)?.length ?? 0) >= 2 ? parsed.int16(tag) : undefined),
-    float: (tag) => ((valueBytes(tag)?.length ?? 0) >= 4 ? parsed.float(tag) : undefined),
+    unsignedShort: (tag) => binary(tag, 2, (at) => view.getUint16(at, littleEndian)),
+    signedShort: (tag) => binary(tag, 2, (at) => view.getInt16(at, littleEndian)),
+    float: (tag) => binary(tag, 4, (at) => view.getFloat32(at, littleEndian)),
+    double: (tag) => binary(tag, 8, (at) => view.getFloat64(at, littleEndian)),
   };
 }
 

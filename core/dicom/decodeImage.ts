@@ -1,6 +1,6 @@
 import { type Result, refuse, success } from '../result.js';
 import type { CtImage } from './ctImage.js';
-import { hasPreamble, parseDataSet } from './dataSet.js';
+import { openDataSet } from './openDataSet.js';
 import { pixelDataPlace, readImage } from './readImage.js';
 import { type StoredValues, storedValues } from './storedValues.js';
 import { TRANSFER_SYNTAX } from './uids.js';
@@ -13,10 +13,7 @@ export interface DecodedImage {
 
 /** Reads a whole CT image file: its header and its pixels. */
 export function decodeImage(bytes: Uint8Array): Result<DecodedImage> {
-  if (!hasPreamble(bytes)) {
-    return refuse('not-dicom', 'Not a DICOM file: “DICM” is not at byte 128.');
-  }
-  const dataSet = parseDataSet(bytes);
+  const dataSet = openDataSet(bytes);
   if (!dataSet.ok) return dataSet;
   const image = readImage(dataSet.value);
   if (!image.ok) return image;

@@ -1,6 +1,6 @@
 import type { Refusal } from '../result.js';
 import type { CtImage } from './ctImage.js';
-import { hasPreamble, parseDataSet, reachesPixelData } from './dataSet.js';
+import { openDataSet } from './openDataSet.js';
 import { pixelDataPlace, readImage } from './readImage.js';
 import { TRANSFER_SYNTAX } from './uids.js';
 
@@ -22,15 +22,12 @@ export function readHeader(bytes: Uint8Array, fileSize: number): HeaderReading {
   if (fileSize === 0)
     return leftOut({ code: 'empty-file', text: 'Empty file: it holds no bytes.' });
   if (bytes.length < 132 && !whole) return { kind: 'needMore' };
-  if (!hasPreamble(bytes)) {
-    return leftOut({ code: 'not-dicom', text: 'Not a DICOM file: “DICM” is not at byte 128.' });
-  }
-  const dataSet = parseDataSet(bytes);
+  const dataSet = openDataSet(bytes);
   if (!dataSet.ok) return whole ? leftOut(dataSet.refusal) : { kind: 'needMore' };
   const image = readImage(dataSet.value);
   if (!image.ok) {
     const saysAnotherKind = image.refusal.code === 'not-a-ct-image';
-    const mayGoOn = !whole && !saysAnotherKind && !reachesPixelData(dataSet.value);
+    const mayGoOn = !whole && !saysAnotherKind && dataSet.value.pixelData === undefined;
     return mayGoOn ? { kind: 'needMore' } : leftOut(image.refusal);
   }
   const deflated = image.value.transferSyntaxUid === TRANSFER_SYNTAX.deflated;

@@ -1,7 +1,7 @@
 import { type Finding, type Result, refuse, success } from '../result.js';
 import { type Attributes, attributesOf } from './attributes.js';
 import type { CtImage } from './ctImage.js';
-import { type DataSet, PIXEL_DATA } from './dataSet.js';
+import type { DataSet } from './dataSet.js';
 import { readAcquisition, readIdentity } from './readAcquisition.js';
 import { readGeometry } from './readGeometry.js';
 import { readPixels } from './readPixels.js';
@@ -14,7 +14,7 @@ const TELLING_TAGS = ['x00081030', 'x0008103e', 'x00082111', 'x00204000'] as con
 /** A CT slice from its data set, or why the file is no slice that the bench can use. Pixels are not touched. */
 export function readImage(dataSet: DataSet): Result<CtImage> {
   const attributes = attributesOf(dataSet);
-  const kind = checkKind(attributes);
+  const kind = checkKind(attributes, dataSet.transferSyntaxUid);
   if (!kind.ok) return kind;
   const geometry = readGeometry(attributes);
   if (!geometry.ok) return geometry;
@@ -56,11 +56,20 @@ export function readImage(dataSet: DataSet): Result<CtImage> {
     grid,
     pixels: pixels.value.pixels,
     windows: windows.windows,
-    findings: [...geometry.value.findings, ...pixels.value.findings, ...windows.findings, ...lossy],
+    findings: [
+      ...dataSet.findings,
+      ...geometry.value.findings,
+      ...pixels.value.findings,
+      ...windows.findings,
+      ...lossy,
+    ],
   });
 }
 
-function checkKind(attributes: Attributes): Result<{ transferSyntaxUid: string }> {
+function checkKind(
+  attributes: Attributes,
+  transferSyntaxUid: string | undefined,
+): Result<{ transferSyntaxUid: string }> {
   const sopClassUid = attributes.text('x00080016') ?? attributes.text('x00020002');
   if (sopClassUid === undefined) return refuse('not-an-image', 'Not an image: no SOP Class.');
   if (sopClassUid === SOP_CLASS.enhancedCtImage) {
@@ -75,7 +84,6 @@ function checkKind(attributes: Attributes): Result<{ transferSyntaxUid: string }
   if (attributes.texts('x00080008')?.[2] === 'LOCALIZER') {
     return refuse('localizer', 'A localizer, not a slice.');
   }
-  const transferSyntaxUid = attributes.text('x00020010');
   if (transferSyntaxUid === undefined) {
     return refuse(
       'no-transfer-syntax',
@@ -91,25 +99,22 @@ function checkKind(attributes: Attributes): Result<{ transferSyntaxUid: string }
   return success({ transferSyntaxUid });
 }
 
-/** Pixel Data must be there and long enough; whether the file holds all of it, {@link pixelDataEnd} tells. */
-function checkPixelData({ parsed }: DataSet, bytesNeeded: number): Result<undefined> {
-  const element = parsed.elements[PIXEL_DATA];
-  if (element === undefined) return refuse('no-image', 'No image: the file has no Pixel Data.');
-  if (element.hadUndefinedLength === true) {
+/** Pixel Data must be there and long enough; whether the file holds all of it, {@link pixelDataPlace} tells. */
+function checkPixelData({ pixelData }: DataSet, bytesNeeded: number): Result<undefined> {
+  if (pixelData === undefined) return refuse('no-image', 'No image: the file has no Pixel Data.');
+  const where = { tag: '(7FE0,0010)', offset: pixelData.offset };
+  if (pixelData.inFragments) {
     return refuse(
       'bad-pixel-data',
       'Pixel Data is in fragments although the file says that it is not compressed.',
-      {
-        tag: '(7FE0,0010)',
-        offset: element.dataOffset,
-      },
+      where,
     );
   }
-  if (element.length < bytesNeeded) {
+  if (pixelData.length < bytesNeeded) {
     return refuse(
       'short-pixel-data',
-      `Pixel Data has ${element.length} bytes; ${bytesNeeded} are needed.`,
-      { tag: '(7FE0,0010)', offset: element.dataOffset },
+      `Pixel Data has ${pixelData.length} bytes; ${bytesNeeded} are needed.`,
+      where,
     );
   }
   return success(undefined);
@@ -117,9 +122,9 @@ function checkPixelData({ parsed }: DataSet, bytesNeeded: number): Result<undefi
 
 /** Where the pixels that an image needs begin and end in its bytes. */
 export function pixelDataPlace(
-  { parsed }: DataSet,
+  { pixelData }: DataSet,
   image: CtImage,
 ): { start: number; end: number } {
-  const start = parsed.elements[PIXEL_DATA]?.dataOffset ?? 0;
+  const start = pixelData?.offset ?? 0;
   return { start, end: start + image.grid.rows * image.grid.columns * 2 };
 }

@@ -28,7 +28,7 @@ export function storedValues(
 const HOST_IS_BIG_ENDIAN = new Uint8Array(new Uint16Array([1]).buffer)[0] === 0;
 
 /** Cuts the stored bits out of 16-bit words, in place, and extends the sign. */
-function extractStoredBits(words: Uint16Array, pixels: PixelEncoding): StoredValues {
+export function extractStoredBits(words: Uint16Array, pixels: PixelEncoding): StoredValues {
   const { bitsStored, highBit, signed } = pixels;
   const shiftUp = 15 - highBit;
   const shiftDown = 16 - bitsStored;

@@ -1,0 +1,130 @@
+import dicomParser, { type Element, type DataSet as ParsedDataSet } from 'dicom-parser';
+import { type Result, refuse, success } from '../result.js';
+import { type DataSet, tagInWords } from './dataSet.js';
+import { inflateRaw } from './inflate.js';
+import { isKnownVr } from './recover/vr.js';
+import { TRANSFER_SYNTAX } from './uids.js';
+
+const PIXEL_DATA = 'x7fe00010';
+const UNDEFINED_LENGTH = 0xffffffff;
+
+/**
+ * Parses a file that follows the standard, up to the head of its Pixel Data.
+ *
+ * @param bytes the file, or as much of its beginning as has been read
+ * @returns refused with the tag and offset where the bytes stop making sense; for a part of a file that may
+ *   only mean that more of it is needed
+ */
+export function parseDataSet(bytes: Uint8Array): Result<DataSet> {
+  let inflated: Result<Uint8Array> | undefined;
+  const inflater = (file: Uint8Array, position: number): Uint8Array => {
+    inflated = inflateRaw(file.subarray(position));
+    if (!inflated.ok) throw inflated.refusal.text;
+    const whole = new Uint8Array(position + inflated.value.length);
+    whole.set(file.subarray(0, position));
+    whole.set(inflated.value, position);
+    return whole;
+  };
+  try {
+    const parsed = dicomParser.parseDicom(bytes, { untilTag: PIXEL_DATA, inflater } as object);
+    const wrong = firstImpossible(parsed);
+    if (wrong !== undefined) return wrong;
+    return success(fromParsed(parsed, syntaxOf(parsed)));
+  } catch (thrown) {
+    if (inflated !== undefined && !inflated.ok) return inflated;
+    return refuseThrown(thrown, bytes.length);
+  }
+}
+
+function syntaxOf(parsed: ParsedDataSet): string | undefined {
+  return parsed.string('x00020010')?.trim();
+}
+
+function fromParsed(parsed: ParsedDataSet, transferSyntaxUid: string | undefined): DataSet {
+  const pixelData = parsed.elements[PIXEL_DATA];
+  return {
+    bytes: parsed.byteArray,
+    littleEndian: transferSyntaxUid !== TRANSFER_SYNTAX.explicitBigEndian,
+    ...(transferSyntaxUid !== undefined && { transferSyntaxUid }),
+    find: (tag) => {
+      const element = parsed.elements[tag];
+      return element && { offset: element.dataOffset, length: element.length };
+    },
+    items: (tag) =>
+      parsed.elements[tag]?.items?.map((item) =>
+        fromParsed(item.dataSet ?? emptyOf(parsed), transferSyntaxUid),
+      ),
+    ...(pixelData && {
+      pixelData: {
+        offset: pixelData.dataOffset,
+        length: pixelData.length,
+        inFragments: pixelData.length === UNDEFINED_LENGTH,
+      },
+    }),
+    findings: [],
+  };
+}
+
+function emptyOf(parsed: ParsedDataSet): ParsedDataSet {
+  return { ...parsed, elements: {} };
+}
+
+/** The parser lets three things pass that no data set may have; the first of them. */
+function firstImpossible(parsed: ParsedDataSet): Result<never> | undefined {
+  for (const element of Object.values(parsed.elements)) {
+    if (element.tag === PIXEL_DATA || element.parser !== undefined) continue;
+    const tag = tagInWords(element.tag);
+    if (element.dataOffset + element.length > parsed.byteArray.length) {
+      return refuseCut(element, parsed.byteArray.length);
+    }
+    if (element.vr !== undefined && !isKnownVr(element.vr)) {
+      return refuse('bad-vr', `${tag} has no valid value representation.`, { tag });
+    }
+    const mayBeOpen = element.vr === 'SQ' || element.vr === 'UN' || element.vr === undefined;
+    if (element.hadUndefinedLength === true && !mayBeOpen) {
+      return refuse('undefined-length', `${tag} has no length, which only sequences may lack.`, {
+        tag,
+      });
+    }
+  }
+  return undefined;
+}
+
+function refuseCut(element: Element, size: number): Result<never> {
+  const tag = tagInWords(element.tag);
+  return refuse('cut-header', `The file ends at byte ${size}, inside ${tag}.`, {
+    tag,
+    offset: element.dataOffset,
+  });
+}
+
+/** dicom-parser throws bare strings, and objects with the part that it has read. */
+function refuseThrown(thrown: unknown, size: number): Result<never> {
+  const partial = (thrown as { dataSet?: ParsedDataSet } | undefined)?.dataSet;
+  const read = Object.values(partial?.elements ?? {});
+  const last = read.reduce<Element | undefined>(
+    (latest, element) =>
+      latest === undefined || element.dataOffset > latest.dataOffset ? element : latest,
+    undefined,
+  );
+  if (last !== undefined && last.dataOffset + last.length > size) return refuseCut(last, size);
+  if (last === undefined) {
+    return refuse('cut-header', `The file ends at byte ${size}, before its first data element.`, {
+      offset: size,
+    });
+  }
+  const offset = last.dataOffset + last.length;
+  const tag = tagInWords(last.tag);
+  // The head of an element is at most 12 bytes: fewer are left, so the file ends in the next one.
+  if (size - offset < 12) {
+    return refuse('cut-header', `The file ends at byte ${size}, right after ${tag}.`, {
+      tag,
+      offset,
+    });
+  }
+  return refuse(
+    'unreadable-header',
+    `The data set can't be read past byte ${offset}, after ${tag}.`,
+    { tag, offset },
+  );
+}
