@@ -9,7 +9,7 @@ export function hasPreamble(bytes: Uint8Array): boolean {
   return bytes[128] === 0x44 && bytes[129] === 0x49 && bytes[130] === 0x43 && bytes[131] === 0x4d;
 }
 
-const NOT_DICOM = refuse('not-dicom', 'Not a DICOM file: “DICM” is not at byte 128.');
+export const NOT_DICOM = refuse('not-dicom', 'Not a DICOM file: “DICM” is not at byte 128.');
 
 /**
  * Opens the data set of a file, or of its beginning: with the ordinary parser, and where that fails with the one
@@ -24,7 +24,8 @@ export function openDataSet(bytes: Uint8Array): Result<DataSet> {
     const reachesImage = regular || recovered.value.elements.some(({ tag }) => tag === 0x00280010);
     return reachesImage ? checkSyntax(recovered.value) : NOT_DICOM;
   }
-  if (!regular) return NOT_DICOM;
+  // Without a preamble only the first element tells; when the bytes end too early, more of them may show it.
+  if (!regular) return recovered.refusal.code === 'cut-header' ? recovered : NOT_DICOM;
   return recovered.refusal.code === 'cut-header' && !parsed.ok ? parsed : recovered;
 }
 

@@ -1,6 +1,6 @@
 import type { Refusal } from '../result.js';
 import type { CtImage } from './ctImage.js';
-import { openDataSet } from './openDataSet.js';
+import { hasPreamble, NOT_DICOM, openDataSet } from './openDataSet.js';
 import { pixelDataPlace, readImage } from './readImage.js';
 import { TRANSFER_SYNTAX } from './uids.js';
 
@@ -23,7 +23,11 @@ export function readHeader(bytes: Uint8Array, fileSize: number): HeaderReading {
     return leftOut({ code: 'empty-file', text: 'Empty file: it holds no bytes.' });
   if (bytes.length < 132 && !whole) return { kind: 'needMore' };
   const dataSet = openDataSet(bytes);
-  if (!dataSet.ok) return whole ? leftOut(dataSet.refusal) : { kind: 'needMore' };
+  if (!dataSet.ok) {
+    if (dataSet.refusal.code === NOT_DICOM.refusal.code) return leftOut(dataSet.refusal);
+    if (!whole) return { kind: 'needMore' };
+    return leftOut(hasPreamble(bytes) ? dataSet.refusal : NOT_DICOM.refusal);
+  }
   const image = readImage(dataSet.value);
   if (!image.ok) {
     const saysAnotherKind = image.refusal.code === 'not-a-ct-image';

@@ -46,6 +46,11 @@ export function findLayout(file: Uint8Array, hasPreamble: boolean): Result<Found
     bytes = inflated.value;
   }
   const start = bytes === file ? meta.end : 0;
+  if (start + 8 > bytes.length) {
+    return refuse('cut-header', `The file ends at byte ${bytes.length}, before its data set.`, {
+      offset: start,
+    });
+  }
   const layout = probe(bytes, start);
   if (layout === undefined) {
     return refuse('not-dicom', 'Not a DICOM file: it does not begin with a data element.');
@@ -95,7 +100,6 @@ function asciiOf(view: DataView, at: number, length: number): string {
 
 /** A data set begins in group 0008 (or 0002 to 0010 in odd files); byte order and VR show in its first element. */
 function probe(bytes: Uint8Array, start: number): Layout | undefined {
-  if (start + 8 > bytes.length) return undefined;
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.length);
   const isFirstGroup = (group: number): boolean => group >= 0x0004 && group <= 0x0010;
   const letters = String.fromCharCode(view.getUint8(start + 4), view.getUint8(start + 5));
