@@ -46,7 +46,9 @@ export function findLayout(file: Uint8Array, hasPreamble: boolean): Result<Found
     bytes = inflated.value;
   }
   const start = bytes === file ? meta.end : 0;
-  if (start + 8 > bytes.length) {
+  const endsInMeta =
+    bytes === file && start + 2 <= bytes.length && view.getUint16(start, true) === 2;
+  if (endsInMeta || start + 8 > bytes.length) {
     return refuse('cut-header', `The file ends at byte ${bytes.length}, before its data set.`, {
       offset: start,
     });
