@@ -1,3 +1,4 @@
+import type { Finding } from '../../core/result.js';
 import type { FolderIndex } from '../../core/stack/index.js';
 
 /** A folder that the reader has opened. The page knows it by its grant only, never by its path. */
@@ -27,9 +28,14 @@ export interface Settings {
 /** What the page learns at start. */
 export interface Session {
   readonly version: string;
+  /** In the order of opening; the last one is the one to show. */
   readonly folders: readonly OpenFolder[];
   readonly recent: readonly RecentFolder[];
   readonly settings: Settings;
+  /** No folder was given: the page asks for the demonstration study. */
+  readonly openDemonstration?: boolean;
+  /** What the reader should know at start: settings that could not be read, for instance. */
+  readonly remarks?: readonly Finding[];
 }
 
 /** One level of the folder chooser of the browser shell: names of folders only. */
@@ -39,6 +45,8 @@ export interface FolderLevel {
   /** From the root down to this folder. */
   readonly trail: readonly { readonly id: string; readonly name: string }[];
   readonly children: readonly { readonly id: string; readonly name: string }[];
+  /** Places to start from: the home folder, the root, drives, mounted media. */
+  readonly roots?: readonly { readonly id: string; readonly name: string }[];
   readonly refusal?: string;
 }
 

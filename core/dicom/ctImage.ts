@@ -69,6 +69,8 @@ export interface CtImage {
   readonly sopClassUid: string;
   readonly sopInstanceUid: string;
   readonly transferSyntaxUid: string;
+  /** Frame of a multi-frame image, from 0; absent for an image of its own. */
+  readonly frame?: number;
   readonly instanceNumber?: number;
   readonly imageType: readonly string[];
   /** True when the file itself says that it is synthetic. */

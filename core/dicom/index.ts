@@ -1,3 +1,4 @@
+export type { Codecs, CodedImage, FrameDecoder } from './compressed/codecs.js';
 export * from './ctImage.js';
 export * from './decodeImage.js';
 export * from './readHeader.js';

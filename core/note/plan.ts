@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { ROLES } from '../region/roles.js';
+import type { Frozen } from './frozen.js';
 
 const finite = z.number();
 const positive = finite.positive();
@@ -10,8 +11,8 @@ export const ShapeSchema = z.discriminatedUnion('kind', [
   z.object({
     kind: z.literal('ellipse'),
     centreMm: point,
-    u: point.optional(),
-    v: point.optional(),
+    u: point.exactOptional(),
+    v: point.exactOptional(),
     radiiMm: z.tuple([positive, positive]),
   }),
   z.object({ kind: z.literal('outline'), pointsMm: z.array(point).min(3) }),
@@ -19,7 +20,7 @@ export const ShapeSchema = z.discriminatedUnion('kind', [
 
 export const StackReferenceSchema = z.object({
   seriesInstanceUid: z.string().min(1),
-  phasePercent: finite.optional(),
+  phasePercent: finite.exactOptional(),
 });
 
 export const NoiseSourceSchema = z.enum(['lumen', 'wall', 'reference', 'pooled']);
@@ -35,7 +36,7 @@ export const PlanContrastSchema = z.object({
   lumen: identifier,
   wall: identifier,
   noise: NoiseSourceSchema,
-  reference: identifier.optional(),
+  reference: identifier.exactOptional(),
 });
 
 export const PlanProfileSchema = z.object({
@@ -43,27 +44,29 @@ export const PlanProfileSchema = z.object({
   fromMm: point,
   toMm: point,
   bandMm: finite.nonnegative(),
-  nominalMm: positive.optional(),
+  nominalMm: positive.exactOptional(),
 });
 
 export const PlanStentSchema = z.object({
   id: identifier,
   centreMm: point,
-  nominalMm: positive.optional(),
+  nominalMm: positive.exactOptional(),
 });
 
 /** The part of a note that can be measured; what the command line's `measure` reads. */
 export const PlanSchema = z.object({
   plan: z.literal(1),
-  pair: z.object({ soft: StackReferenceSchema, sharp: StackReferenceSchema.optional() }),
+  pair: z.object({ soft: StackReferenceSchema, sharp: StackReferenceSchema.exactOptional() }),
   regions: z.array(PlanRegionSchema).default([]),
   contrasts: z.array(PlanContrastSchema).default([]),
   profiles: z.array(PlanProfileSchema).default([]),
   stents: z.array(PlanStentSchema).default([]),
 });
 
-export type Plan = z.infer<typeof PlanSchema>;
-export type PlanRegion = z.infer<typeof PlanRegionSchema>;
-export type PlanContrast = z.infer<typeof PlanContrastSchema>;
-export type StackReference = z.infer<typeof StackReferenceSchema>;
-export type NoiseSource = z.infer<typeof NoiseSourceSchema>;
+export type Plan = Frozen<z.infer<typeof PlanSchema>>;
+export type PlanRegion = Frozen<z.infer<typeof PlanRegionSchema>>;
+export type PlanContrast = Frozen<z.infer<typeof PlanContrastSchema>>;
+export type PlanProfile = Frozen<z.infer<typeof PlanProfileSchema>>;
+export type PlanStent = Frozen<z.infer<typeof PlanStentSchema>>;
+export type StackReference = Frozen<z.infer<typeof StackReferenceSchema>>;
+export type NoiseSource = Frozen<z.infer<typeof NoiseSourceSchema>>;

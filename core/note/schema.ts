@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import type { Frozen } from './frozen.js';
 import {
   NoiseSourceSchema,
   PlanContrastSchema,
@@ -144,16 +145,21 @@ export const NoteSchema = z.object({
   findings: z.array(NoteFindingSchema),
   regions: z.array(NoteRegionSchema),
   contrasts: z.array(NoteContrastSchema),
+  /** Highest number ever given, by the letter of the identifier: a number is not used again after a removal. */
+  lastNumbers: z.record(text, z.number().int().nonnegative()).exactOptional(),
   comment: text,
 });
 
-export type Note = z.infer<typeof NoteSchema>;
-export type NoteRegion = z.infer<typeof NoteRegionSchema>;
-export type NoteContrast = z.infer<typeof NoteContrastSchema>;
-export type NoteFinding = z.infer<typeof NoteFindingSchema>;
-export type NoteStack = z.infer<typeof NoteStackSchema>;
-export type NotePair = z.infer<typeof NotePairSchema>;
-export type Evidence = z.infer<typeof EvidenceSchema>;
-export type Link = z.infer<typeof LinkSchema>;
-export type Kernel = z.infer<typeof KernelSchema>;
+export type Note = Frozen<z.infer<typeof NoteSchema>>;
+export type NoteRegion = Frozen<z.infer<typeof NoteRegionSchema>>;
+export type NoteContrast = Frozen<z.infer<typeof NoteContrastSchema>>;
+export type NoteFinding = Frozen<z.infer<typeof NoteFindingSchema>>;
+export type NoteStack = Frozen<z.infer<typeof NoteStackSchema>>;
+export type Study = Frozen<z.infer<typeof StudySchema>>;
+export type Conditions = Frozen<z.infer<typeof ConditionsSchema>>;
+export type NotePair = Frozen<z.infer<typeof NotePairSchema>>;
+export type Evidence = Frozen<z.infer<typeof EvidenceSchema>>;
+export type Link = Frozen<z.infer<typeof LinkSchema>>;
+export type Kernel = Frozen<z.infer<typeof KernelSchema>>;
+export type Assessability = (typeof ASSESSABILITY)[number];
 export type FindingKind = (typeof FINDING_KINDS)[number];

@@ -48,9 +48,10 @@ type Slices = Stack['slices'];
 function withoutCopies(files: readonly IndexedImage[], leftOut: LeftOut[]): IndexedImage[] {
   const seen = new Map<string, string>();
   return files.filter(({ file, image }) => {
-    const first = seen.get(image.sopInstanceUid);
+    const instance = `${image.sopInstanceUid} ${image.frame ?? 0}`;
+    const first = seen.get(instance);
     if (first === undefined) {
-      seen.set(image.sopInstanceUid, file);
+      seen.set(instance, file);
       return true;
     }
     leftOut.push({ file, code: 'duplicate', text: `The same image as ${first}: left out.` });

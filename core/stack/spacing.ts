@@ -5,7 +5,7 @@ const UNEVEN = 0.02;
 
 /** Distances between neighbours along the normal and what is odd about them. */
 export interface SpacingReading {
-  /** The median distance, mm; undefined for a single slice. */
+  /** The median distance, mm, of two middle ones the smaller, so that a gap never passes for it; undefined for one slice. */
   readonly sliceSpacingMm?: number;
   readonly findings: readonly Finding[];
 }
@@ -15,7 +15,7 @@ export function readSpacing(alongMm: readonly number[]): SpacingReading {
   const gaps = alongMm.slice(1).map((position, index) => position - (alongMm[index] ?? position));
   if (gaps.length === 0) return { findings: [] };
   const sorted = [...gaps].sort((a, b) => a - b);
-  const sliceSpacingMm = sorted[sorted.length >> 1] ?? 0;
+  const sliceSpacingMm = sorted[(sorted.length - 1) >> 1] ?? 0;
   const findings: Finding[] = [];
   const wide = gaps.filter((gap) => gap > sliceSpacingMm * 1.5);
   if (wide.length > 0) {

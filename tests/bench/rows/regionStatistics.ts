@@ -23,7 +23,7 @@ print(json.dumps(sorted(times)[20] * 1000))
 
 /** Statistics of a region of 20 pixels radius on both stacks, with its placement sensitivity. */
 export async function regionStatistics(): Promise<Row> {
-  const [soft, sharp] = [makeStack('2.25.7.1'), makeStack('2.25.7.2')];
+  const [soft, sharp] = [await makeStack('2.25.7.1'), await makeStack('2.25.7.2')];
   const shape: Shape = { kind: 'ellipse', centreMm: [54, 108, 0], radiiMm: [10, 10] };
   const { p50 } = await measure(() => {
     measureRegion(shape, soft.stack, soft.storedOf);
@@ -40,10 +40,12 @@ export async function regionStatistics(): Promise<Row> {
   };
 }
 
-function makeStack(series: string): { stack: Stack; storedOf: () => StoredValues } {
+async function makeStack(series: string): Promise<{ stack: Stack; storedOf: () => StoredValues }> {
   const stored = Int16Array.from({ length: 512 * 512 }, (_, index) => index % 997);
-  const spacing = { 0x00280030: { tag: 0x00280030, vr: 'DS', value: [0.5, 0.5] } as const };
-  const decoded = decodeImage(ctSlice({ rows: 512, columns: 512, stored, series, change: spacing }));
+  const spacing = { 2621488: { tag: 0x00280030, vr: 'DS', value: [0.5, 0.5] } as const };
+  const decoded = await decodeImage(
+    ctSlice({ rows: 512, columns: 512, stored, series, change: spacing }),
+  );
   if (!decoded.ok) throw new Error(decoded.refusal.text);
   const { image } = decoded.value;
   const [stack] = buildStacks([{ fileId: 0, file: 'slice', image }]).stacks;

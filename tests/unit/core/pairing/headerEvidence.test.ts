@@ -9,7 +9,7 @@ function stackAt(from: number, options: CtSliceOptions = {}): Stack {
     const bytes = ctSlice({ z: from + step, number: step, ...options });
     const reading = readHeader(bytes, bytes.length);
     if (reading.kind !== 'image') throw new Error(reading.kind);
-    return { fileId: step, file: `f${step}`, image: reading.image };
+    return { fileId: step, file: `f${step}`, image: reading.images[0] };
   });
   const [stack] = buildStacks(files).stacks;
   if (stack === undefined) throw new Error('no stack');

@@ -18,15 +18,16 @@ import { buildStacks, type Stack } from '../../../../core/stack/index.js';
 import { type CtSliceOptions, ctSlice } from '../../../corpus/ctSlice.js';
 
 /** Grid: first pixel at (−10, −20), rows 0.5 mm apart, columns 0.25 mm. Stored 1000 + index, so HU −24 + index. */
-function stackOf(slices: readonly CtSliceOptions[]): {
+async function stackOf(slices: readonly CtSliceOptions[]): Promise<{
   stack: Stack;
   storedOf: (index: number) => StoredValues | undefined;
-} {
-  const decoded = slices.map((options, number) => {
-    const result = decodeImage(ctSlice({ number, ...options }));
+}> {
+  const decoding = slices.map(async (options, number) => {
+    const result = await decodeImage(ctSlice({ number, ...options }));
     if (!result.ok) throw new Error(result.refusal.text);
     return result.value;
   });
+  const decoded = await Promise.all(decoding);
   const files = decoded.map(({ image }, fileId) => ({ fileId, file: `f${fileId}`, image }));
   const [stack] = buildStacks(files).stacks;
   if (stack === undefined) throw new Error('no stack');
@@ -35,8 +36,8 @@ function stackOf(slices: readonly CtSliceOptions[]): {
 
 const gridOf = (stack: Stack): CtImage['grid'] => stack.slices[0].image.grid;
 
-describe('pixelsInside', () => {
-  const { stack } = stackOf([{ z: 0 }]);
+describe('pixelsInside', async () => {
+  const { stack } = await stackOf([{ z: 0 }]);
 
   it('takes pixel centres on the edge of an ellipse', () => {
     const shape: Shape = { kind: 'ellipse', centreMm: [-9.5, -19.5, 0], radiiMm: [0.25, 0.5] };
@@ -76,7 +77,7 @@ describe('pixelsInside', () => {
     });
   });
 
-  it('is even-odd for an outline that crosses itself', () => {
+  it('is even-odd for an outline that crosses itself', async () => {
     const bow = [
       { column: 0, row: 0 },
       { column: 4, row: 4 },
@@ -88,8 +89,8 @@ describe('pixelsInside', () => {
   });
 });
 
-describe('findSlice', () => {
-  const { stack } = stackOf([{ z: 0 }, { z: 1 }, { z: 2 }, { z: 6 }]);
+describe('findSlice', async () => {
+  const { stack } = await stackOf([{ z: 0 }, { z: 1 }, { z: 2 }, { z: 6 }]);
   const at = (z: number): Shape => ({
     kind: 'ellipse',
     centreMm: [-9.5, -19.5, z],
@@ -136,8 +137,8 @@ describe('findSlice', () => {
 describe('measureRegion', () => {
   const five: Shape = { kind: 'ellipse', centreMm: [-9.5, -19.5, 0.1], radiiMm: [0.25, 0.5] };
 
-  it('measures the pixels inside, nothing resampled', () => {
-    const { stack, storedOf } = stackOf([{ z: 0 }, { z: 1 }]);
+  it('measures the pixels inside, nothing resampled', async () => {
+    const { stack, storedOf } = await stackOf([{ z: 0 }, { z: 1 }]);
     // HU −22, −18, −17, −16, −12: mean −17, SD √13.
     expect(measureRegion(five, stack, storedOf)).toMatchObject({
       n: 5,
@@ -154,9 +155,9 @@ describe('measureRegion', () => {
     });
   });
 
-  it('leaves padding out and says how much', () => {
+  it('leaves padding out and says how much', async () => {
     const padded = { 2621728: { tag: 0x00280120, vr: 'SS', value: 1007 } as const };
-    const { stack, storedOf } = stackOf([{ z: 0, change: padded }]);
+    const { stack, storedOf } = await stackOf([{ z: 0, change: padded }]);
     const value = measureRegion(five, stack, storedOf);
     expect([value.n, value.meanHu, value.flags.map((flag) => flag.code)]).toEqual([
       4,
@@ -165,15 +166,15 @@ describe('measureRegion', () => {
     ]);
   });
 
-  it('uses slope and intercept of the slice, not of the stack', () => {
+  it('uses slope and intercept of the slice, not of the stack', async () => {
     const slope = { 2625619: { tag: 0x00281053, vr: 'DS', value: 2 } as const };
-    const { stack, storedOf } = stackOf([{ z: 0 }, { z: 1, change: slope }]);
+    const { stack, storedOf } = await stackOf([{ z: 0 }, { z: 1, change: slope }]);
     expect(measureRegion(moveShape(five, [0, 0, 1]), stack, storedOf).meanHu).toBe(990);
   });
 
-  it('gives no SD of one pixel and no SNR of a flat region', () => {
+  it('gives no SD of one pixel and no SNR of a flat region', async () => {
     const one: Shape = { kind: 'ellipse', centreMm: [-9.5, -19.5, 0], radiiMm: [0.1, 0.1] };
-    const { stack, storedOf } = stackOf([{ z: 0, stored: new Int16Array(20).fill(1100) }]);
+    const { stack, storedOf } = await stackOf([{ z: 0, stored: new Int16Array(20).fill(1100) }]);
     expect(measureRegion(one, stack, storedOf)).toMatchObject({
       n: 1,
       meanHu: 76,
@@ -185,20 +186,20 @@ describe('measureRegion', () => {
     expect(flat.flags.map((flag) => flag.code)).toContain('zero-sd');
   });
 
-  it('gives no HU where the file gives none, and says why', () => {
-    const { stack, storedOf } = stackOf([{ z: 0, change: { 2625618: undefined } }]);
+  it('gives no HU where the file gives none, and says why', async () => {
+    const { stack, storedOf } = await stackOf([{ z: 0, change: { 2625618: undefined } }]);
     const value = measureRegion(five, stack, storedOf);
     expect([value.meanHu, value.flags.map((flag) => flag.code)]).toEqual([null, ['not-hu']]);
   });
 
-  it('says when the slice can’t be had', () => {
-    const { stack } = stackOf([{ z: 0 }]);
+  it('says when the slice can’t be had', async () => {
+    const { stack } = await stackOf([{ z: 0 }]);
     const value = measureRegion(five, stack, () => undefined);
     expect([value.meanHu, value.flags.map((flag) => flag.code)]).toEqual([null, ['slice-missing']]);
   });
 
-  it('tells how far the mean moves with half a pixel', () => {
-    const { stack, storedOf } = stackOf([{ z: 0, rows: 9, columns: 9 }]);
+  it('tells how far the mean moves with half a pixel', async () => {
+    const { stack, storedOf } = await stackOf([{ z: 0, rows: 9, columns: 9 }]);
     const middle: Shape = { kind: 'ellipse', centreMm: [-9, -18, 0], radiiMm: [0.26, 0.51] };
     // Values rise by 9 a row and 1 a column; half a row down takes rows 4 and 5 instead of the cross around 4.
     expect(measureRegion(middle, stack, storedOf).placementHu).toBeGreaterThan(3);

@@ -7,7 +7,7 @@ function image(options: CtSliceOptions): CtImage {
   const bytes = ctSlice(options);
   const reading = readHeader(bytes, bytes.length);
   if (reading.kind !== 'image') throw new Error(reading.kind);
-  return reading.image;
+  return reading.images[0];
 }
 
 function stacksOf(slices: readonly CtSliceOptions[]) {

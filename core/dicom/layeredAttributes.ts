@@ -1,0 +1,18 @@
+import type { Attributes } from './attributes.js';
+
+/** Looks through layers of attributes: the first that has a tag answers. A frame's own groups come before shared ones. */
+export function layeredAttributes(layers: readonly Attributes[]): Attributes {
+  const owner = (tag: string): Attributes | undefined => layers.find((layer) => layer.has(tag));
+  return {
+    has: (tag) => owner(tag) !== undefined,
+    texts: (tag) => owner(tag)?.texts(tag),
+    text: (tag) => owner(tag)?.text(tag),
+    decimals: (tag) => owner(tag)?.decimals(tag),
+    decimal: (tag) => owner(tag)?.decimal(tag),
+    integer: (tag) => owner(tag)?.integer(tag),
+    unsignedShort: (tag) => owner(tag)?.unsignedShort(tag),
+    signedShort: (tag) => owner(tag)?.signedShort(tag),
+    float: (tag) => owner(tag)?.float(tag),
+    double: (tag) => owner(tag)?.double(tag),
+  };
+}

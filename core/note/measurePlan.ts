@@ -1,0 +1,116 @@
+import type { StoredValues } from '../dicom/index.js';
+import { findSlice, measureRegion, type RegionValue } from '../region/index.js';
+import { type Result, refuse, success } from '../result.js';
+import type { Stack } from '../stack/index.js';
+import { type MeasuredContrast, measuredContrast } from './measuredContrast.js';
+import type { Plan, PlanRegion } from './plan.js';
+import type { Kernel } from './schema.js';
+
+/** What a plan comes to; the document of the command line's `measure`. Nothing asked for is left out. */
+export interface MeasuredPlan {
+  readonly regions: readonly MeasuredRegion[];
+  readonly contrasts: readonly ({ readonly id: string } & MeasuredContrast)[];
+  readonly profiles: readonly MeasuredProfile[];
+  readonly stents: readonly MeasuredStent[];
+}
+
+/** A region on both kernels; null on a kernel that the plan does not name. */
+export interface MeasuredRegion {
+  readonly id: string;
+  readonly role: PlanRegion['role'];
+  readonly soft: RegionValue;
+  readonly sharp: RegionValue | null;
+}
+
+/** A profile that was asked for, and why it has no values. */
+export interface MeasuredProfile {
+  readonly id: string;
+  readonly soft: null;
+  readonly sharp: null;
+  readonly reason: string;
+}
+
+/** A stent that was asked for, and why it has no values. */
+export interface MeasuredStent {
+  readonly id: string;
+  readonly strutDiameterMm: null;
+  readonly lumenHu: null;
+  readonly reason: string;
+}
+
+/** Stored values of one slice of a stack; undefined when they can't be had. */
+export type StackStoredOf = (stack: Stack, sliceIndex: number) => StoredValues | undefined;
+
+/** Slices of a stack that the plan's regions lie on, ascending: read these before {@link measurePlan}. */
+export function slicesNeeded(plan: Plan, stack: Stack): readonly number[] {
+  const indices = new Set<number>();
+  for (const { shape } of plan.regions) {
+    const found = findSlice(shape, stack);
+    if (found.ok) indices.add(found.value.sliceIndex);
+  }
+  return [...indices].sort((a, b) => a - b);
+}
+
+/**
+ * Measures a plan on one stack or on both. A region that lies on no slice, or a contrast of an unknown region, has
+ * null values and a flag that says why, and the rest goes on. Two things under one identifier are refused: no value
+ * could then be told from another.
+ */
+export function measurePlan(
+  plan: Plan,
+  soft: Stack,
+  sharp: Stack | undefined,
+  storedOf: StackStoredOf,
+): Result<MeasuredPlan> {
+  for (const [what, list] of Object.entries({
+    region: plan.regions,
+    contrast: plan.contrasts,
+    profile: plan.profiles,
+    stent: plan.stents,
+  })) {
+    const twice = repeatedId(list);
+    if (twice !== undefined) {
+      return refuse('duplicate-id', `The plan has more than one ${what} ${twice}. Name each once.`);
+    }
+  }
+  const on = (stack: Stack, { shape }: PlanRegion) =>
+    measureRegion(shape, stack, (sliceIndex) => storedOf(stack, sliceIndex));
+  const regions = plan.regions.map(
+    (region): MeasuredRegion => ({
+      id: region.id,
+      role: region.role,
+      soft: on(soft, region),
+      sharp: sharp === undefined ? null : on(sharp, region),
+    }),
+  );
+  const byId = new Map(regions.map((region) => [region.id, region]));
+  const kernels: readonly Kernel[] = sharp === undefined ? ['soft'] : ['soft', 'sharp'];
+  return success({
+    regions,
+    contrasts: plan.contrasts.map((contrast) => ({
+      id: contrast.id,
+      ...measuredContrast(contrast, kernels, (id, kernel) => byId.get(id)?.[kernel]),
+    })),
+    profiles: plan.profiles.map(({ id }) => ({
+      id,
+      soft: null,
+      sharp: null,
+      reason: 'This version does not measure profiles yet.',
+    })),
+    stents: plan.stents.map(({ id }) => ({
+      id,
+      strutDiameterMm: null,
+      lumenHu: null,
+      reason: 'This version does not measure stents yet.',
+    })),
+  });
+}
+
+function repeatedId(list: readonly { readonly id: string }[]): string | undefined {
+  const seen = new Set<string>();
+  for (const { id } of list) {
+    if (seen.has(id)) return id;
+    seen.add(id);
+  }
+  return undefined;
+}

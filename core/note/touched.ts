@@ -1,0 +1,9 @@
+import type { Note } from './schema.js';
+
+/**
+ * The note with changes, and the time of the change. A verified note speaks for its content at that time
+ * only, so an edit makes it unverified again.
+ */
+export function touched(note: Note, changes: Partial<Note>, now: string): Note {
+  return { ...note, ...changes, verification: 'UNVERIFIED', changedAt: now };
+}

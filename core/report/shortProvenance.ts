@@ -1,0 +1,24 @@
+import type { Note } from '../note/schema.js';
+import { cautionsOf } from './cautions.js';
+
+/** Lines that go with a table on the clipboard: what the numbers are from, and the cautions that can't be left out. */
+export function shortProvenance(note: Note): readonly string[] {
+  const { pair, conditions, software } = note;
+  const label = (kernelLabel: string | null) => kernelLabel ?? 'no kernel label';
+  const kernels =
+    pair.sharp === null
+      ? `Soft: ${label(pair.soft.kernelLabel)}`
+      : `Soft: ${label(pair.soft.kernelLabel)}; sharp: ${label(pair.sharp.kernelLabel)}`;
+  const kvp = conditions.kvp === null ? 'tube voltage not stated' : `${conditions.kvp} kV`;
+  // Kernel labels are meant to differ, and stand in the line before.
+  const doubts = pair.evidence.filter(
+    ({ check, state }) => state !== 'agrees' && check !== 'kernel label',
+  );
+  return [
+    `${kernels}; ${kvp}; ${software.name} ${software.version}; ${note.changedAt}; ${note.verification}, ${note.completion}.`,
+    ...(pair.sharp === null || doubts.length === 0
+      ? []
+      : [`Pair: ${doubts.map(({ check, state }) => `${check} ${state}`).join('; ')}.`]),
+    ...cautionsOf(note).slice(0, note.synthetic ? 3 : 2),
+  ];
+}

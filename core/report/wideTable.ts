@@ -1,0 +1,86 @@
+import { NO_VALUE } from '../format/index.js';
+import type { Kernel } from '../note/schema.js';
+import type { KernelValues, MeasurementTable, TableRow } from './measurementTable.js';
+import type { QuantityValue } from './regionQuantities.js';
+
+/** A column of the wide form: one row a region or contrast, both kernels side by side. */
+export interface WideColumn {
+  /** For machines: 'soft_mean'. */
+  readonly key: string;
+  /** For people: 'Soft mean, HU'. */
+  readonly title: string;
+  readonly numeric: boolean;
+  /** Full precision. */
+  readonly exact: (row: TableRow) => string | number | null;
+  /** For people; an en dash for a number that could not be had, nothing where none belongs. */
+  readonly printed: (row: TableRow) => string;
+}
+
+const KERNEL_TITLE: Readonly<Record<Kernel, string>> = { soft: 'Soft', sharp: 'Sharp' };
+
+const REGION_QUANTITIES = [
+  'mean',
+  'SD',
+  'median',
+  'minimum',
+  'maximum',
+  'n',
+  'sampled area',
+  'SNR',
+  'placement',
+] as const;
+
+/** The columns of a note's wide table. A quantity's unit stands in the title, taken from the rows. */
+export function wideColumns(table: MeasurementTable): readonly WideColumn[] {
+  const present: Kernel[] = table.rows.some(({ kernels }) => kernels.length > 1)
+    ? ['soft', 'sharp']
+    : ['soft'];
+  const quantities = [...REGION_QUANTITIES, 'CNR'];
+  return [
+    text('id', 'ID', ({ id }) => id),
+    text('label', 'Region or contrast', ({ label }) => label),
+    text('role', 'Role', ({ role }) => role),
+    text('segment', 'Segment', ({ segment }) => segment),
+    text('finding', 'Finding', ({ finding, nominalMm }) =>
+      nominalMm === null ? finding : `${finding}, nominal ${nominalMm} mm`,
+    ),
+    text('assessability', 'Assessability', ({ assessability }) => assessability),
+    text('reason', 'Reason', ({ reason }) => reason),
+    text('place', 'Place', ({ place }) => place),
+    ...present.flatMap((kernel) => quantities.map((name) => number(table, kernel, name))),
+    text('formula', 'Formula of the CNR', ({ item, kernels }) =>
+      item === 'contrast' ? (kernels[0]?.quantities[0]?.formula ?? '') : '',
+    ),
+    text('flags', 'Flags', flagsText),
+  ];
+}
+
+/** Flags of a row in sentences, each under the kernel that it holds for. */
+export function flagsText({ kernels, flags }: TableRow): string {
+  const ofKernels = kernels.flatMap((values) =>
+    values.flags.map((flag) => `${KERNEL_TITLE[values.kernel]}: ${flag}`),
+  );
+  return [...ofKernels, ...flags].join(' ');
+}
+
+function text(key: string, title: string, of: (row: TableRow) => string): WideColumn {
+  return { key, title, numeric: false, exact: of, printed: of };
+}
+
+function number(table: MeasurementTable, kernel: Kernel, quantity: string): WideColumn {
+  const find = ({ kernels }: TableRow): QuantityValue | undefined =>
+    kernels
+      .find((values: KernelValues) => values.kernel === kernel)
+      ?.quantities.find((value) => value.quantity === quantity);
+  const unit = table.rows.map(find).find((value) => value !== undefined)?.unit;
+  return {
+    key: `${kernel}_${quantity.toLowerCase().replaceAll(' ', '_')}`,
+    title: `${KERNEL_TITLE[kernel]} ${quantity}${unit ? `, ${unit}` : ''}`,
+    numeric: true,
+    exact: (row) => find(row)?.value ?? null,
+    printed: (row) => {
+      const belongs = (row.item === 'contrast') === (quantity === 'CNR');
+      return find(row)?.printed ?? (belongs ? NO_VALUE : '');
+    },
+  };
+}
