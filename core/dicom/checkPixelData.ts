@@ -17,12 +17,14 @@ export interface CheckedPixels {
   readonly findings: readonly Finding[];
 }
 
-const LOSSY_SYNTAXES: ReadonlySet<string> = new Set([
-  '1.2.840.10008.1.2.4.51',
-  '1.2.840.10008.1.2.4.81',
+/** JPEG 2000 that may be cut at any quality even with the reversible wavelet: lossy unless proven otherwise. */
+const MAY_BE_LOSSY: ReadonlySet<string> = new Set([
   '1.2.840.10008.1.2.4.91',
   '1.2.840.10008.1.2.4.203',
 ]);
+
+/** Near-lossless JPEG-LS, when its bound can't be seen. */
+const NEAR_LOSSLESS = '1.2.840.10008.1.2.4.81';
 
 /**
  * Checks Pixel Data against what the header asks for. Of compressed pixels the head of the first code stream is
@@ -73,12 +75,12 @@ export function checkPixelData(
     return success({ pixels, inFragments: false, lossy: false, findings });
   }
   const header = firstCodeStream(bytes, pixelData.offset);
-  const byTag = LOSSY_SYNTAXES.has(transferSyntaxUid);
   const corrected = header === undefined ? undefined : fromCodeStream(pixels, header);
   return success({
     pixels: corrected ?? pixels,
     inFragments: true,
-    lossy: header?.lossy ?? byTag,
+    lossy:
+      MAY_BE_LOSSY.has(transferSyntaxUid) || (header?.lossy ?? transferSyntaxUid === NEAR_LOSSLESS),
     findings:
       corrected === undefined
         ? []

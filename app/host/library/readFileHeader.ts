@@ -1,0 +1,94 @@
+import { closeSync, constants, fstatSync, openSync, readSync } from 'node:fs';
+import { type HeaderReading, readHeader } from '../../../core/dicom/index.js';
+import { fileErrorCode, fileErrorReason } from '../storage/fileError.js';
+
+/** Size and time of change of a file when its header was read. */
+export interface FileStamp {
+  readonly size: number;
+  readonly mtimeMs: number;
+}
+
+/** What the beginning of one file tells. The stamp is absent when the file could not be opened. */
+export interface FileReading {
+  readonly reading: Exclude<HeaderReading, { kind: 'needMore' }>;
+  readonly stamp?: FileStamp;
+}
+
+/** How much of a file is read, bytes: most headers end in the first 8 KiB. The last step is the whole file. */
+const STEPS = [8 << 10, 64 << 10, 1 << 20] as const;
+
+/** A header that does not end in this many bytes is none (and a deflated file of this size is refused). */
+const MOST_BYTES = 512 << 20;
+
+/** Not through a link, and without waiting for the other end of a pipe. Both are 0 where the system has neither. */
+export const OPEN_FLAGS =
+  constants.O_RDONLY | (constants.O_NOFOLLOW ?? 0) | (constants.O_NONBLOCK ?? 0);
+
+/** Reads the header of one file, with as few bytes as will do. Blocks: call it in a worker thread. */
+export function readFileHeader(path: string): FileReading {
+  let descriptor: number;
+  try {
+    descriptor = openSync(path, OPEN_FLAGS);
+  } catch (error) {
+    return { reading: unreadable(error) };
+  }
+  try {
+    const { size, mtimeMs } = fstatSync(descriptor);
+    return { reading: readSteps(descriptor, size), stamp: { size, mtimeMs } };
+  } catch (error) {
+    return { reading: unreadable(error) };
+  } finally {
+    closeSync(descriptor);
+  }
+}
+
+function readSteps(descriptor: number, size: number): FileReading['reading'] {
+  if (size === 0) return leaveOut('empty-file', 'Empty file: it holds no bytes.');
+  for (const step of [...STEPS, Math.min(size, MOST_BYTES)]) {
+    const bytes = readStart(descriptor, Math.min(step, size));
+    if (bytes.length < Math.min(step, size)) {
+      return leaveOut('file-shrank', 'The file became shorter while it was read.');
+    }
+    const reading = readChecked(bytes, size);
+    if (reading.kind !== 'needMore') return reading;
+  }
+  return leaveOut('no-header', `No image header in its ${Math.min(size, MOST_BYTES)} bytes.`);
+}
+
+/** One file that the reader stumbles over must not stop the folder; it is left out, and the text says what happened. */
+function readChecked(bytes: Uint8Array, size: number): HeaderReading {
+  try {
+    return readHeader(bytes, size);
+  } catch (error) {
+    return leaveOut('reader-failed', `Diptych failed to read this file (${String(error)}).`);
+  }
+}
+
+function readStart(descriptor: number, length: number): Uint8Array {
+  const bytes = new Uint8Array(length);
+  let filled = 0;
+  while (filled < length) {
+    const count = readSync(descriptor, bytes, filled, length - filled, filled);
+    if (count === 0) break;
+    filled += count;
+  }
+  return bytes.subarray(0, filled);
+}
+
+function unreadable(error: unknown): FileReading['reading'] {
+  const reason = fileErrorReason(error);
+  if (reason === undefined) throw error;
+  switch (fileErrorCode(error)) {
+    case 'ENOENT':
+      return leaveOut('vanished', 'The file was gone when it was to be read.');
+    case 'EACCES':
+    case 'EPERM':
+      return leaveOut('no-permission', 'No permission to read this file.');
+    default:
+      return leaveOut('unreadable-file', `The file can’t be read: ${reason}.`);
+  }
+}
+
+function leaveOut(code: string, text: string): { kind: 'leftOut'; code: string; text: string } {
+  return { kind: 'leftOut', code, text };
+}

@@ -1,0 +1,138 @@
+import { firstPixelMm, type ImageGrid, pixelMm } from './imageGrid.js';
+import { detectorMm, type ParallelScan, type Sinogram, viewAngleRad } from './parallelScan.js';
+
+/** Rows that are worked on together, so that they stay in the processor's cache over all views. */
+const BAND = 16;
+
+/** Where the pixels of a view lie in the filtered sinogram: corner + row·perRow + column·perColumn, in detectors. */
+interface Walk {
+  readonly corner: number;
+  readonly perColumn: number;
+  readonly perRow: number;
+  /** Index of the view's first detector. */
+  readonly base: number;
+}
+
+/**
+ * Back projection of filtered views with linear interpolation between detectors, per mm: (π/views)·Σ q(t).
+ * Row after row of pixels. Pixels that lie beyond the detectors of a view get nothing from it.
+ */
+export function backProject(filtered: Sinogram, scan: ParallelScan, grid: ImageGrid): Float64Array {
+  const { matrix } = grid;
+  const last = scan.detectors - 1;
+  const walks = Array.from({ length: scan.views }, (_, view) => walkOf(view, scan, grid));
+  // Four views in one pass over a row: the pixels are read and written once for the four.
+  const fours = Array.from({ length: Math.floor(walks.length / 4) }, (_, index) =>
+    walks.slice(index * 4, index * 4 + 4),
+  );
+  const rest = walks.slice(fours.length * 4);
+  const image = new Float64Array(matrix * matrix);
+  for (let top = 0; top < matrix; top += BAND) {
+    const bottom = Math.min(matrix, top + BAND);
+    for (const four of fours) {
+      const [a, b, c, d] = four as [Walk, Walk, Walk, Walk];
+      for (let row = top; row < bottom; row += 1) {
+        if (four.every((walk) => coversRow(walk, row, last, matrix)))
+          addFourViews(filtered, a, b, c, d, row, image, matrix);
+        else for (const walk of four) addView(filtered, walk, row, last, image, matrix);
+      }
+    }
+    for (const walk of rest)
+      for (let row = top; row < bottom; row += 1) addView(filtered, walk, row, last, image, matrix);
+  }
+  const scale = Math.PI / scan.views;
+  return image.map((sum) => sum * scale);
+}
+
+function walkOf(view: number, scan: ParallelScan, grid: ImageGrid): Walk {
+  const theta = viewAngleRad(scan, view);
+  const [x, y] = firstPixelMm(grid);
+  const step = pixelMm(grid) / scan.pitchMm;
+  const tMm = x * Math.cos(theta) + y * Math.sin(theta);
+  return {
+    corner: (tMm - detectorMm(scan, 0)) / scan.pitchMm,
+    perColumn: Math.cos(theta) * step,
+    perRow: Math.sin(theta) * step,
+    base: view * scan.detectors,
+  };
+}
+
+/** Whether every pixel of a row lies safely between the first and the last detector. */
+function coversRow(
+  { corner, perRow, perColumn }: Walk,
+  row: number,
+  last: number,
+  columns: number,
+): boolean {
+  const start = corner + row * perRow;
+  const end = start + (columns - 1) * perColumn;
+  // The margin is for what adding up the steps rounds.
+  return Math.min(start, end) > 1e-6 && Math.max(start, end) < last - 1e-6;
+}
+
+function addFourViews(
+  q: Float64Array,
+  a: Walk,
+  b: Walk,
+  c: Walk,
+  d: Walk,
+  row: number,
+  image: Float64Array,
+  columns: number,
+): void {
+  const { base: baseA, perColumn: stepA } = a;
+  const { base: baseB, perColumn: stepB } = b;
+  const { base: baseC, perColumn: stepC } = c;
+  const { base: baseD, perColumn: stepD } = d;
+  let atA = a.corner + row * a.perRow;
+  let atB = b.corner + row * b.perRow;
+  let atC = c.corner + row * c.perRow;
+  let atD = d.corner + row * d.perRow;
+  const end = (row + 1) * columns;
+  for (let pixel = row * columns; pixel < end; pixel += 1) {
+    const leftA = atA | 0;
+    const leftB = atB | 0;
+    const leftC = atC | 0;
+    const leftD = atD | 0;
+    // The row was found to lie between the detectors, so each index holds a number.
+    const qA = q[baseA + leftA] as number;
+    const qB = q[baseB + leftB] as number;
+    const qC = q[baseC + leftC] as number;
+    const qD = q[baseD + leftD] as number;
+    image[pixel] =
+      (image[pixel] as number) +
+      qA +
+      (atA - leftA) * ((q[baseA + leftA + 1] as number) - qA) +
+      qB +
+      (atB - leftB) * ((q[baseB + leftB + 1] as number) - qB) +
+      qC +
+      (atC - leftC) * ((q[baseC + leftC + 1] as number) - qC) +
+      qD +
+      (atD - leftD) * ((q[baseD + leftD + 1] as number) - qD);
+    atA += stepA;
+    atB += stepB;
+    atC += stepC;
+    atD += stepD;
+  }
+}
+
+/** One view, with a test at each pixel: for rows that leave the detectors, and views that are left over. */
+function addView(
+  q: Float64Array,
+  { base, corner, perColumn, perRow }: Walk,
+  row: number,
+  last: number,
+  image: Float64Array,
+  columns: number,
+): void {
+  const start = corner + row * perRow;
+  for (let column = 0; column < columns; column += 1) {
+    const at = start + column * perColumn;
+    if (at < 0 || at >= last) continue;
+    const left = Math.floor(at);
+    const value = q[base + left] as number;
+    const next = q[base + left + 1] as number;
+    const pixel = row * columns + column;
+    image[pixel] = (image[pixel] as number) + value + (at - left) * (next - value);
+  }
+}

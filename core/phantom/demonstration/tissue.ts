@@ -1,0 +1,22 @@
+/** True HU of the scene's tissues at 100 kVp with contrast in the left heart. Invented, in the range of real ones. */
+export const HU = {
+  skinFat: -105,
+  chestWall: 60,
+  lung: -840,
+  lungVessel: 180,
+  fat: -90,
+  muscle: 100,
+  vesselWall: 60,
+  aorta: 370,
+  leftChamber: 350,
+  rightChamber: 200,
+  coronary: 360,
+  stentLumen: 350,
+  strut: 5600,
+  calcifiedPlaque: 900,
+  softPlaque: 60,
+  corticalBone: 750,
+  spongyBone: 190,
+  rib: 420,
+  canal: 35,
+} as const;
