@@ -41,7 +41,10 @@ export function attributesOf(dataSet: DataSet, inheritedCharacterSet = ''): Attr
   function texts(tag: string): readonly string[] | undefined {
     const value = valueBytes(tag);
     if (value === undefined) return undefined;
-    const values = decodeText(value, characterSet).split('\\').map(trimPadding);
+    const whole = trimPadding(decodeText(value, characterSet));
+    if (whole === '') return undefined;
+    if (!whole.includes('\\')) return [whole];
+    const values = whole.split('\\').map(trimPadding);
     return values.some((one) => one !== '') ? values : undefined;
   }
 
@@ -50,7 +53,10 @@ export function attributesOf(dataSet: DataSet, inheritedCharacterSet = ''): Attr
   return {
     has: (tag) => (dataSet.find(tag)?.length ?? 0) > 0,
     texts,
-    text: (tag) => texts(tag)?.join('\\'),
+    text: (tag) => {
+      const values = texts(tag);
+      return values?.length === 1 ? values[0] : values?.join('\\');
+    },
     decimals,
     decimal: (tag) => decimals(tag)?.[0],
     integer: (tag) => {
@@ -66,5 +72,13 @@ export function attributesOf(dataSet: DataSet, inheritedCharacterSet = ''): Attr
 
 /** Strings are padded with spaces, UIDs with NUL (PS3.5 6.2); some writers mix the two. */
 function trimPadding(text: string): string {
-  return text.replace(/^[ \0]+|[ \0]+$/g, '');
+  let start = 0;
+  let end = text.length;
+  while (start < end && isPadding(text.charCodeAt(start))) start++;
+  while (end > start && isPadding(text.charCodeAt(end - 1))) end--;
+  return start === 0 && end === text.length ? text : text.slice(start, end);
+}
+
+function isPadding(code: number): boolean {
+  return code === 0x20 || code === 0;
 }

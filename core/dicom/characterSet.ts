@@ -18,11 +18,34 @@ const LABELS: Readonly<Record<string, string>> = {
   GBK: 'gbk',
 };
 
+const decoders = new Map<string, TextDecoder>();
+
+function decoderOf(label: string): TextDecoder {
+  const known = decoders.get(label);
+  if (known !== undefined) return known;
+  const decoder = new TextDecoder(label);
+  decoders.set(label, decoder);
+  return decoder;
+}
+
 /** Decodes text bytes of a data set whose Specific Character Set has this first value. An unknown set is read as ASCII. */
 export function decodeText(bytes: Uint8Array, characterSet: string): string {
+  const ascii = asciiText(bytes);
+  if (ascii !== undefined) return ascii;
   const label = LABELS[characterSet.trim()];
-  if (label !== undefined) return new TextDecoder(label).decode(bytes);
+  if (label !== undefined) return decoderOf(label).decode(bytes);
   let text = '';
   for (const byte of bytes) text += byte < 0x80 ? String.fromCharCode(byte) : '\ufffd';
+  return text;
+}
+
+/** Most values are plain ASCII, in every set: they need no decoder. Undefined for all others. */
+function asciiText(bytes: Uint8Array): string | undefined {
+  let text = '';
+  for (let i = 0; i < bytes.length; i++) {
+    const byte = bytes[i] ?? 0;
+    if (byte >= 0x80 || byte === 0x1b) return undefined;
+    text += String.fromCharCode(byte);
+  }
   return text;
 }

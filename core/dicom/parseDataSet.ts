@@ -71,17 +71,20 @@ function emptyOf(parsed: ParsedDataSet): ParsedDataSet {
 
 /** The parser lets three things pass that no data set may have; the first of them. */
 function firstImpossible(parsed: ParsedDataSet): Result<never> | undefined {
-  for (const element of Object.values(parsed.elements)) {
-    if (element.tag === PIXEL_DATA || element.parser !== undefined) continue;
-    const tag = tagInWords(element.tag);
+  const { elements } = parsed;
+  for (const key in elements) {
+    const element = elements[key];
+    if (element === undefined || key === PIXEL_DATA || element.parser !== undefined) continue;
     if (element.dataOffset + element.length > parsed.byteArray.length) {
       return refuseCut(element, parsed.byteArray.length);
     }
     if (element.vr !== undefined && !isKnownVr(element.vr)) {
+      const tag = tagInWords(key);
       return refuse('bad-vr', `${tag} has no valid value representation.`, { tag });
     }
     const mayBeOpen = element.vr === 'SQ' || element.vr === 'UN' || element.vr === undefined;
     if (element.hadUndefinedLength === true && !mayBeOpen) {
+      const tag = tagInWords(key);
       return refuse('undefined-length', `${tag} has no length, which only sequences may lack.`, {
         tag,
       });

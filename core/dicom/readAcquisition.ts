@@ -3,9 +3,9 @@ import type { Acquisition, Identity } from './ctImage.js';
 
 /** Drops the keys whose value is absent, so that absence stays absence. */
 function present<T extends object>(value: { [K in keyof T]: T[K] | undefined }): Partial<T> {
-  return Object.fromEntries(
-    Object.entries(value).filter(([, entry]) => entry !== undefined),
-  ) as Partial<T>;
+  const kept: Partial<T> = {};
+  for (const key in value) if (value[key] !== undefined) kept[key] = value[key];
+  return kept;
 }
 
 /** Patient and study attributes, as the file has them. */

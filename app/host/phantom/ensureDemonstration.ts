@@ -19,10 +19,12 @@ export interface Ensured extends Made {
 }
 
 const StampSchema = z.object({
-  version: z.number(),
-  seed: z.number(),
-  slices: z.number(),
-  matrix: z.number(),
+  stamp: z.object({
+    version: z.number(),
+    seed: z.number(),
+    slices: z.number(),
+    matrix: z.number(),
+  }),
 });
 
 /**
@@ -70,15 +72,16 @@ async function moveIfThere(from: string, to: string): Promise<void> {
 
 async function isComplete(folder: string, options: DemonstrationOptions): Promise<boolean> {
   try {
-    const stamp = StampSchema.safeParse(
+    const read = StampSchema.safeParse(
       JSON.parse(await readFile(join(folder, TRUTH_FILE), 'utf8')),
     );
-    if (!stamp.success) return false;
+    if (!read.success) return false;
+    const { version, seed, slices, matrix } = read.data.stamp;
     const agrees =
-      stamp.data.version === DEMONSTRATION_VERSION &&
-      stamp.data.seed === options.seed &&
-      stamp.data.slices === options.slices &&
-      stamp.data.matrix === options.matrix;
+      version === DEMONSTRATION_VERSION &&
+      seed === options.seed &&
+      slices === options.slices &&
+      matrix === options.matrix;
     const counts = await Promise.all(
       SIDES.map(async (side) => (await readdir(join(folder, side))).length),
     );

@@ -34,8 +34,8 @@ export function demonstrationTruth(options: DemonstrationOptions) {
   const regions = trueRegions().filter(({ shape }) => isInside(shape.centreMm[2]));
   return {
     statement: SYNTHETIC_STATEMENT,
-    version: DEMONSTRATION_VERSION,
-    ...options,
+    /** What the demonstration was made of: the stamp by which a finished one is known. */
+    stamp: { version: DEMONSTRATION_VERSION, ...options },
     studyInstanceUid: ids.studyInstanceUid,
     frameOfReferenceUid: ids.frameOfReferenceUid,
     scan: { ...SCAN, photonsPerRay: PHOTONS_PER_RAY },
