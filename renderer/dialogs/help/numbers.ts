@@ -1,0 +1,88 @@
+/** What a number of the bench means, and where that comes from. */
+export interface NumberHelp {
+  readonly title: string;
+  readonly text: readonly string[];
+  /** A formula, in one line. */
+  readonly formula?: string;
+  readonly source: string;
+}
+
+/** The meaning of every number that the window, the note and the exports show. */
+export const NUMBERS: readonly NumberHelp[] = [
+  {
+    title: 'Position',
+    text: [
+      'Places are in the patient’s own coordinates: L to the left, P to the back, H to the head, in mm. Slices are ordered and spaced by their position along the stack’s normal, never by instance number, slice location or thickness.',
+    ],
+    source: 'DICOM PS3.3 C.7.6.2.1.1.',
+  },
+  {
+    title: 'HU',
+    text: [
+      'A stored value times the slope plus the intercept of its own slice. Padding is left out. A stack without a rescale, or in another unit, is shown but not measured in HU.',
+    ],
+    formula: 'HU = slope × stored value + intercept',
+    source: 'DICOM PS3.3 C.11.1, C.7.5.1.1.2.',
+  },
+  {
+    title: 'A region and its pixels',
+    text: [
+      'A region is a shape in patient space. It is measured on each kernel over the pixels whose centres lie inside it, edge included, with nothing resampled. On the other stack it lies on the nearest slice if that is within half a slice spacing; the distance is kept. Otherwise it is not measured there.',
+      'Area is that of the shape; sampled area is the number of pixels times the area of one. Where the two differ much, the region is too small for the grid.',
+    ],
+    source: 'Diptych’s own rule.',
+  },
+  {
+    title: 'Mean and SD',
+    text: [
+      'Arithmetic mean and sample standard deviation, with n − 1. The difference in the middle column is sharp minus soft.',
+    ],
+    formula: 'SD = √(Σ(x − mean)² / (n − 1))',
+    source: 'Any textbook of statistics; checked against the NIST Statistical Reference Datasets.',
+  },
+  {
+    title: 'SNR and its bands',
+    text: [
+      'Mean over SD of the same region. Up to 1 is called unreadable, up to 2 poor, 2 to 4 tolerable at best, above 4 diagnostic. The bands are an aid, never a verdict. With an SD of zero there is no SNR.',
+    ],
+    formula: 'SNR = mean / SD',
+    source: 'Bands: common practice, no source.',
+  },
+  {
+    title: 'CNR',
+    text: [
+      'Lumen minus wall over the noise. The note names whose SD the noise is: lumen, wall, a reference region, or lumen and wall pooled. Values under different noises are not comparable; a review of coronary CT papers found that using the vessel’s own SD changes results most.',
+    ],
+    formula: 'CNR = (lumen − wall) / noise;  pooled noise = √((SD₁² + SD₂²) / 2)',
+    source: 'Formulas in use: Acta Radiol 2021, doi 10.1177/02841851211041813.',
+  },
+  {
+    title: 'Standard error and placement',
+    text: [
+      'Neighbouring pixels are correlated, so SD/√n is several times too small. A standard error is given only where the noise’s correlation was measured on that kernel; elsewhere there is none. Placement is how far the mean moves when the region moves by half a pixel in eight directions.',
+    ],
+    source: 'Variance of a mean of correlated values: any textbook of time series.',
+  },
+  {
+    title: 'One acquisition',
+    text: [
+      'The two series are compared in their headers (patient, study, frame of reference, orientation, phase, tube voltage, times) and in their pixels. Each line of evidence agrees, differs, or is unknown because a file is silent. Kernel labels are shown as the files have them and never interpreted.',
+      'The same frame of reference means shared coordinates; it does not prove that nothing moved between two phases.',
+    ],
+    source: 'DICOM PS3.3 C.7.4.1, C.7.6.2; weighing of the evidence: Diptych’s own rule.',
+  },
+  {
+    title: 'Histogram',
+    text: [
+      'Both kernels’ pixels of the selected region in the same bins, as wide as the rule of Freedman and Diaconis says for both together, never finer than 1 HU. The short upright lines are the means.',
+    ],
+    formula: 'bin width = 2 × IQR / ∛n',
+    source: 'Freedman & Diaconis 1981, Z Wahrscheinlichkeitstheorie verw Gebiete 57:453.',
+  },
+  {
+    title: 'Segments',
+    text: ['The model with 18 segments. Which of them a heart has depends on its dominance.'],
+    source:
+      'Raff 2009, J Cardiovasc Comput Tomogr 3:122; Leipsic 2014, J Cardiovasc Comput Tomogr 8:342.',
+  },
+];

@@ -1,0 +1,113 @@
+import {
+  FINDING_KINDS,
+  type FindingKind,
+  type NoteFinding,
+  type NoteRegion,
+  SEGMENTS,
+} from '../../core/note/index.js';
+import { ROLES } from '../../core/region/index.js';
+import type { LedgerActions } from './ledgerActions.js';
+import { Choice, type ChoiceOption, plainOptions } from './parts/Choice.js';
+import { RoleKey } from './parts/RoleSignView.js';
+import { TextField } from './parts/TextField.js';
+
+export interface InspectorProps {
+  readonly region: NoteRegion;
+  readonly finding: NoteFinding | undefined;
+  readonly frozen: boolean;
+  readonly actions: LedgerActions;
+}
+
+const KINDS: readonly ChoiceOption<FindingKind | 'none'>[] = [
+  { value: 'none', text: 'none yet' },
+  ...plainOptions(FINDING_KINDS),
+];
+
+const SEGMENT_OPTIONS: readonly ChoiceOption<string>[] = [
+  { value: '', text: 'no segment' },
+  ...SEGMENTS.map(({ number, abbreviation, name }) => ({
+    value: String(number),
+    text: `${number} ${abbreviation} · ${name}`,
+  })),
+];
+
+const QUOTES: readonly ChoiceOption<'none' | 'soft' | 'sharp' | 'both'>[] = [
+  { value: 'none', text: '–' },
+  ...plainOptions(['soft', 'sharp', 'both'] as const),
+];
+
+/** The line under the ledger in which the selected region's words are changed. */
+export function Inspector({ region, finding, frozen, actions }: InspectorProps) {
+  const { id } = region;
+  return (
+    <div class="inspector">
+      <span class="name">
+        <RoleKey role={region.role} />
+        {region.label}
+      </span>
+      <Choice
+        label="Role"
+        value={region.role}
+        options={plainOptions(ROLES)}
+        disabled={frozen}
+        onChange={(role) => actions.onRole(id, role)}
+      />
+      <TextField
+        label="Place"
+        placeholder="in stent, outer edge…"
+        value={region.place}
+        disabled={frozen}
+        onCommit={(place) => actions.onPlace(id, place)}
+      />
+
+      <Choice
+        label="Finding"
+        value={finding?.kind ?? 'none'}
+        options={KINDS}
+        disabled={frozen}
+        onChange={(kind) =>
+          kind === 'none' ? actions.onClearFinding(id) : actions.onFinding(id, { kind })
+        }
+      />
+
+      <Choice
+        label="Segment"
+        value={finding?.segment ? String(finding.segment) : ''}
+        options={SEGMENT_OPTIONS}
+        disabled={frozen || finding === undefined}
+        title={finding === undefined ? 'Choose a finding first' : undefined}
+        onChange={(value) =>
+          actions.onFinding(id, { segment: value === '' ? null : Number(value) })
+        }
+      />
+      <Choice
+        label="Quote"
+        value={region.quote ?? 'none'}
+        options={QUOTES}
+        disabled={frozen}
+        onChange={(quote) =>
+          actions.onQuote(id, quote === 'none' ? null : quote, region.quoteReason)
+        }
+      />
+      {region.quote !== null && (
+        <TextField
+          bare
+          look="why"
+          label="Why this kernel is quoted"
+          placeholder="why"
+          value={region.quoteReason}
+          disabled={frozen}
+          onCommit={(reason) => actions.onQuote(id, region.quote, reason)}
+        />
+      )}
+      <button
+        type="button"
+        class="button icon-button"
+        disabled={frozen}
+        onClick={() => actions.onDelete(id)}
+      >
+        Delete<span class="visually-hidden"> {region.label}</span>
+      </button>
+    </div>
+  );
+}

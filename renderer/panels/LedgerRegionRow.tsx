@@ -1,0 +1,90 @@
+import { formatMeanSd, formatQuantity, NO_VALUE, visibleText } from '../../core/format/index.js';
+import type { NoteContrast, NoteRegion } from '../../core/note/index.js';
+import { isQuiet, type RegionValue } from '../../core/region/index.js';
+import { RoleKey } from './parts/RoleSignView.js';
+import { FlagSign } from './parts/StateSign.js';
+
+export interface LedgerRegionRowProps {
+  readonly region: NoteRegion;
+  /** The contrasts in which it is the lumen; the last one is shown. */
+  readonly contrasts: readonly NoteContrast[];
+  readonly selected: boolean;
+  readonly onSelect: (regionId: string) => void;
+}
+
+/** A region's row. A click anywhere on it selects it; so does its button, for those who use the keyboard. */
+export function LedgerRegionRow({ region, contrasts, selected, onSelect }: LedgerRegionRowProps) {
+  const contrast = contrasts.at(-1);
+  return (
+    <tr
+      class="region"
+      data-selected={selected}
+      data-region={region.id}
+      onClick={() => onSelect(region.id)}
+    >
+      <th scope="row">
+        <button type="button" class="row-button" aria-pressed={selected}>
+          <RoleKey role={region.role} />
+          {region.label}
+        </button>
+      </th>
+      <td class="text place" title={region.place}>
+        {visibleText(region.place)}
+      </td>
+      <td>{formatQuantity((region.soft ?? region.sharp)?.areaMm2, 'areaMm2')}</td>
+      <ValueCells kernel="soft" value={region.soft} contrast={contrast} />
+      <ValueCells kernel="sharp" value={region.sharp} contrast={contrast} />
+      <td
+        class={region.quote === null ? 'text none' : 'text'}
+        title={region.quoteReason || undefined}
+      >
+        {region.quote ?? NO_VALUE}
+      </td>
+    </tr>
+  );
+}
+
+interface ValueCellsProps {
+  readonly kernel: 'soft' | 'sharp';
+  readonly value: RegionValue | null;
+  readonly contrast: NoteContrast | undefined;
+}
+
+function ValueCells({ kernel, value, contrast }: ValueCellsProps) {
+  const flags = (value?.flags ?? []).filter((flag) => !isQuiet(flag)).map(({ text }) => text);
+  const reason = flags.join(' ') || undefined;
+  const ratio = contrast?.[kernel];
+  const why = contrast?.flags.map(({ text }) => text).join(' ');
+  return (
+    <>
+      <td class={kernel} title={reason}>
+        {reason !== undefined && (
+          <span class="flag">
+            <FlagSign />
+            <span class="visually-hidden">{reason}</span>
+          </span>
+        )}
+        {formatMeanSd(value?.meanHu, value?.sdHu)}
+      </td>
+      <NumberCell text={formatQuantity(value?.snr, 'ratio')} title={reason} />
+      <NumberCell
+        text={formatQuantity(ratio, 'ratio')}
+        title={contrast && [contrast.id, contrast.formula, why].filter(Boolean).join('. ')}
+      />
+    </>
+  );
+}
+
+function NumberCell({
+  text,
+  title,
+}: {
+  readonly text: string;
+  readonly title: string | undefined;
+}) {
+  return (
+    <td class={text === NO_VALUE ? 'none' : ''} title={title}>
+      {text}
+    </td>
+  );
+}

@@ -1,0 +1,78 @@
+import { NO_VALUE, visibleText } from '../../core/format/index.js';
+import type { NoteRegion } from '../../core/note/index.js';
+import type { RegionValue } from '../../core/region/index.js';
+import { RoleKey } from './parts/RoleSignView.js';
+import { FlagSign } from './parts/StateSign.js';
+import { flagTexts, readoutRows } from './readoutRows.js';
+
+export interface PairedReadoutProps {
+  /** The selected region; undefined when none is. Its values may be fresher than the note's, while it is dragged. */
+  readonly region: Pick<NoteRegion, 'label' | 'place' | 'role' | 'soft' | 'sharp'> | undefined;
+  /** Unit of the stacks' values: HU as a rule. */
+  readonly unit: string;
+}
+
+/** The selected region's numbers on both kernels, with the difference between them. */
+export function PairedReadout({ region, unit }: PairedReadoutProps) {
+  if (region === undefined) {
+    return (
+      <section class="readout">
+        <p class="empty">Mark a region, or select one in the reading note, to see its numbers.</p>
+      </section>
+    );
+  }
+  const { soft, sharp } = region;
+  const title = [region.label, region.place].filter((text) => text !== '').map(visibleText);
+  const flags = flagTexts(soft, sharp);
+  return (
+    <section class="readout" data-role={region.role}>
+      <h2>
+        <RoleKey role={region.role} />
+        <span>{title.join(' · ')}</span>
+      </h2>
+      <table>
+        <caption class="visually-hidden">Values on both kernels</caption>
+        <thead>
+          <tr>
+            <th scope="col">soft</th>
+            <th scope="col">sharp − soft</th>
+            <th scope="col">sharp</th>
+          </tr>
+        </thead>
+        <tbody>
+          {readoutRows(soft, sharp, unit).map((row) => (
+            <tr key={row.name} class={row.aid ? 'band' : undefined}>
+              <td class="soft" title={reason(row.soft, soft)}>
+                {row.soft}
+              </td>
+              <th scope="row">
+                {row.name}
+                {row.delta !== undefined && <span class="delta"> {row.delta}</span>}
+              </th>
+              <td class="sharp" title={reason(row.sharp, sharp)}>
+                {row.sharp}
+              </td>
+            </tr>
+          ))}
+        </tbody>
+      </table>
+      {flags.length > 0 && (
+        <ul class="flags">
+          {flags.map((text) => (
+            <li key={text}>
+              <FlagSign />
+              <span>{text}</span>
+            </li>
+          ))}
+        </ul>
+      )}
+    </section>
+  );
+}
+
+/** Why there is no value, for the title of an empty cell. */
+function reason(text: string, value: RegionValue | null): string | undefined {
+  if (text !== NO_VALUE) return undefined;
+  if (value === null) return 'This stack has no value here.';
+  return value.flags.map((flag) => flag.text).join(' ') || undefined;
+}

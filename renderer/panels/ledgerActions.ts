@@ -1,0 +1,17 @@
+import type { FindingFields, NoiseSource, NoteRegion } from '../../core/note/index.js';
+import type { Role } from '../../core/region/index.js';
+
+/** What can be changed in the ledger. The engine turns each into a named change of the note. */
+export interface LedgerActions {
+  readonly onSelect: (regionId: string) => void;
+  readonly onDelete: (regionId: string) => void;
+  readonly onRole: (regionId: string, role: Role) => void;
+  readonly onPlace: (regionId: string, place: string) => void;
+  readonly onQuote: (regionId: string, quote: NoteRegion['quote'], reason: string) => void;
+  /** Segment and kind move this region; size, assessability and reason hold for its whole finding. */
+  readonly onFinding: (regionId: string, fields: FindingFields) => void;
+  readonly onClearFinding: (regionId: string) => void;
+  readonly onNoise: (noise: NoiseSource) => void;
+  readonly onNewContrast: () => void;
+  readonly onDeleteContrast: (contrastId: string) => void;
+}
