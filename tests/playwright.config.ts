@@ -1,6 +1,6 @@
 import { defineConfig } from '@playwright/test';
 
-const BROWSER = process.env['DIPTYCH_BROWSER'] ?? '/usr/bin/chromium';
+const BROWSER = process.env.DIPTYCH_BROWSER ?? '/usr/bin/chromium';
 
 /** Browser tests: the real loopback shell and a real Chromium. */
 export default defineConfig({
@@ -9,7 +9,7 @@ export default defineConfig({
   outputDir: '../test-results/browser',
   workers: 1,
   timeout: 90_000,
-  reporter: [['list'], ['json']],
+  reporter: [['list'], ['json', { outputFile: '../test-results/playwright.json' }]],
   use: {
     viewport: { width: 1440, height: 900 },
     launchOptions: {

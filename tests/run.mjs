@@ -40,10 +40,7 @@ await suite(
 if (!quick) {
   await suite(
     'browser tests',
-    () =>
-      runPackage('@playwright/test/cli.js', ['test', '--config', 'tests/playwright.config.ts'], {
-        env: { ...process.env, PLAYWRIGHT_JSON_OUTPUT_NAME: join(results, 'playwright.json') },
-      }),
+    () => runPackage('@playwright/test/cli.js', ['test', '--config', 'tests/playwright.config.ts']),
     () => {
       const { stats } = readReport('playwright.json');
       return { passed: stats.expected, failed: stats.unexpected + stats.flaky };

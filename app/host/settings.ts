@@ -18,7 +18,7 @@ export const SettingsSchema = z.strictObject({
 /** What holds before the reader has set anything. */
 export const DEFAULT_SETTINGS: Settings = {
   cautionsAccepted: false,
-  theme: 'system',
+  theme: 'dark',
   letterKeys: true,
   reader: '',
 };

@@ -1,17 +1,9 @@
-import { firstPixelMm, type ImageGrid, pixelMm } from './imageGrid.js';
-import { detectorMm, type ParallelScan, type Sinogram, viewAngleRad } from './parallelScan.js';
+import type { ImageGrid } from './imageGrid.js';
+import type { ParallelScan, Sinogram } from './parallelScan.js';
+import { coversRow, type ViewWalk, viewWalk } from './viewWalk.js';
 
 /** Rows that are worked on together, so that they stay in the processor's cache over all views. */
 const BAND = 16;
-
-/** Where the pixels of a view lie in the filtered sinogram: corner + row·perRow + column·perColumn, in detectors. */
-interface Walk {
-  readonly corner: number;
-  readonly perColumn: number;
-  readonly perRow: number;
-  /** Index of the view's first detector. */
-  readonly base: number;
-}
 
 /**
  * Back projection of filtered views with linear interpolation between detectors, per mm: (π/views)·Σ q(t).
@@ -20,7 +12,7 @@ interface Walk {
 export function backProject(filtered: Sinogram, scan: ParallelScan, grid: ImageGrid): Float64Array {
   const { matrix } = grid;
   const last = scan.detectors - 1;
-  const walks = Array.from({ length: scan.views }, (_, view) => walkOf(view, scan, grid));
+  const walks = Array.from({ length: scan.views }, (_, view) => viewWalk(view, scan, grid));
   // Four views in one pass over a row: the pixels are read and written once for the four.
   const fours = Array.from({ length: Math.floor(walks.length / 4) }, (_, index) =>
     walks.slice(index * 4, index * 4 + 4),
@@ -30,7 +22,7 @@ export function backProject(filtered: Sinogram, scan: ParallelScan, grid: ImageG
   for (let top = 0; top < matrix; top += BAND) {
     const bottom = Math.min(matrix, top + BAND);
     for (const four of fours) {
-      const [a, b, c, d] = four as [Walk, Walk, Walk, Walk];
+      const [a, b, c, d] = four as [ViewWalk, ViewWalk, ViewWalk, ViewWalk];
       for (let row = top; row < bottom; row += 1) {
         if (four.every((walk) => coversRow(walk, row, last, matrix)))
           addFourViews(filtered, a, b, c, d, row, image, matrix);
@@ -44,38 +36,12 @@ export function backProject(filtered: Sinogram, scan: ParallelScan, grid: ImageG
   return image.map((sum) => sum * scale);
 }
 
-function walkOf(view: number, scan: ParallelScan, grid: ImageGrid): Walk {
-  const theta = viewAngleRad(scan, view);
-  const [x, y] = firstPixelMm(grid);
-  const step = pixelMm(grid) / scan.pitchMm;
-  const tMm = x * Math.cos(theta) + y * Math.sin(theta);
-  return {
-    corner: (tMm - detectorMm(scan, 0)) / scan.pitchMm,
-    perColumn: Math.cos(theta) * step,
-    perRow: Math.sin(theta) * step,
-    base: view * scan.detectors,
-  };
-}
-
-/** Whether every pixel of a row lies safely between the first and the last detector. */
-function coversRow(
-  { corner, perRow, perColumn }: Walk,
-  row: number,
-  last: number,
-  columns: number,
-): boolean {
-  const start = corner + row * perRow;
-  const end = start + (columns - 1) * perColumn;
-  // The margin is for what adding up the steps rounds.
-  return Math.min(start, end) > 1e-6 && Math.max(start, end) < last - 1e-6;
-}
-
 function addFourViews(
   q: Float64Array,
-  a: Walk,
-  b: Walk,
-  c: Walk,
-  d: Walk,
+  a: ViewWalk,
+  b: ViewWalk,
+  c: ViewWalk,
+  d: ViewWalk,
   row: number,
   image: Float64Array,
   columns: number,
@@ -119,7 +85,7 @@ function addFourViews(
 /** One view, with a test at each pixel: for rows that leave the detectors, and views that are left over. */
 function addView(
   q: Float64Array,
-  { base, corner, perColumn, perRow }: Walk,
+  { base, corner, perColumn, perRow }: ViewWalk,
   row: number,
   last: number,
   image: Float64Array,

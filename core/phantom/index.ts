@@ -1,4 +1,5 @@
 export * from './backProject.js';
+export * from './backProjectPair.js';
 export * from './demonstration/index.js';
 export * from './ellipse.js';
 export * from './expectedNoise.js';

@@ -1,4 +1,5 @@
 import { backProject } from './backProject.js';
+import { backProjectPair } from './backProjectPair.js';
 import { filterSinogram } from './filterSinogram.js';
 import type { ImageGrid } from './imageGrid.js';
 import type { Kernel } from './kernel.js';
@@ -12,7 +13,26 @@ export function reconstructHu(
   kernel: Kernel,
   grid: ImageGrid,
 ): Float64Array {
-  const image = backProject(filterSinogram(sinogram, scan, kernel), scan, grid);
+  return asHu(backProject(filterSinogram(sinogram, scan, kernel), scan, grid), scan);
+}
+
+/** The same for two kernels at once, which is quicker than one after the other. */
+export function reconstructPairHu(
+  sinogram: Sinogram,
+  scan: ParallelScan,
+  kernels: readonly [Kernel, Kernel],
+  grid: ImageGrid,
+): readonly [Float64Array, Float64Array] {
+  const [first, second] = backProjectPair(
+    filterSinogram(sinogram, scan, kernels[0]),
+    filterSinogram(sinogram, scan, kernels[1]),
+    scan,
+    grid,
+  );
+  return [asHu(first, scan), asHu(second, scan)];
+}
+
+function asHu(image: Float64Array, scan: ParallelScan): Float64Array {
   const scale = 1000 / scan.waterPerMm;
   return image.map((attenuation) => attenuation * scale + AIR_HU);
 }

@@ -10,7 +10,7 @@ export default defineConfig({
     target: 'node20',
     minify: false,
     rolldownOptions: {
-      input: { bench: 'tests/bench/bench.ts', evidence: 'tests/bench/evidence.ts' },
+      input: { bench: 'tests/bench/bench.ts' },
       output: { entryFileNames: '[name].js' },
     },
   },

@@ -74,9 +74,9 @@ describe.skipIf(!hasTools)('compressed frames (skipped without dcmtk, gdcm and p
       const difference = largestDifference(got.stored, expected.stored);
       expect(difference).toBeGreaterThan(0);
       expect(difference).toBeLessThanOrEqual(most);
-    const native = join(folder, `${name} native.dcm`);
-    execFileSync('/usr/bin/gdcmconv', ['-w', file, native], { stdio: 'ignore' });
-    expect(largestDifference(got.stored, (await decode(native)).stored)).toBeLessThanOrEqual(1);
+      const native = join(folder, `${name} native.dcm`);
+      execFileSync('/usr/bin/gdcmconv', ['-w', file, native], { stdio: 'ignore' });
+      expect(largestDifference(got.stored, (await decode(native)).stored)).toBeLessThanOrEqual(1);
     },
   );
 
@@ -92,9 +92,7 @@ describe.skipIf(!hasTools)('compressed frames (skipped without dcmtk, gdcm and p
   it('marks a lossy JPEG 2000 file of an archive', async () => {
     const got = await decode(`${DATA}/693_J2KI.dcm`);
     expect(got.image.acquisition.lossy).toBe(true);
-    expect(got.stored.reduce((least: number, value: number) => Math.min(least, value), 0)).toBe(
-      -2971,
-    );
+    expect(Array.from(got.stored).reduce((least, value) => Math.min(least, value), 0)).toBe(-2971);
   });
 
   it('finds a compressed image from the beginning of its file', () => {

@@ -1,7 +1,7 @@
 import { writeFile } from '../../dicom/write/index.js';
 import { projectSlice } from '../projectSlice.js';
 import { addQuantumNoise } from '../quantumNoise.js';
-import { reconstructHu } from '../reconstruct.js';
+import { reconstructPairHu } from '../reconstruct.js';
 import { seededUniform } from '../uniformSource.js';
 import {
   checkOptions,
@@ -37,13 +37,12 @@ export function makeSlice(
     PHOTONS_PER_RAY,
     seededUniform(options.seed, index),
   );
-  return SIDES.map((side) => {
-    const hu = reconstructHu(noisy, SCAN, KERNELS[side], grid);
-    return {
-      path: ids.fileOf(side, index),
-      bytes: writeFile(sliceElements(options, side, index, storedValues(hu))),
-    };
-  });
+  const [soft, sharp] = reconstructPairHu(noisy, SCAN, [KERNELS.soft, KERNELS.sharp], grid);
+  const images = { soft, sharp };
+  return SIDES.map((side) => ({
+    path: ids.fileOf(side, index),
+    bytes: writeFile(sliceElements(options, side, index, storedValues(images[side]))),
+  }));
 }
 
 /** HU as 16-bit unsigned stored values; what does not fit is set to the nearest that does. */

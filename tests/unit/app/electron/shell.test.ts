@@ -326,7 +326,7 @@ describe('the running shell', () => {
     const { host, menus, nativeTheme, request } = await opened();
     const { settings } = await host.services.settings.read();
     await host.services.settings.write({ ...settings, theme: 'dark', letterKeys: false });
-    expect(nativeTheme.themeSource).toBe('system');
+    expect(nativeTheme.themeSource).toBe('dark');
     await request('app://local/api/settings', { method: 'PUT' });
     await vi.waitFor(() => expect(nativeTheme.themeSource).toBe('dark'));
     await vi.waitFor(() => expect(menus).toHaveLength(2));

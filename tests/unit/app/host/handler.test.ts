@@ -57,7 +57,7 @@ test('a session tells version, folders, recent folders and settings', async () =
     version: JSON.parse(await readFile('package.json', 'utf8')).version,
     folders: [],
     recent: [],
-    settings: { cautionsAccepted: false, theme: 'system', letterKeys: true, reader: '' },
+    settings: { cautionsAccepted: false, theme: 'dark', letterKeys: true, reader: '' },
     openDemonstration: true,
     remarks: [],
   });

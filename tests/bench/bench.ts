@@ -1,0 +1,20 @@
+import { type Row, rowInWords } from './row.js';
+import { backProjection } from './rows/backProjection.js';
+import { folderIndex } from './rows/folderIndex.js';
+import { linkedScroll } from './rows/linkedScroll.js';
+import { regionStatistics } from './rows/regionStatistics.js';
+import { windowMapping } from './rows/windowMapping.js';
+
+const BENCHMARKS: readonly (() => Promise<Row | readonly Row[]>)[] = [
+  windowMapping,
+  regionStatistics,
+  backProjection,
+  folderIndex,
+  linkedScroll,
+];
+
+// One after the other: two at once would measure each other.
+for (const benchmark of BENCHMARKS) {
+  const rows = await benchmark();
+  for (const row of [rows].flat()) process.stdout.write(`${rowInWords(row)}\n`);
+}

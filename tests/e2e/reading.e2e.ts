@@ -1,0 +1,226 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { expect, type Page, test } from '@playwright/test';
+import { csvParse } from 'd3';
+import type { Note } from '../../core/note/index.js';
+import {
+  acceptCautions,
+  dragOn,
+  regionRow,
+  sharpPlate,
+  softPlate,
+  waitForPair,
+  waitForSaved,
+  watchPage,
+} from './support/bench.js';
+import { type RunningShell, startShell, temporaryHome } from './support/shell.js';
+
+/** The default start: no folder, so the demonstration study is made and opened. The tests go on from each other. */
+test.describe.configure({ mode: 'serial' });
+
+const home = temporaryHome();
+let shell: RunningShell;
+let page: Page;
+let complaints: readonly string[];
+
+test.beforeAll(async ({ browser }) => {
+  test.setTimeout(300_000);
+  shell = await startShell(home.path);
+  const context = await browser.newContext({ viewport: { width: 1440, height: 900 } });
+  page = await context.newPage();
+  complaints = watchPage(page).complaints;
+  await page.goto(shell.address);
+});
+
+test.afterAll(async () => {
+  await page.close();
+  await shell.stop();
+  home.remove();
+});
+
+test.afterEach(() => expect(complaints).toEqual([]));
+
+const sliceOf = async (plate: 'soft' | 'sharp'): Promise<number> => {
+  const label = await page.locator(`[data-plate=${plate}]`).getAttribute('aria-label');
+  return Number(/slice (\d+) of/.exec(label ?? '')?.[1]);
+};
+
+test('the first start shows the cautions, then the demonstration study as a pair', async () => {
+  test.setTimeout(300_000);
+  await acceptCautions(page);
+  await expect(softPlate(page)).toHaveAttribute('aria-label', /slice \d+ of 44/, {
+    timeout: 240_000,
+  });
+  await waitForPair(page);
+  await expect(page.locator('[data-panel=hinge]')).toContainText('One acquisition');
+  await expect(page.getByText('SYNTHETIC', { exact: true })).toHaveCount(3);
+  expect(await page.evaluate(() => self.crossOriginIsolated)).toBe(true);
+});
+
+test('the plates scroll as one, by wheel and by keyboard, and can be unlinked', async () => {
+  await softPlate(page).hover();
+  await page.mouse.wheel(0, 120);
+  await expect.poll(() => sliceOf('soft')).not.toBe(23);
+  const moved = await sliceOf('soft');
+  expect(await sliceOf('sharp')).toBe(moved);
+  await softPlate(page).focus();
+  await page.keyboard.press('Home');
+  await expect.poll(() => sliceOf('sharp')).toBe(1);
+  await page.keyboard.press('PageUp');
+  await expect.poll(() => sliceOf('sharp')).toBe(2);
+  await page
+    .getByRole('button', { name: 'Link scrolling' })
+    .or(page.getByRole('button', { name: 'scroll' }))
+    .first()
+    .click();
+  await softPlate(page).focus();
+  await page.keyboard.press('PageUp');
+  await expect.poll(() => sliceOf('soft')).toBe(3);
+  expect(await sliceOf('sharp')).toBe(2);
+  await page
+    .getByRole('button', { name: 'Link scrolling' })
+    .or(page.getByRole('button', { name: 'scroll' }))
+    .first()
+    .click();
+  await softPlate(page).focus();
+  for (let step = 0; step < 20; step++) await page.keyboard.press('PageUp');
+  await expect.poll(() => sliceOf('sharp')).toBe(23);
+});
+
+test('a lumen drawn by mouse is measured on both kernels', async () => {
+  await softPlate(page).focus();
+  await page.keyboard.press('e');
+  // The ascending aorta of the demonstration study, of which 370 HU is the truth.
+  await dragOn(page, softPlate(page), [0.36, 0.46], [0.43, 0.545]);
+  await expect(regionRow(page, 'L1')).toBeVisible();
+  await expect(page.locator('[data-panel=hinge]')).toContainText('Lumen 1');
+  const row = await regionRow(page, 'L1').innerText();
+  const means = [...row.matchAll(/(\d{3}\.\d) ± /g)].map((match) => Number(match[1]));
+  expect(means).toHaveLength(2);
+  for (const mean of means) expect(Math.abs(mean - 370)).toBeLessThan(3);
+  await waitForSaved(page);
+});
+
+test('a wall placed, moved and resized by keyboard alone joins it', async () => {
+  await page.getByRole('button', { name: 'wall', exact: false }).first().focus();
+  await page.keyboard.press('Enter');
+  await softPlate(page).focus();
+  await page.keyboard.press('Escape');
+  for (let step = 0; step < 8; step++) await page.keyboard.press('Shift+ArrowRight');
+  await page.keyboard.press('e');
+  await page.keyboard.press('Enter');
+  await expect(regionRow(page, 'W1')).toBeVisible();
+  const before = await regionRow(page, 'W1').innerText();
+  await page.keyboard.press('+');
+  await page.keyboard.press('ArrowDown');
+  await expect(regionRow(page, 'W1')).not.toHaveText(before);
+  await page.keyboard.press('Control+z');
+  await page.keyboard.press('Control+z');
+  await expect.poll(async () => regionRow(page, 'W1').innerText()).toBe(before);
+  await page.keyboard.press('Control+Shift+z');
+  await expect.poll(async () => regionRow(page, 'W1').innerText()).not.toBe(before);
+});
+
+test('a contrast gives CNR with its formula', async () => {
+  await softPlate(page).focus();
+  await page.keyboard.press('k');
+  const dialog = page.getByRole('dialog', { name: 'New contrast' });
+  await expect(dialog).toBeVisible();
+  await dialog.getByLabel('Lumen').selectOption('L1');
+  await dialog.getByLabel('Wall or tissue').selectOption('W1');
+  await dialog.getByLabel('Noise').selectOption('wall');
+  await expect(dialog).toContainText('CNR = (lumen − wall) / SD of wall');
+  await dialog.locator('button.primary').click();
+  await expect(dialog).toBeHidden();
+  await expect(page.locator('[data-panel=ledger]')).toContainText('SD of wall');
+});
+
+test('finding, segment and place are chosen in the ledger', async () => {
+  await regionRow(page, 'L1').click();
+  const ledger = page.locator('[data-panel=ledger]');
+  await ledger.getByLabel('Finding').selectOption('native lumen');
+  await ledger.getByLabel('Segment').selectOption('7');
+  await ledger.getByLabel('Place').fill('=proximal');
+  await ledger.getByLabel('Place').press('Enter');
+  await expect(ledger).toContainText('mid');
+  await waitForSaved(page);
+});
+
+interface Quantities {
+  readonly soft: readonly string[];
+  readonly sharp: readonly string[];
+}
+
+/** n, mean and SD of a region as printed in the hinge. */
+async function hingeNumbers(): Promise<Quantities> {
+  const rows = page.locator('[data-panel=hinge] .readout tbody tr');
+  const cell = async (name: RegExp, side: 'soft' | 'sharp') =>
+    (await rows.filter({ hasText: name }).first().locator(`td.${side}`).innerText()).trim();
+  const all = async (side: 'soft' | 'sharp') => [
+    await cell(/mean/, side),
+    await cell(/^[\d.\s]+SD/, side),
+  ];
+  return { soft: await all('soft'), sharp: await all('sharp') };
+}
+
+function savedNote(): Note {
+  const notes = join(home.path, 'data', 'notes');
+  const [folder] = readdirSync(notes);
+  return JSON.parse(readFileSync(join(notes, folder ?? '', 'note.json'), 'utf8')) as Note;
+}
+
+test('hinge, ledger, saved note and CSV say the same', async () => {
+  await regionRow(page, 'L1').click();
+  const hinge = await hingeNumbers();
+  const ledger = await regionRow(page, 'L1').innerText();
+  expect(ledger).toContain(`${hinge.soft[0]} ± ${hinge.soft[1]}`);
+  expect(ledger).toContain(`${hinge.sharp[0]} ± ${hinge.sharp[1]}`);
+
+  await expect.poll(() => savedNote().regions[0]?.place).toBe('=proximal');
+  const note = savedNote();
+  expect(note.synthetic).toBe(true);
+  const lumen = note.regions[0];
+  expect(lumen?.soft?.meanHu?.toFixed(1)).toBe(hinge.soft[0]);
+  expect(lumen?.sharp?.sdHu?.toFixed(1)).toBe(hinge.sharp[1]);
+
+  const download = page.waitForEvent('download');
+  await page.keyboard.press('Control+e');
+  const path = await (await download).path();
+  const lines = csvParse(readFileSync(path, 'utf8'));
+  const line = lines.find(
+    ({ id, kernel, quantity }) => id === 'L1' && kernel === 'soft' && quantity === 'mean',
+  );
+  expect(Number(line?.value)).toBe(lumen?.soft?.meanHu);
+  expect(line?.printed).toBe(hinge.soft[0]);
+  expect(line?.place).toBe("'=proximal");
+  const contrast = lines.find(({ item }) => item === 'contrast');
+  expect(contrast?.formula).toBe('CNR = (lumen − wall) / SD of wall');
+});
+
+test('a reload finds note, regions and numbers again', async () => {
+  const before = await regionRow(page, 'W1').innerText();
+  await page.goto('about:blank');
+  await page.goto(shell.address);
+  await waitForPair(page);
+  await expect(regionRow(page, 'L1')).toBeVisible();
+  await expect.poll(async () => regionRow(page, 'W1').innerText()).toBe(before);
+});
+
+test('deleting a region takes its contrast, and undo brings both back', async () => {
+  await regionRow(page, 'W1').click();
+  await softPlate(page).focus();
+  await page.keyboard.press('Delete');
+  await expect(regionRow(page, 'W1')).toHaveCount(0);
+  await expect(page.locator('[data-panel=ledger]')).not.toContainText('SD of wall');
+  await page.keyboard.press('Control+z');
+  await expect(regionRow(page, 'W1')).toBeVisible();
+  await expect(page.locator('[data-panel=ledger]')).toContainText('SD of wall');
+});
+
+test('the window is a picture worth showing, at two sizes', async () => {
+  await page.setViewportSize({ width: 1280, height: 720 });
+  await page.screenshot({ path: 'test-results/window-1280.png' });
+  await page.setViewportSize({ width: 1440, height: 900 });
+  await page.screenshot({ path: 'test-results/window-1440.png' });
+  await expect(sharpPlate(page)).toBeVisible();
+});
