@@ -39,7 +39,7 @@ async function scrollRow(folder: string, matrix: number): Promise<Row> {
       writeFileSync(join(study, `${number}-${slice}`), ctSlice({ ...options, z: slice }));
     }
   }
-  const shell = await startShell(join(folder, 'home'), study);
+  const shell = await startShell(join(folder, `home-${matrix}`), study);
   const browser = await chromium.launch({ executablePath: BROWSER, args: ['--no-sandbox'] });
   try {
     const page = await browser.newPage({ viewport: { width: 1440, height: 900 } });

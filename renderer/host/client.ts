@@ -1,0 +1,148 @@
+import { hc } from 'hono/client';
+import type {
+  FolderIndex,
+  FolderLevel,
+  OpenFolder,
+  Progress,
+  RecentFolder,
+  Session,
+  Settings,
+} from '../../app/host/contract.js';
+import type { HostApp } from '../../app/host/handler.js';
+import { type Note, parseNote } from '../../core/note/index.js';
+import { type Result, refuse, success } from '../../core/result.js';
+import { followJob } from './job.js';
+import { requestHeaders, send, sendForJson, type Transport } from './transport.js';
+
+/** A note as the host keeps it, and the tag that guards it against another window. */
+export interface KeptNote {
+  readonly note: Note;
+  readonly etag: string;
+}
+
+/** Where one file's bytes are; a worker fetches them itself, so that the page never holds them. */
+export interface FrameRequest {
+  readonly url: string;
+  readonly headers: Readonly<Record<string, string>>;
+}
+
+/** Everything the page asks of the host. Each call can be given up by its signal. */
+export interface HostClient {
+  session(signal: AbortSignal): Promise<Result<Session>>;
+  saveSettings(settings: Settings, signal: AbortSignal): Promise<Result<Settings>>;
+  /** Opens a folder that the host's own chooser listed, by the id that it gave. */
+  openFolder(levelId: string, signal: AbortSignal): Promise<Result<OpenFolder>>;
+  /** One level of the chooser; without an id, the level that the host thinks best to begin with. */
+  browse(levelId: string | undefined, signal: AbortSignal): Promise<Result<FolderLevel>>;
+  openRecent(id: string, signal: AbortSignal): Promise<Result<OpenFolder>>;
+  /** Takes one folder off the list of recent ones; gives the list that is left. */
+  forgetOne(id: string, signal: AbortSignal): Promise<Result<readonly RecentFolder[]>>;
+  /** Forgets all recent folders; gives the list that is left. */
+  forgetRecent(signal: AbortSignal): Promise<Result<readonly RecentFolder[]>>;
+  index(
+    grant: string,
+    onProgress: (progress: Progress) => void,
+    signal: AbortSignal,
+  ): Promise<Result<FolderIndex>>;
+  frame(grant: string, fileId: number): FrameRequest;
+  demonstration(
+    onProgress: (progress: Progress) => void,
+    signal: AbortSignal,
+  ): Promise<Result<OpenFolder>>;
+  /** Undefined when this reader has no note of the study yet. */
+  readNote(studyInstanceUid: string, signal: AbortSignal): Promise<Result<KeptNote | undefined>>;
+  /**
+   * Keeps a note. `etag` is the tag of the version that it was made from, undefined for a new note; when
+   * the host holds another version the refusal's code is 'conflict' and nothing is written.
+   */
+  writeNote(
+    studyInstanceUid: string,
+    note: Note,
+    etag: string | undefined,
+    signal: AbortSignal,
+  ): Promise<Result<string>>;
+  /** Holds a stream open for as long as the page lives; ends when the host is gone. */
+  presence(signal: AbortSignal): Promise<Result<undefined>>;
+}
+
+/** A part of an address. The typed client puts parts in as they are, and some of them come from files. */
+const encoded = encodeURIComponent;
+
+/** @param origin where the host answers: the page's own origin. */
+export function createClient(origin: string, transport: Transport): HostClient {
+  const { api } = hc<HostApp>(origin);
+  const folder = api.folders[':grant'];
+  const noteUrl = (studyInstanceUid: string): URL =>
+    api.notes[':studyInstanceUid'].$url({ param: { studyInstanceUid: encoded(studyInstanceUid) } });
+  // The typed client takes a last part named 'index' for the folder itself, so this one address is put together here.
+  const indexUrl = (grant: string): URL => new URL(`/api/folders/${encoded(grant)}/index`, origin);
+  return {
+    session: (signal) => sendForJson(transport, { method: 'GET', url: api.session.$url(), signal }),
+    saveSettings: (settings, signal) =>
+      sendForJson(transport, { method: 'PUT', url: api.settings.$url(), body: settings, signal }),
+    openFolder: (id, signal) =>
+      sendForJson(transport, { method: 'POST', url: api.folders.$url(), body: { id }, signal }),
+    browse: (id, signal) => {
+      const url = api.browse.$url();
+      if (id !== undefined) url.searchParams.set('at', id);
+      return sendForJson(transport, { method: 'GET', url, signal });
+    },
+    openRecent: (id, signal) =>
+      sendForJson(transport, {
+        method: 'POST',
+        url: api.recent[':id'].open.$url({ param: { id: encoded(id) } }),
+        signal,
+      }),
+    forgetOne: (id, signal) =>
+      sendForJson(transport, {
+        method: 'DELETE',
+        url: api.recent[':id'].$url({ param: { id: encoded(id) } }),
+        signal,
+      }),
+    forgetRecent: (signal) =>
+      sendForJson(transport, { method: 'DELETE', url: api.recent.$url(), signal }),
+    index: (grant, onProgress, signal) =>
+      followJob(transport, { method: 'GET', url: indexUrl(grant), signal }, onProgress),
+    frame: (grant, fileId) => ({
+      url: folder.frames[':fileId'].$url({
+        param: { grant: encoded(grant), fileId: String(fileId) },
+      }).href,
+      headers: requestHeaders(transport),
+    }),
+    demonstration: (onProgress, signal) =>
+      followJob(transport, { method: 'POST', url: api.demonstration.$url(), signal }, onProgress),
+    readNote: async (study, signal) => {
+      const answer = await send(transport, { method: 'GET', url: noteUrl(study), signal });
+      if (answer.ok) return keptNote(answer.value);
+      return answer.refusal.code === 'no-note' ? success(undefined) : answer;
+    },
+    writeNote: async (study, note, etag, signal) => {
+      const answer = await send(transport, {
+        method: 'PUT',
+        url: noteUrl(study),
+        body: note,
+        headers: etag === undefined ? { 'If-None-Match': '*' } : { 'If-Match': etag },
+        signal,
+      });
+      if (!answer.ok) return answer;
+      const tag = answer.value.headers.get('ETag');
+      return tag === null
+        ? refuse('no-etag', 'The note was saved, but without a tag; open it again before going on.')
+        : success(tag);
+    },
+    presence: async (signal) => {
+      const request = { method: 'GET', url: api.presence.$url(), signal } as const;
+      const answer = await followJob<undefined>(transport, request, () => {});
+      return answer.ok ? success(undefined) : answer;
+    },
+  };
+}
+
+async function keptNote(response: Response): Promise<Result<KeptNote>> {
+  const note = parseNote(await response.json());
+  if (!note.ok) return note;
+  const etag = response.headers.get('ETag');
+  return etag === null
+    ? refuse('no-etag', 'The saved note came without a tag, so it can’t be changed safely.')
+    : success({ note: note.value, etag });
+}

@@ -1,0 +1,38 @@
+import type { Kernel } from '../../core/note/index.js';
+import { plateScale, shownSlice, stackOf } from '../state/selectors.js';
+import type { Store } from '../state/store.js';
+import { orientationLetters } from './orientationLetters.js';
+import { PlateLegend } from './PlateLegend.js';
+import { positionText } from './positionText.js';
+import { scaleBar } from './scaleBar.js';
+
+/** The scale bar takes at most this much of a plate's width, and this many CSS pixels. */
+const BAR_SHARE = 0.22;
+const BAR_PX = 140;
+
+/** The words over a plate, from the state; none where there is no slice. */
+export function PlateLabels({ kernel, store }: { readonly kernel: Kernel; readonly store: Store }) {
+  const state = store.state.value;
+  const stack = stackOf(state, kernel);
+  const shown = shownSlice(state, kernel);
+  if (stack === undefined || shown === undefined) return null;
+  const { window, size } = state.plates[kernel];
+  const scale = plateScale(state, kernel);
+  const { image, alongMm } = shown.slice;
+  return (
+    <PlateLegend
+      kernel={kernel}
+      image={image}
+      window={window}
+      position={positionText(image.grid, alongMm)}
+      sliceIndex={shown.index}
+      slices={stack.slices.length}
+      letters={orientationLetters(image.grid)}
+      bar={
+        scale === undefined
+          ? undefined
+          : scaleBar(scale, Math.min(size.widthPx * BAR_SHARE, BAR_PX))
+      }
+    />
+  );
+}

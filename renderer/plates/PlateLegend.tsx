@@ -1,0 +1,71 @@
+import type { CtImage } from '../../core/dicom/index.js';
+import { formatFixed, formatQuantity, visibleText } from '../../core/format/index.js';
+import type { Kernel } from '../../core/note/index.js';
+import type { OrientationLetters } from './orientationLetters.js';
+import type { ScaleBar } from './scaleBar.js';
+
+export interface PlateLegendProps {
+  readonly kernel: Kernel;
+  /** The slice on the plate. */
+  readonly image: CtImage;
+  readonly window: { readonly centre: number; readonly width: number };
+  /** Position along the stack, with the letter of its axis where it is one of the patient's: 'z 10.0 mm'. */
+  readonly position: string;
+  /** From 0. */
+  readonly sliceIndex: number;
+  readonly slices: number;
+  readonly letters: OrientationLetters;
+  readonly bar: ScaleBar | undefined;
+}
+
+/** The words over a plate: what it is, its window, where it is, which way is which. Labels stand as the file has them. */
+export function PlateLegend(props: PlateLegendProps) {
+  const { image, letters, bar } = props;
+  return (
+    <div class="plate-legend" aria-hidden="true">
+      <div class="corner top-left">
+        <b>{props.kernel === 'soft' ? 'Soft' : 'Sharp'}</b>
+        {seriesText(image)}
+        <br />
+        {spacingText(image)}
+        {image.synthetic && (
+          <>
+            <br />
+            <span class="synthetic">SYNTHETIC</span>
+          </>
+        )}
+      </div>
+      <div class="corner top-right">
+        C {formatFixed(props.window.centre, 0)} W {formatFixed(props.window.width, 0)}
+      </div>
+      <div class="corner bottom-left">
+        {props.position} · slice {props.sliceIndex + 1} of {props.slices}
+      </div>
+      {bar !== undefined && (
+        <div class="corner bottom-right">
+          {bar.lengthMm < 1 ? formatFixed(bar.lengthMm, 2) : formatFixed(bar.lengthMm, 0)} mm
+          <span class="scale-bar" style={{ width: `${bar.lengthPx}px` }} />
+        </div>
+      )}
+      <span class="side left">{letters.left}</span>
+      <span class="side right">{letters.right}</span>
+      <span class="side top">{letters.top}</span>
+      <span class="side bottom">{letters.bottom}</span>
+    </div>
+  );
+}
+
+function seriesText({ acquisition }: CtImage): string {
+  const { seriesNumber, kernelLabel } = acquisition;
+  const series = seriesNumber === undefined ? '' : ` · series ${seriesNumber}`;
+  return kernelLabel === undefined ? series : `${series} · “${visibleText(kernelLabel)}”`;
+}
+
+/** '0.39 mm · 0.6 mm thick'; both spacings where they differ, between columns first, as on the plate. */
+function spacingText({ grid, acquisition }: CtImage): string {
+  const [rows, columns] = grid.pixelSpacingMm.map((mm) => formatQuantity(mm, 'lengthMm'));
+  const spacing = rows === columns ? columns : `${columns} × ${rows}`;
+  const { thicknessMm } = acquisition;
+  if (thicknessMm === undefined) return `${spacing} mm`;
+  return `${spacing} mm · ${String(Number(thicknessMm.toFixed(2)))} mm thick`;
+}

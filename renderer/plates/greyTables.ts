@@ -1,0 +1,38 @@
+import type { PixelEncoding, VoiWindow } from '../../core/dicom/index.js';
+import { displayTable } from '../../core/intensity/index.js';
+
+/** Tables in memory at once: both plates, and a few slices around whose rescale differs. */
+const KEPT = 6;
+
+const tables = new Map<string, Uint32Array>();
+
+/**
+ * Opaque grey pixels, as a canvas holds them, for every stored value & 0xffff. Red, green and blue are the same
+ * byte, so that the byte order of the machine does not matter but for alpha, which is the highest byte on every
+ * machine that runs a browser today.
+ */
+export function greyTable(pixels: PixelEncoding, window: VoiWindow): Uint32Array {
+  const key = JSON.stringify([pixels, window.centre, window.width, window.function]);
+  const known = tables.get(key);
+  if (known !== undefined) return known;
+  const levels = displayTable(pixels, window);
+  const greys = new Uint32Array(levels.length);
+  for (let index = 0; index < levels.length; index++) {
+    greys[index] = (0xff000000 | ((levels[index] ?? 0) * 0x010101)) >>> 0;
+  }
+  tables.set(key, greys);
+  const [oldest] = tables.keys();
+  if (tables.size > KEPT && oldest !== undefined) tables.delete(oldest);
+  return greys;
+}
+
+/** Writes the grey of every stored value of a slice into a canvas's pixels. Both have the same length. */
+export function mapGreys(
+  stored: Int16Array | Uint16Array,
+  table: Uint32Array,
+  target: Uint32Array,
+): void {
+  for (let index = 0; index < target.length; index++) {
+    target[index] = table[(stored[index] as number) & 0xffff] as number;
+  }
+}

@@ -1,0 +1,62 @@
+import type { Kernel } from '../../core/note/index.js';
+import type { AppState } from '../state/appState.js';
+import { shownSlice, stackOf, transformOf } from '../state/selectors.js';
+import type { StoredSlice } from '../volumes/volume.js';
+import type { ViewportContent } from './cornerstoneViewport.js';
+
+/** What a plate has to show: a slice, or words that say why there is none. */
+export type PlateContent =
+  | { readonly kind: 'slice'; readonly content: ViewportContent }
+  | { readonly kind: 'words'; readonly text: string };
+
+/** Puts together what a plate shows from the state and the slice's stored values. */
+export function plateContent(
+  state: AppState,
+  kernel: Kernel,
+  stored: (index: number) => StoredSlice | undefined,
+  devicePixelRatio: number,
+): PlateContent {
+  const stack = stackOf(state, kernel);
+  if (stack === undefined) return { kind: 'words', text: '' };
+  const shown = shownSlice(state, kernel);
+  if (shown === undefined) {
+    return { kind: 'words', text: 'No slice here. This stack has none at this position.' };
+  }
+  const gap = state.loading[kernel].gaps.get(shown.index);
+  if (gap !== undefined) return { kind: 'words', text: `No data for this slice. ${gap}` };
+  const values = stored(shown.index);
+  if (values === undefined) return { kind: 'words', text: 'Reading this slice…' };
+  const transform = transformOf(state, kernel);
+  if (transform === undefined) return { kind: 'words', text: '' };
+  return {
+    kind: 'slice',
+    content: {
+      id: shown.slice.image.sopInstanceUid,
+      stored: values,
+      pixels: shown.slice.image.pixels,
+      window: state.plates[kernel].window,
+      transform,
+      smooth: state.smooth,
+      devicePixelRatio,
+    },
+  };
+}
+
+/** True when both would give the same picture. */
+export function isSameContent(a: PlateContent, b: PlateContent): boolean {
+  if (a.kind === 'words' || b.kind === 'words') return a.kind === b.kind;
+  const [x, y] = [a.content, b.content];
+  return (
+    x.stored === y.stored &&
+    x.pixels === y.pixels &&
+    x.window === y.window &&
+    x.smooth === y.smooth &&
+    x.devicePixelRatio === y.devicePixelRatio &&
+    x.transform.grid === y.transform.grid &&
+    x.transform.size === y.transform.size &&
+    x.transform.pxPerColumn === y.transform.pxPerColumn &&
+    x.transform.pxPerRow === y.transform.pxPerRow &&
+    x.transform.centre.column === y.transform.centre.column &&
+    x.transform.centre.row === y.transform.centre.row
+  );
+}

@@ -1,0 +1,143 @@
+import type {
+  FolderIndex,
+  OpenFolder,
+  Progress,
+  RecentFolder,
+  Settings,
+} from '../../app/host/contract.js';
+import type { VoiWindow } from '../../core/dicom/index.js';
+import type { Vec3 } from '../../core/geometry/index.js';
+import type { Evidence, Kernel, Link, Note } from '../../core/note/index.js';
+import type { Role, Shape } from '../../core/region/index.js';
+import type { Stack } from '../../core/stack/index.js';
+import type { PlatePoint } from '../plates/platePoint.js';
+
+export type ToolId = 'window' | 'move' | 'zoom' | 'ellipse' | 'outline';
+
+export type DialogId =
+  | 'openFolder'
+  | 'contents'
+  | 'choosePair'
+  | 'settings'
+  | 'cautions'
+  | 'keys'
+  | 'numbers'
+  | 'newContrast';
+
+/** The two stacks on the plates; without a sharp one a single stack is read. */
+export interface PairState {
+  readonly soft: Stack;
+  readonly sharp: Stack | undefined;
+  readonly link: Link;
+  readonly evidence: readonly Evidence[];
+  /** 'order' was chosen by series order and waits for the reader's look. */
+  readonly chosenBy: 'order' | 'reader' | 'note';
+}
+
+export interface PlateSize {
+  readonly widthPx: number;
+  readonly heightPx: number;
+}
+
+/** What one plate shows. */
+export interface PlateState {
+  /** Position along the plate's stack, mm; the slice shown is the nearest one within half a spacing. */
+  readonly alongMm: number;
+  readonly window: VoiWindow;
+  /** The patient-space place in the middle of the plate. */
+  readonly centreMm: Vec3;
+  /** CSS pixels per mm; 'fit' shows the whole slice, whatever the size of the plate. */
+  readonly scalePxPerMm: number | 'fit';
+  /** Zero until the plate has been laid out. */
+  readonly size: PlateSize;
+}
+
+/** How far one stack has been read. */
+export interface LoadingState {
+  readonly done: number;
+  readonly total: number;
+  /** Slices that can't be shown, each with its sentence. */
+  readonly gaps: ReadonlyMap<number, string>;
+}
+
+/** A shape that is being drawn or dragged and is no part of the note yet. */
+export interface Draft {
+  readonly kernel: Kernel;
+  readonly role: Role;
+  readonly shape: Shape;
+  /** The region that is being changed; undefined for a new one. */
+  readonly regionId: string | undefined;
+}
+
+/** An outline whose points are still being set. */
+export interface OpenOutline {
+  readonly kernel: Kernel;
+  readonly role: Role;
+  readonly pointsMm: readonly Vec3[];
+}
+
+/** Where the pointer is over a plate, CSS pixels; kept so, because the image can move under it. */
+export interface Hover {
+  readonly kernel: Kernel;
+  readonly point: PlatePoint;
+}
+
+/** The crosshair that the arrow keys move. */
+export interface Caret {
+  readonly kernel: Kernel;
+  readonly pointMm: Vec3;
+}
+
+export interface HistoryEntry {
+  readonly label: string;
+  /** The note before the change: putting it back is the inverse. */
+  readonly note: Note;
+  /** Changes that follow each other with the same key count as one. */
+  readonly key: string | undefined;
+}
+
+export interface History {
+  readonly undo: readonly HistoryEntry[];
+  readonly redo: readonly HistoryEntry[];
+}
+
+export type SaveState =
+  | { readonly kind: 'none' }
+  | { readonly kind: 'saved'; readonly at: string }
+  | { readonly kind: 'saving' }
+  | { readonly kind: 'conflict'; readonly text: string }
+  | { readonly kind: 'failed'; readonly text: string };
+
+export interface Message {
+  readonly tone: 'plain' | 'warning';
+  readonly text: string;
+}
+
+/** Everything the page knows, as plain data. Pixels are in the volumes, beside it. */
+export interface AppState {
+  readonly version: string;
+  readonly settings: Settings;
+  readonly recent: readonly RecentFolder[];
+  readonly folder: OpenFolder | undefined;
+  readonly index: FolderIndex | undefined;
+  /** Long work of the host that is running. */
+  readonly job: Progress | undefined;
+  readonly pair: PairState | undefined;
+  readonly plates: { readonly [K in Kernel]: PlateState };
+  readonly active: Kernel;
+  readonly loading: { readonly [K in Kernel]: LoadingState };
+  readonly note: Note | undefined;
+  readonly history: History;
+  readonly save: SaveState;
+  readonly selected: string | undefined;
+  readonly draft: Draft | undefined;
+  readonly openOutline: OpenOutline | undefined;
+  readonly caret: Caret | undefined;
+  readonly hover: Hover | undefined;
+  readonly tool: ToolId;
+  readonly role: Role;
+  readonly links: { readonly scroll: boolean; readonly window: boolean; readonly view: boolean };
+  readonly smooth: boolean;
+  readonly dialog: DialogId | undefined;
+  readonly message: Message | undefined;
+}

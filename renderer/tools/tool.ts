@@ -1,0 +1,43 @@
+import type { Kernel } from '../../core/note/index.js';
+import type { Role, Shape } from '../../core/region/index.js';
+import type { PlatePoint } from '../plates/platePoint.js';
+import type { AppState } from '../state/appState.js';
+import type { Change } from '../state/store.js';
+
+/** Where the pointer is and what is held with it. */
+export interface ToolPointer {
+  readonly kernel: Kernel;
+  readonly point: PlatePoint;
+  readonly shift: boolean;
+  readonly alt: boolean;
+}
+
+/** What tools can do to the world: read the state and make named changes. */
+export interface ToolPort {
+  now(): AppState;
+  change(name: string, change: Change): void;
+  /** Measures a finished shape on both stacks and puts it into the note as a new region. */
+  placeRegion(role: Role, shape: Shape): void;
+  /** Measures a region's new shape and puts it into the note. Changes of one key in a row are undone as one. */
+  reshapeRegion(id: string, shape: Shape, key?: string): void;
+}
+
+/**
+ * A drag that is going on. It was made from a snapshot of the state, and each move is computed from that
+ * snapshot and the present pointer, so that rounding never adds up.
+ */
+export interface Gesture {
+  move(pointer: ToolPointer): void;
+  /** The pointer was released: what was shown becomes final. */
+  complete(pointer: ToolPointer): void;
+  /** Esc, or something came between: all is as it was before the pointer went down. */
+  cancel(): void;
+}
+
+/** A tool: what a press that becomes a drag does, and what a press that stays a click does. */
+export interface Tool {
+  readonly id: string;
+  /** Begins a drag at the place where the pointer went down; undefined when nothing can be dragged there. */
+  drag(port: ToolPort, start: ToolPointer): Gesture | undefined;
+  click(port: ToolPort, start: ToolPointer): void;
+}

@@ -1,0 +1,25 @@
+import type { AppState, ToolId } from '../state/appState.js';
+import { ellipseTool } from './ellipseTool.js';
+import { moveTool } from './moveTool.js';
+import { outlineTool } from './outlineTool.js';
+import { regionAt, selectTool } from './selectTool.js';
+import type { Tool, ToolPointer } from './tool.js';
+import { windowTool } from './windowTool.js';
+import { zoomTool } from './zoomTool.js';
+
+const TOOLS: Readonly<Record<ToolId, Tool>> = {
+  window: windowTool,
+  move: moveTool,
+  zoom: zoomTool,
+  ellipse: ellipseTool,
+  outline: outlineTool,
+};
+
+/** The tool that a press uses: a region that it takes hold of, else the chosen tool. */
+export function toolAt(state: AppState, pointer: ToolPointer): Tool {
+  // While points of an outline are being set, a press near another region still sets a point.
+  if (state.openOutline !== undefined) return TOOLS[state.tool];
+  const hit = regionAt(state, pointer);
+  const canChange = state.note?.verification !== 'VERIFIED';
+  return hit !== undefined && canChange ? selectTool(hit) : TOOLS[state.tool];
+}

@@ -1,0 +1,195 @@
+import { useState } from 'preact/hooks';
+import { COMMANDS } from '../../core/commands/index.js';
+import { addContrast, type ContrastParts } from '../../core/note/index.js';
+import { headerEvidence } from '../../core/pairing/index.js';
+import type { Stack } from '../../core/stack/index.js';
+import { Cautions } from '../dialogs/Cautions.js';
+import { ChoosePair, type PairChoice } from '../dialogs/ChoosePair.js';
+import { Contents } from '../dialogs/Contents.js';
+import { Keys } from '../dialogs/Keys.js';
+import { NewContrast } from '../dialogs/NewContrast.js';
+import { Numbers } from '../dialogs/Numbers.js';
+import { OpenFolder } from '../dialogs/OpenFolder.js';
+import { SettingsDialog } from '../dialogs/SettingsDialog.js';
+import { useEngine } from '../engine.js';
+import type { VerdictProps } from '../panels/Verdict.js';
+import { changeSettings } from '../services/start.js';
+import { editNote } from '../state/history.js';
+import { keyNames } from './keyNames.js';
+import { useSelected } from './useSelected.js';
+import { headerVerdict } from './verdict.js';
+
+/** The dialog that is open, if any. */
+export function DialogsView() {
+  const engine = useEngine();
+  const dialog = useSelected((state) => state.dialog);
+  const settings = useSelected((state) => state.settings);
+  // Before they are accepted the cautions stand before everything else; without a version nothing is known yet.
+  const mustAccept = useSelected(
+    (state) => state.version !== '' && !state.settings.cautionsAccepted,
+  );
+  const close = () =>
+    engine.store.change('Close dialog', (state) => ({ ...state, dialog: undefined }));
+  switch (mustAccept ? 'cautions' : dialog) {
+    case undefined:
+      return null;
+    case 'openFolder':
+      return <OpenFolderView />;
+    case 'contents':
+      return <ContentsView onClose={close} />;
+    case 'choosePair':
+      return <ChoosePairView onClose={close} />;
+    case 'newContrast':
+      return <NewContrastView onClose={close} />;
+    case 'settings':
+      return (
+        <SettingsDialog
+          settings={settings}
+          onChange={(change) => void changeSettings(engine, change)}
+          onClose={close}
+        />
+      );
+    case 'cautions':
+      return (
+        <Cautions
+          accepted={settings.cautionsAccepted}
+          onAccept={() => {
+            if (dialog === 'cautions') close();
+            void changeSettings(engine, { cautionsAccepted: true });
+          }}
+          onClose={close}
+        />
+      );
+    case 'keys':
+      return (
+        <Keys
+          commands={COMMANDS}
+          keyNames={keyNames()}
+          letterKeys={settings.letterKeys}
+          onClose={close}
+        />
+      );
+    case 'numbers':
+      return <Numbers onClose={close} />;
+  }
+}
+
+interface ClosableProps {
+  readonly onClose: () => void;
+}
+
+function OpenFolderView() {
+  const { folderDialog, bench } = useEngine();
+  const { level, problem } = folderDialog.state.value;
+  const recent = useSelected((state) => state.recent);
+  const progress = useSelected((state) => state.job);
+  return (
+    <OpenFolder
+      level={level}
+      recent={recent}
+      progress={progress}
+      problem={problem}
+      onEnter={folderDialog.enter}
+      onChoose={folderDialog.choose}
+      onRecent={(id) => {
+        void folderDialog.openRecent(id).then((folder) => folder && bench.openFolder(folder));
+      }}
+      onForget={folderDialog.forget}
+      onDemonstration={() => {
+        folderDialog.close();
+        void bench.openDemonstration();
+      }}
+      onCancel={bench.cancelJob}
+      onClose={folderDialog.close}
+    />
+  );
+}
+
+function ContentsView({ onClose }: ClosableProps) {
+  const { store } = useEngine();
+  const { index, folder, pair } = store.now();
+  if (index === undefined || folder === undefined) return null;
+  return (
+    <Contents
+      index={index}
+      folderName={folder.name}
+      softKey={pair?.soft.key}
+      sharpKey={pair?.sharp?.key}
+      onChoosePair={() =>
+        store.change('Open dialog', (state) => ({ ...state, dialog: 'choosePair' }))
+      }
+      onClose={onClose}
+    />
+  );
+}
+
+function ChoosePairView({ onClose }: ClosableProps) {
+  const { store, bench } = useEngine();
+  const { index, pair } = store.now();
+  const [choice, setChoice] = useState<PairChoice | undefined>(
+    pair && { softKey: pair.soft.key, sharpKey: pair.sharp?.key },
+  );
+  const stacks = index?.stacks ?? [];
+  const soft = stackByKey(stacks, choice?.softKey);
+  const sharp = stackByKey(stacks, choice?.sharpKey);
+  const preview = previewOf(soft, sharp);
+  return (
+    <ChoosePair
+      stacks={stacks}
+      choice={choice}
+      preview={preview}
+      allowed={preview?.verdict !== 'refused'}
+      onChange={setChoice}
+      onConfirm={() => {
+        onClose();
+        if (soft !== undefined) void bench.choosePair(soft, sharp);
+      }}
+      onClose={onClose}
+    />
+  );
+}
+
+function stackByKey(stacks: readonly Stack[], key: string | undefined): Stack | undefined {
+  return stacks.find((stack) => stack.key === key);
+}
+
+function previewOf(soft: Stack | undefined, sharp: Stack | undefined): VerdictProps | undefined {
+  if (soft === undefined) return undefined;
+  if (sharp === undefined) return { verdict: 'single', lines: [], evidence: [] };
+  const { evidence, refusal } = headerEvidence(soft, sharp);
+  return {
+    verdict: headerVerdict(evidence, refusal),
+    lines: refusal === undefined ? [] : [refusal],
+    evidence,
+  };
+}
+
+function NewContrastView({ onClose }: ClosableProps) {
+  const { store, now } = useEngine();
+  const [problem, setProblem] = useState<string>();
+  const { note, selected } = store.now();
+  if (note === undefined) return null;
+  const create = (parts: ContrastParts): void => {
+    const added = addContrast(note, parts, now());
+    if (!added.ok) {
+      setProblem(added.refusal.text);
+      return;
+    }
+    const { note: after } = added.value;
+    store.change(
+      'New contrast',
+      editNote('New contrast', () => after),
+    );
+    onClose();
+  };
+  return (
+    <NewContrast
+      regions={note.regions}
+      noise={note.noise}
+      selectedId={selected}
+      problem={problem}
+      onCreate={create}
+      onClose={onClose}
+    />
+  );
+}

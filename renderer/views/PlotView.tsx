@@ -1,0 +1,55 @@
+import { useMemo } from 'preact/hooks';
+import type { Kernel } from '../../core/note/index.js';
+import { regionValues, type Shape } from '../../core/region/index.js';
+import { useEngine } from '../engine.js';
+import { Histogram } from '../plots/Histogram.js';
+import type { Bench } from '../services/bench.js';
+import type { AppState } from '../state/appState.js';
+import { selectedRegion, sliceOf, takesMarks } from '../state/regionSelectors.js';
+import { stackOf } from '../state/selectors.js';
+import { useSelected } from './useSelected.js';
+
+const NONE = new Float64Array(0);
+
+/** The histogram of the selected region on both kernels; it stands still while a region is dragged. */
+export function PlotView() {
+  const { store, bench } = useEngine();
+  const region = useSelected(selectedRegion);
+  const pair = useSelected((state) => state.pair);
+  // Values can come with their slices, so the reading of slices is followed too.
+  const loading = useSelected((state) => state.loading);
+  const shape = region?.shape;
+  const values = useMemo(
+    () => ({
+      soft: valuesOn(store.now(), bench, 'soft', shape),
+      sharp: valuesOn(store.now(), bench, 'sharp', shape),
+    }),
+    [shape, pair, loading],
+  );
+  return (
+    <Histogram
+      label={region?.label}
+      soft={values.soft}
+      sharp={values.sharp}
+      meanSoft={region?.soft?.meanHu ?? null}
+      meanSharp={region?.sharp?.meanHu ?? null}
+      unit={pair?.soft.unit ?? 'HU'}
+    />
+  );
+}
+
+/** HU of the pixels in a shape on one stack; none where they can't be had. */
+function valuesOn(
+  state: AppState,
+  bench: Pick<Bench, 'stored'>,
+  kernel: Kernel,
+  shape: Shape | undefined,
+): Float64Array {
+  const stack = stackOf(state, kernel);
+  if (shape === undefined || stack === undefined || stack.unit !== 'HU') return NONE;
+  const index = takesMarks(state, kernel) ? sliceOf(shape, stack) : undefined;
+  const slice = index === undefined ? undefined : stack.slices[index];
+  const stored = index === undefined ? undefined : bench.stored(kernel, index);
+  if (slice === undefined || stored === undefined) return NONE;
+  return regionValues(shape, slice, stored).values;
+}

@@ -1,0 +1,79 @@
+import {
+  changeRegion,
+  clearFinding,
+  type Note,
+  removeContrast,
+  setFinding,
+  setNoise,
+} from '../../core/note/index.js';
+import type { Result } from '../../core/result.js';
+import type { Engine } from '../engine.js';
+import type { LedgerActions } from '../panels/ledgerActions.js';
+import { goToRegion } from '../state/changes/goToRegion.js';
+import { removeSelected, selectRegion } from '../state/changes/regions.js';
+import { editNote, withSelection } from '../state/history.js';
+
+/** The ledger's actions as named changes of the note, each of which can be undone. */
+export function createLedgerActions({ store, run, now }: Engine): LedgerActions {
+  const warn = (text: string): void =>
+    store.change('Warn', (state) => ({ ...state, message: { tone: 'warning', text } }));
+
+  /** Makes an edit that can be refused; the refusal is told and nothing changes. */
+  const edit = (label: string, change: (note: Note) => Result<Note>): Note | undefined => {
+    const { note } = store.now();
+    if (note === undefined) return undefined;
+    const changed = change(note);
+    if (!changed.ok) {
+      warn(changed.refusal.text);
+      return undefined;
+    }
+    store.change(label, (state) => withSelection(editNote(label, () => changed.value)(state)));
+    return changed.value;
+  };
+  const plain = (label: string, change: (note: Note) => Note): void => {
+    edit(label, (note) => ({ ok: true, value: change(note) }));
+  };
+  const region = (label: string, id: string, change: Parameters<typeof changeRegion>[2]): void => {
+    edit(label, (note) => {
+      const changed = changeRegion(note, id, change, now());
+      return changed.ok ? { ok: true, value: changed.value.note } : changed;
+    });
+  };
+
+  return {
+    onSelect: (id) => {
+      store.change('Select region', selectRegion(id));
+      store.change('Go to region', goToRegion);
+    },
+    onDelete: (id) => {
+      store.change('Select region', selectRegion(id));
+      store.change('Delete region', removeSelected(now()));
+    },
+    onRole: (id, role) => {
+      const { note } = store.now();
+      const changed = note === undefined ? undefined : changeRegion(note, id, { role }, now());
+      if (changed === undefined) return;
+      if (!changed.ok) return warn(changed.refusal.text);
+      const { note: after, region: renamed, removedContrasts } = changed.value;
+      store.change('Change role', (state) => ({
+        ...editNote('Change role', () => after)(state),
+        selected: renamed.id,
+      }));
+      if (removedContrasts.length > 0) {
+        const ids = removedContrasts.map((contrast) => contrast.id).join(', ');
+        warn(
+          `The region is now ${renamed.label}. Contrast ${ids} used its old role and is gone; undo brings it back.`,
+        );
+      }
+    },
+    onPlace: (id, place) => region('Change place', id, { place }),
+    onQuote: (id, quote, quoteReason) => region('Change quote', id, { quote, quoteReason }),
+    onFinding: (id, fields) => {
+      edit('Change finding', (note) => setFinding(note, id, fields, now()));
+    },
+    onClearFinding: (id) => plain('Clear finding', (note) => clearFinding(note, id, now())),
+    onNoise: (noise) => plain('Change noise', (note) => setNoise(note, noise, now())),
+    onNewContrast: () => run('contrast.new'),
+    onDeleteContrast: (id) => plain('Delete contrast', (note) => removeContrast(note, id, now())),
+  };
+}
