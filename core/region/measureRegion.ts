@@ -6,7 +6,7 @@ import { shapeArea } from './area.js';
 import { moveShape } from './change.js';
 import { findSlice } from './findSlice.js';
 import { FLAGS } from './flags.js';
-import { pixelsInside } from './pixelsInside.js';
+import { visitPixels } from './pixelsInside.js';
 import type { Shape } from './shape.js';
 import { statistics } from './statistics.js';
 import type { Flag, RegionValue } from './value.js';
@@ -40,14 +40,14 @@ export function regionValues(
   stored: StoredValues,
 ): { values: Float64Array; padding: number; overBorder: boolean } {
   const { grid, pixels } = slice.image;
-  const { indices, overBorder } = pixelsInside(shape, grid);
-  const values = new Float64Array(indices.length);
-  let n = 0;
-  for (const index of indices) {
+  const values: number[] = [];
+  let padding = 0;
+  const overBorder = visitPixels(shape, grid, (index) => {
     const value = stored[index] ?? 0;
-    if (!isPadding(value, pixels)) values[n++] = rescaled(value, pixels);
-  }
-  return { values: values.subarray(0, n), padding: indices.length - n, overBorder };
+    if (isPadding(value, pixels)) padding++;
+    else values.push(rescaled(value, pixels));
+  });
+  return { values: Float64Array.from(values), padding, overBorder };
 }
 
 function measureOnSlice(
@@ -95,11 +95,29 @@ function placement(
 ): number | null {
   let farthest = 0;
   for (const move of halfPixelMoves(slice.image.grid)) {
-    const moved = statistics(regionValues(moveShape(shape, move), slice, stored).values);
-    if (moved.mean === undefined) return null;
-    farthest = Math.max(farthest, Math.abs(moved.mean - mean));
+    const moved = meanInside(moveShape(shape, move), slice, stored, mean);
+    if (moved === undefined) return null;
+    farthest = Math.max(farthest, Math.abs(moved - mean));
   }
   return farthest;
+}
+
+/** Mean alone, summed about a value near it so that no digits are lost. */
+function meanInside(
+  shape: Shape,
+  { image: { grid, pixels } }: StackSlice,
+  stored: StoredValues,
+  near: number,
+): number | undefined {
+  let sum = 0;
+  let n = 0;
+  visitPixels(shape, grid, (index) => {
+    const value = stored[index] ?? 0;
+    if (isPadding(value, pixels)) return;
+    sum += rescaled(value, pixels) - near;
+    n++;
+  });
+  return n === 0 ? undefined : near + sum / n;
 }
 
 function halfPixelMoves({ rowDirection, columnDirection, pixelSpacingMm }: SliceGrid) {

@@ -1,12 +1,7 @@
-import {
-  type PixelPoint,
-  patientToPixel,
-  pixelToPatient,
-  type SliceGrid,
-} from '../geometry/index.js';
+import { dot, type PixelPoint, patientToPixel, type SliceGrid } from '../geometry/index.js';
 import type { Ellipse, Outline, Shape } from './shape.js';
 
-/** Pixel centres on the edge belong to the region; this much rounding is forgiven, relative to the radius or mm. */
+/** Pixel centres on the edge belong to the region; this much rounding is forgiven, relative to the radius or pixels. */
 const EDGE = 1e-9;
 
 /** Pixels of a slice whose centres lie in a shape, edge included. */
@@ -19,51 +14,117 @@ export interface PixelsInside {
 
 /** Which pixels of a slice a shape holds. The shape is projected on the slice along its normal. */
 export function pixelsInside(shape: Shape, grid: SliceGrid): PixelsInside {
-  return shape.kind === 'ellipse' ? insideEllipse(shape, grid) : insideOutline(shape, grid);
+  const indices: number[] = [];
+  const overBorder = visitPixels(shape, grid, (index) => indices.push(index));
+  return { indices: Int32Array.from(indices), overBorder };
 }
 
-function insideEllipse(shape: Ellipse, grid: SliceGrid): PixelsInside {
-  const u = shape.u ?? grid.rowDirection;
-  const v = shape.v ?? grid.columnDirection;
+/**
+ * Calls back with the index of each pixel that a shape holds, ascending, and makes nothing on the way.
+ *
+ * @returns whether the shape reaches over the border of the image
+ */
+export function visitPixels(
+  shape: Shape,
+  grid: SliceGrid,
+  visit: (index: number) => void,
+): boolean {
+  return shape.kind === 'ellipse'
+    ? visitEllipse(shape, grid, visit)
+    : visitOutline(shape, grid, visit);
+}
+
+function visitEllipse(shape: Ellipse, grid: SliceGrid, visit: (index: number) => void): boolean {
+  const { rowDirection, columnDirection, pixelSpacingMm, columns } = grid;
   const [a, b] = shape.radiiMm;
-  const centre = shape.centreMm;
+  const u = shape.u ?? rowDirection;
+  const v = shape.v ?? columnDirection;
+  const middle = patientToPixel(grid, shape.centreMm);
+  // A step of one column or row, in units of the half axes.
+  const uColumn = (dot(rowDirection, u) * pixelSpacingMm[1]) / a;
+  const uRow = (dot(columnDirection, u) * pixelSpacingMm[0]) / a;
+  const vColumn = (dot(rowDirection, v) * pixelSpacingMm[1]) / b;
+  const vRow = (dot(columnDirection, v) * pixelSpacingMm[0]) / b;
   // Half extent of the ellipse along a direction d is √((a u·d)² + (b v·d)²).
-  const reach = (d: readonly number[]): number =>
-    Math.hypot(
-      a * (u[0] * (d[0] ?? 0) + u[1] * (d[1] ?? 0) + u[2] * (d[2] ?? 0)),
-      b * (v[0] * (d[0] ?? 0) + v[1] * (d[1] ?? 0) + v[2] * (d[2] ?? 0)),
-    );
-  const middle = patientToPixel(grid, centre);
+  const halfColumns =
+    Math.hypot(a * dot(u, rowDirection), b * dot(v, rowDirection)) / pixelSpacingMm[1];
+  const halfRows =
+    Math.hypot(a * dot(u, columnDirection), b * dot(v, columnDirection)) / pixelSpacingMm[0];
   const box = clip(
     grid,
-    middle.column - reach(grid.rowDirection) / grid.pixelSpacingMm[1],
-    middle.column + reach(grid.rowDirection) / grid.pixelSpacingMm[1],
-    middle.row - reach(grid.columnDirection) / grid.pixelSpacingMm[0],
-    middle.row + reach(grid.columnDirection) / grid.pixelSpacingMm[0],
+    middle.column - halfColumns,
+    middle.column + halfColumns,
+    middle.row - halfRows,
+    middle.row + halfRows,
   );
-  return collect(grid, box, (point) => {
-    const p = pixelToPatient(grid, point);
-    const x = p[0] - centre[0];
-    const y = p[1] - centre[1];
-    const z = p[2] - centre[2];
-    const alongU = (x * u[0] + y * u[1] + z * u[2]) / a;
-    const alongV = (x * v[0] + y * v[1] + z * v[2]) / b;
-    return alongU * alongU + alongV * alongV <= 1 + EDGE;
-  });
+  for (let row = box.top; row <= box.bottom; row++) {
+    const down = row - middle.row;
+    for (let column = box.left; column <= box.right; column++) {
+      const across = column - middle.column;
+      const alongU = across * uColumn + down * uRow;
+      const alongV = across * vColumn + down * vRow;
+      if (alongU * alongU + alongV * alongV <= 1 + EDGE) visit(row * columns + column);
+    }
+  }
+  return box.overBorder;
 }
 
-function insideOutline(shape: Outline, grid: SliceGrid): PixelsInside {
+/**
+ * Polygon by rows, even-odd: pixels between each pair of crossings, and those on an edge. An outline that crosses
+ * itself counts its overlaps as holes, as the even-odd rule does.
+ */
+function visitOutline(shape: Outline, grid: SliceGrid, visit: (index: number) => void): boolean {
   const corners = shape.pointsMm.map((point) => patientToPixel(grid, point));
-  const columns = corners.map((corner) => corner.column);
-  const rows = corners.map((corner) => corner.row);
-  const box = clip(
-    grid,
-    Math.min(...columns),
-    Math.max(...columns),
-    Math.min(...rows),
-    Math.max(...rows),
-  );
-  return collect(grid, box, (point) => insidePolygon(point, corners));
+  let [left, right, top, bottom] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (const { column, row } of corners) {
+    left = Math.min(left, column);
+    right = Math.max(right, column);
+    top = Math.min(top, row);
+    bottom = Math.max(bottom, row);
+  }
+  const box = clip(grid, left, right, top, bottom);
+  const inside = new Uint8Array(Math.max(0, box.right - box.left + 1));
+  for (let row = box.top; row <= box.bottom; row++) {
+    inside.fill(0);
+    fillRow(corners, row, (from, to) => {
+      const first = Math.max(box.left, Math.ceil(from - EDGE));
+      const last = Math.min(box.right, Math.floor(to + EDGE));
+      for (let column = first; column <= last; column++) inside[column - box.left] = 1;
+    });
+    for (let at = 0; at < inside.length; at++) {
+      if (inside[at] === 1) visit(row * grid.columns + box.left + at);
+    }
+  }
+  return box.overBorder;
+}
+
+/** Calls back with each stretch of a row that a polygon covers, its edges as stretches of their own. */
+function fillRow(
+  corners: readonly PixelPoint[],
+  row: number,
+  fill: (from: number, to: number) => void,
+): void {
+  const crossings: number[] = [];
+  for (let i = 0, j = corners.length - 1; i < corners.length; j = i++) {
+    const a = corners[i];
+    const b = corners[j];
+    if (a === undefined || b === undefined) continue;
+    const low = Math.min(a.row, b.row);
+    const high = Math.max(a.row, b.row);
+    if (row < low - EDGE || row > high + EDGE) continue;
+    if (high - low < EDGE) {
+      fill(Math.min(a.column, b.column), Math.max(a.column, b.column));
+      continue;
+    }
+    const part = Math.min(1, Math.max(0, (row - a.row) / (b.row - a.row)));
+    const column = a.column + part * (b.column - a.column);
+    fill(column, column);
+    if (a.row > row !== b.row > row) crossings.push(column);
+  }
+  crossings.sort((x, y) => x - y);
+  for (let i = 0; i + 1 < crossings.length; i += 2) {
+    fill(crossings[i] ?? 0, crossings[i + 1] ?? 0);
+  }
 }
 
 interface Box {
@@ -83,58 +144,11 @@ function clip(
   bottom: number,
 ): Box {
   const slack = 1e-6;
-  const whole = {
-    left: Math.ceil(left - slack),
-    right: Math.floor(right + slack),
-    top: Math.ceil(top - slack),
-    bottom: Math.floor(bottom + slack),
-  };
   return {
-    left: Math.max(0, whole.left),
-    right: Math.min(columns - 1, whole.right),
-    top: Math.max(0, whole.top),
-    bottom: Math.min(rows - 1, whole.bottom),
+    left: Math.max(0, Math.ceil(left - slack)),
+    right: Math.min(columns - 1, Math.floor(right + slack)),
+    top: Math.max(0, Math.ceil(top - slack)),
+    bottom: Math.min(rows - 1, Math.floor(bottom + slack)),
     overBorder: left < -0.5 || right > columns - 0.5 || top < -0.5 || bottom > rows - 0.5,
   };
-}
-
-function collect(grid: SliceGrid, box: Box, inside: (point: PixelPoint) => boolean): PixelsInside {
-  const indices: number[] = [];
-  for (let row = box.top; row <= box.bottom; row++) {
-    for (let column = box.left; column <= box.right; column++) {
-      if (inside({ column, row })) indices.push(row * grid.columns + column);
-    }
-  }
-  return { indices: Int32Array.from(indices), overBorder: box.overBorder };
-}
-
-/**
- * Point in polygon by crossings, even-odd, edge included. A self-crossing outline counts its overlaps as holes,
- * as the even-odd rule does.
- */
-export function insidePolygon(point: PixelPoint, corners: readonly PixelPoint[]): boolean {
-  let inside = false;
-  for (let i = 0, j = corners.length - 1; i < corners.length; j = i++) {
-    const a = corners[i];
-    const b = corners[j];
-    if (a === undefined || b === undefined) continue;
-    if (onEdge(point, a, b)) return true;
-    if (a.row > point.row !== b.row > point.row) {
-      const at = ((b.column - a.column) * (point.row - a.row)) / (b.row - a.row) + a.column;
-      if (point.column < at) inside = !inside;
-    }
-  }
-  return inside;
-}
-
-function onEdge(point: PixelPoint, a: PixelPoint, b: PixelPoint): boolean {
-  const dx = b.column - a.column;
-  const dy = b.row - a.row;
-  const lengthSquared = dx * dx + dy * dy;
-  const x = point.column - a.column;
-  const y = point.row - a.row;
-  if (lengthSquared === 0) return Math.hypot(x, y) < EDGE;
-  const along = (x * dx + y * dy) / lengthSquared;
-  if (along < -EDGE || along > 1 + EDGE) return false;
-  return Math.abs(x * dy - y * dx) <= EDGE * Math.max(1, Math.sqrt(lengthSquared));
 }

@@ -5,7 +5,6 @@ import {
   contrastValue,
   findSlice,
   growShape,
-  insidePolygon,
   measureRegion,
   moveShape,
   pixelsInside,
@@ -36,9 +35,10 @@ async function stackOf(slices: readonly CtSliceOptions[]): Promise<{
 
 const gridOf = (stack: Stack): CtImage['grid'] => stack.slices[0].image.grid;
 
-describe('pixelsInside', async () => {
-  const { stack } = await stackOf([{ z: 0 }]);
+const { stack } = await stackOf([{ z: 0 }]);
+const { stack: gapped } = await stackOf([{ z: 0 }, { z: 1 }, { z: 2 }, { z: 6 }]);
 
+describe('pixelsInside', () => {
   it('takes pixel centres on the edge of an ellipse', () => {
     const shape: Shape = { kind: 'ellipse', centreMm: [-9.5, -19.5, 0], radiiMm: [0.25, 0.5] };
     // Centre is column 2, row 1; the radii are one column and one row: the cross of five pixels.
@@ -77,20 +77,38 @@ describe('pixelsInside', async () => {
     });
   });
 
-  it('is even-odd for an outline that crosses itself', async () => {
-    const bow = [
-      { column: 0, row: 0 },
-      { column: 4, row: 4 },
-      { column: 4, row: 0 },
-      { column: 0, row: 4 },
-    ];
-    expect(insidePolygon({ column: 1, row: 2 }, bow)).toBe(true);
-    expect(insidePolygon({ column: 2, row: 1 }, bow)).toBe(false);
+  it('is even-odd for an outline that crosses itself', () => {
+    // A bow tie over columns 0 to 4 and rows 0 to 4 of a grid of 0.25 mm by 0.5 mm.
+    const bow: Shape = {
+      kind: 'outline',
+      pointsMm: [
+        [-10, -20, 0],
+        [-9, -18, 0],
+        [-9, -20, 0],
+        [-10, -18, 0],
+      ],
+    };
+    const grid = { ...gridOf(stack), rows: 5, columns: 5 };
+    expect([...pixelsInside(bow, grid).indices]).toEqual([
+      0, 4, 5, 6, 8, 9, 10, 11, 12, 13, 14, 15, 16, 18, 19, 20, 24,
+    ]);
+  });
+
+  it('takes the topmost and lowest corner of an outline', () => {
+    const diamond: Shape = {
+      kind: 'outline',
+      pointsMm: [
+        [-9.5, -20, 0],
+        [-9.25, -19.5, 0],
+        [-9.5, -19, 0],
+        [-9.75, -19.5, 0],
+      ],
+    };
+    expect([...pixelsInside(diamond, gridOf(stack)).indices]).toEqual([2, 6, 7, 8, 12]);
   });
 });
 
-describe('findSlice', async () => {
-  const { stack } = await stackOf([{ z: 0 }, { z: 1 }, { z: 2 }, { z: 6 }]);
+describe('findSlice', () => {
   const at = (z: number): Shape => ({
     kind: 'ellipse',
     centreMm: [-9.5, -19.5, z],
@@ -98,13 +116,13 @@ describe('findSlice', async () => {
   });
 
   it('takes the nearest slice within half the spacing and gives the offset', () => {
-    const found = findSlice(at(1.3), stack);
+    const found = findSlice(at(1.3), gapped);
     expect(found.ok && found.value.sliceIndex).toBe(1);
     expect(found.ok && found.value.offsetMm).toBeCloseTo(-0.3, 12);
   });
 
   it('takes the first of two equally near slices, half the spacing away', () => {
-    expect(findSlice(at(0.5), stack)).toEqual({
+    expect(findSlice(at(0.5), gapped)).toEqual({
       ok: true,
       value: { sliceIndex: 0, offsetMm: -0.5 },
     });
@@ -112,7 +130,7 @@ describe('findSlice', async () => {
 
   it('refuses a place in a gap, and beyond the ends', () => {
     for (const z of [4, -0.6, 6.6]) {
-      expect(findSlice(at(z), stack)).toMatchObject({
+      expect(findSlice(at(z), gapped)).toMatchObject({
         ok: false,
         refusal: { code: 'no-slice-here' },
       });
@@ -127,7 +145,7 @@ describe('findSlice', async () => {
       v: [0, 0.8, 0.6],
       radiiMm: [1, 1],
     };
-    expect(findSlice(leaning, stack)).toMatchObject({
+    expect(findSlice(leaning, gapped)).toMatchObject({
       ok: false,
       refusal: { code: 'not-parallel' },
     });
