@@ -82,7 +82,7 @@ function addFourViews(
   }
 }
 
-/** One view, with a test at each pixel: for rows that leave the detectors, and views that are left over. */
+/** One view, over the pixels of a row that lie between its detectors: for rows that leave them, and views left over. */
 function addView(
   q: Float64Array,
   { base, corner, perColumn, perRow }: ViewWalk,
@@ -92,13 +92,34 @@ function addView(
   columns: number,
 ): void {
   const start = corner + row * perRow;
-  for (let column = 0; column < columns; column += 1) {
+  const [first, end] = columnsWithin(start, perColumn, last, columns);
+  for (let column = first; column < end; column += 1) {
     const at = start + column * perColumn;
-    if (at < 0 || at >= last) continue;
-    const left = Math.floor(at);
+    const left = at | 0;
     const value = q[base + left] as number;
     const next = q[base + left + 1] as number;
     const pixel = row * columns + column;
     image[pixel] = (image[pixel] as number) + value + (at - left) * (next - value);
   }
+}
+
+/** The columns, from the first to before the second, for which 0 ≤ start + column·step < last. */
+function columnsWithin(
+  start: number,
+  step: number,
+  last: number,
+  columns: number,
+): readonly [number, number] {
+  const isWithin = (column: number): boolean => {
+    const at = start + column * step;
+    return at >= 0 && at < last;
+  };
+  const [low, high] = step > 0 ? [0, last] : [last, 0];
+  const flat = Math.abs(step) < 1e-12;
+  let first = flat ? 0 : Math.min(columns, Math.max(0, Math.floor((low - start) / step)));
+  let end = flat ? columns : Math.max(0, Math.min(columns, Math.ceil((high - start) / step) + 1));
+  // The divisions round: the ends are walked to the columns that really lie within.
+  while (first < end && !isWithin(first)) first += 1;
+  while (end > first && !isWithin(end - 1)) end -= 1;
+  return [first, end];
 }

@@ -1,7 +1,7 @@
 import type { Command } from '../../core/commands/index.js';
 import type { IdentityText } from './identityText.js';
 import { commandKeyText, type KeyNames } from './parts/keyText.js';
-import { MenuButton } from './parts/MenuButton.js';
+import { MenuButton, type MenuItem } from './parts/MenuButton.js';
 
 /** What the header says of the note: what happened last, and the note's two states. */
 export interface SaveState {
@@ -20,12 +20,18 @@ export interface HeaderProps {
   readonly synthetic: boolean;
   readonly save: SaveState;
   readonly canPair: boolean;
+  /** Files of the folder that are in no stack; undefined while no folder was read. */
+  readonly leftOut: number | undefined;
   readonly exports: readonly Command[];
   readonly canExport: boolean;
+  /** All other commands of the bench, as a system's menu would hold them. */
+  readonly more: readonly MenuItem[];
   readonly keyNames: KeyNames;
   readonly onOpenFolder: () => void;
   readonly onChoosePair: () => void;
-  readonly onExport: (commandId: string) => void;
+  /** A command of the export menu or of the menu of all others. */
+  readonly onCommand: (commandId: string) => void;
+  readonly onContents: () => void;
   readonly onSave: () => void;
   readonly onCautions: () => void;
 }
@@ -61,6 +67,16 @@ export function Header(props: HeaderProps) {
         <button type="button" class="button" onClick={props.onOpenFolder}>
           Open folder…
         </button>
+        {props.leftOut !== undefined && props.leftOut > 0 && (
+          <button
+            type="button"
+            class="button left-out"
+            title="What the folder holds, and why files were left out"
+            onClick={props.onContents}
+          >
+            {props.leftOut} left out
+          </button>
+        )}
         <button type="button" class="button" disabled={!props.canPair} onClick={props.onChoosePair}>
           Pair…
         </button>
@@ -72,9 +88,12 @@ export function Header(props: HeaderProps) {
           }))}
           disabled={!props.canExport}
           toRight
-          onChoose={props.onExport}
+          onChoose={props.onCommand}
         >
           Export
+        </MenuButton>
+        <MenuButton items={props.more} toRight onChoose={props.onCommand}>
+          More
         </MenuButton>
       </div>
       <SaveLine save={props.save} onSave={props.onSave} />

@@ -152,7 +152,8 @@ function RoleButton(props: ButtonProps) {
 
 function LinkButton(props: ButtonProps) {
   const on = props.bar.checked.has(props.command.id);
-  const word = lastWord(props.command.id);
+  // 'Link scrolling' shows as 'scrolling': a part of the name, as those who speak to the machine need it.
+  const word = props.command.title.split(' ')[1];
   return (
     <button class="button link-toggle" {...state(props)} aria-label={props.command.title}>
       <svg class="link-sign" width={12} height={10} viewBox="0 0 12 10" aria-hidden="true">
@@ -167,7 +168,7 @@ function LinkButton(props: ButtonProps) {
           stroke-width={1.3}
         />
       </svg>
-      {word === 'view' ? 'zoom' : word}
+      {word}
     </button>
   );
 }

@@ -32,7 +32,10 @@ export function mapGreys(
   table: Uint32Array,
   target: Uint32Array,
 ): void {
-  for (let index = 0; index < target.length; index++) {
-    target[index] = table[(stored[index] as number) & 0xffff] as number;
+  // Read unsigned, a stored value is its own index: one lookup a pixel and no masking.
+  const indices = new Uint16Array(stored.buffer, stored.byteOffset, stored.length);
+  const { length } = target;
+  for (let index = 0; index < length; index++) {
+    target[index] = table[indices[index] as number] as number;
   }
 }

@@ -1,18 +1,42 @@
-import { COMMANDS, type CommandId } from '../../core/commands/index.js';
+import { COMMANDS, type Command, type CommandId } from '../../core/commands/index.js';
+import { enabledCommands } from '../commands/commandState.js';
 import { useEngine } from '../engine.js';
 import { Header, type SaveState as ShownSaveState } from '../panels/Header.js';
 import { identityText } from '../panels/identityText.js';
+import { commandKeyText } from '../panels/parts/keyText.js';
+import type { MenuItem } from '../panels/parts/MenuButton.js';
 import type { AppState } from '../state/appState.js';
 import { keyNames } from './keyNames.js';
 import { useSelected } from './useSelected.js';
 
 const EXPORTS = COMMANDS.filter(({ id }) => id.startsWith('export.'));
 
+/** Commands that stand nowhere else in the window. */
+const MORE: readonly CommandId[] = [
+  'folder.contents',
+  'folder.demonstration',
+  'edit.undo',
+  'edit.redo',
+  'edit.copyTable',
+  'region.delete',
+  'slice.region',
+  'view.fit',
+  'view.smooth',
+  'note.save',
+  'edit.settings',
+  'help.keys',
+  'help.numbers',
+  'help.cautions',
+];
+
 /** The header, from the state. */
 export function HeaderView() {
   const { run } = useEngine();
   const note = useSelected((state) => state.note);
   const save = useSelected((state) => state.save);
+  const leftOut = useSelected((state) => state.index?.leftOut.length);
+  const enabled = useSelected((state) => enabledCommands(state).join(' '));
+  const smooth = useSelected((state) => state.smooth);
   const canPair = useSelected((state) => (state.index?.stacks.length ?? 0) > 0);
   return (
     <Header
@@ -22,14 +46,27 @@ export function HeaderView() {
       canPair={canPair}
       exports={EXPORTS}
       canExport={note !== undefined}
+      leftOut={leftOut}
+      more={moreItems(new Set(enabled.split(' ')), smooth)}
       keyNames={keyNames()}
       onOpenFolder={() => run('folder.open')}
       onChoosePair={() => run('pair.choose')}
-      onExport={(id) => run(id as CommandId)}
+      onCommand={(id) => run(id as CommandId)}
+      onContents={() => run('folder.contents')}
       onSave={() => run('note.save')}
       onCautions={() => run('help.cautions')}
     />
   );
+}
+
+function moreItems(enabled: ReadonlySet<string>, smooth: boolean): readonly MenuItem[] {
+  return COMMANDS.filter(({ id }) => MORE.includes(id)).map((command: Command) => ({
+    id: command.id,
+    title: command.title,
+    keyText: commandKeyText(command, keyNames(), true),
+    disabled: !enabled.has(command.id),
+    ...(command.id === 'view.smooth' && { checked: smooth }),
+  }));
 }
 
 function shownSave(save: AppState['save'], note: AppState['note']): ShownSaveState {

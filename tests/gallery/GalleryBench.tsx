@@ -82,7 +82,10 @@ export function GalleryBench({ state }: { readonly state: string }) {
           keyNames="other"
           onOpenFolder={nothing}
           onChoosePair={nothing}
-          onExport={nothing}
+          onCommand={nothing}
+          onContents={nothing}
+          leftOut={3}
+          more={[]}
           onSave={nothing}
           onCautions={nothing}
         />

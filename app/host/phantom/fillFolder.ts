@@ -1,3 +1,4 @@
+import { setMaxListeners } from 'node:events';
 import { mkdir } from 'node:fs/promises';
 import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
@@ -22,6 +23,8 @@ export async function fillFolder(
   { worker, onProgress, signal }: Pick<MakeOptions, 'worker' | 'onProgress' | 'signal'>,
 ): Promise<number> {
   signal?.throwIfAborted();
+  // Each slice that waits for a thread listens for the end of it all.
+  if (signal !== undefined) setMaxListeners(wanted.slices + 10, signal);
   for (const side of SIDES) await mkdir(join(folder, side), { mode: 0o700 });
   const pool = new Piscina({
     filename: worker ?? workerFile('phantom.worker'),
