@@ -6,7 +6,7 @@ import { shapeArea } from './area.js';
 import { moveShape } from './change.js';
 import { findSlice } from './findSlice.js';
 import { FLAGS } from './flags.js';
-import { visitPixels } from './pixelsInside.js';
+import { visitRuns } from './pixelsInside.js';
 import type { Shape } from './shape.js';
 import { statistics } from './statistics.js';
 import type { Flag, RegionValue } from './value.js';
@@ -40,14 +40,21 @@ export function regionValues(
   stored: StoredValues,
 ): { values: Float64Array; padding: number; overBorder: boolean } {
   const { grid, pixels } = slice.image;
-  const values: number[] = [];
-  let padding = 0;
-  const overBorder = visitPixels(shape, grid, (index) => {
-    const value = stored[index] ?? 0;
-    if (isPadding(value, pixels)) padding++;
-    else values.push(rescaled(value, pixels));
+  let count = 0;
+  const overBorder = visitRuns(shape, grid, (from, end) => {
+    count += end - from;
   });
-  return { values: Float64Array.from(values), padding, overBorder };
+  const values = new Float64Array(count);
+  let n = 0;
+  visitRuns(shape, grid, (from, end) => {
+    for (let index = from; index < end; index++) {
+      const value = stored[index] ?? 0;
+      if (pixels.padding === undefined || !isPadding(value, pixels)) {
+        values[n++] = rescaled(value, pixels);
+      }
+    }
+  });
+  return { values: values.subarray(0, n), padding: count - n, overBorder };
 }
 
 function measureOnSlice(
@@ -95,29 +102,31 @@ function placement(
 ): number | null {
   let farthest = 0;
   for (const move of halfPixelMoves(slice.image.grid)) {
-    const moved = meanInside(moveShape(shape, move), slice, stored, mean);
+    const moved = meanInside(moveShape(shape, move), slice, stored);
     if (moved === undefined) return null;
     farthest = Math.max(farthest, Math.abs(moved - mean));
   }
   return farthest;
 }
 
-/** Mean alone, summed about a value near it so that no digits are lost. */
+/** Mean alone: stored values are whole numbers, so their sum is exact, and the rescale comes once at the end. */
 function meanInside(
   shape: Shape,
   { image: { grid, pixels } }: StackSlice,
   stored: StoredValues,
-  near: number,
 ): number | undefined {
+  const { padding } = pixels;
   let sum = 0;
   let n = 0;
-  visitPixels(shape, grid, (index) => {
-    const value = stored[index] ?? 0;
-    if (isPadding(value, pixels)) return;
-    sum += rescaled(value, pixels) - near;
-    n++;
+  visitRuns(shape, grid, (from, end) => {
+    for (let index = from; index < end; index++) {
+      const value = stored[index] ?? 0;
+      if (padding !== undefined && isPadding(value, pixels)) continue;
+      sum += value;
+      n++;
+    }
   });
-  return n === 0 ? undefined : near + sum / n;
+  return n === 0 ? undefined : rescaled(sum / n, pixels);
 }
 
 function halfPixelMoves({ rowDirection, columnDirection, pixelSpacingMm }: SliceGrid) {

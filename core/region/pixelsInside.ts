@@ -15,26 +15,27 @@ export interface PixelsInside {
 /** Which pixels of a slice a shape holds. The shape is projected on the slice along its normal. */
 export function pixelsInside(shape: Shape, grid: SliceGrid): PixelsInside {
   const indices: number[] = [];
-  const overBorder = visitPixels(shape, grid, (index) => indices.push(index));
+  const overBorder = visitRuns(shape, grid, (from, end) => {
+    for (let index = from; index < end; index++) indices.push(index);
+  });
   return { indices: Int32Array.from(indices), overBorder };
 }
 
+/** A run of neighbouring pixels of one row: from the first index to before the end. */
+export type VisitRun = (from: number, end: number) => void;
+
 /**
- * Calls back with the index of each pixel that a shape holds, ascending, and makes nothing on the way.
+ * Calls back with each run of pixels that a shape holds, ascending, and makes nothing on the way.
  *
  * @returns whether the shape reaches over the border of the image
  */
-export function visitPixels(
-  shape: Shape,
-  grid: SliceGrid,
-  visit: (index: number) => void,
-): boolean {
+export function visitRuns(shape: Shape, grid: SliceGrid, visit: VisitRun): boolean {
   return shape.kind === 'ellipse'
     ? visitEllipse(shape, grid, visit)
     : visitOutline(shape, grid, visit);
 }
 
-function visitEllipse(shape: Ellipse, grid: SliceGrid, visit: (index: number) => void): boolean {
+function visitEllipse(shape: Ellipse, grid: SliceGrid, visit: VisitRun): boolean {
   const { rowDirection, columnDirection, pixelSpacingMm, columns } = grid;
   const [a, b] = shape.radiiMm;
   const u = shape.u ?? rowDirection;
@@ -57,14 +58,27 @@ function visitEllipse(shape: Ellipse, grid: SliceGrid, visit: (index: number) =>
     middle.row - halfRows,
     middle.row + halfRows,
   );
+  const isInside = (across: number, down: number): boolean => {
+    const alongU = across * uColumn + down * uRow;
+    const alongV = across * vColumn + down * vRow;
+    return alongU * alongU + alongV * alongV <= 1 + EDGE;
+  };
+  // On a row the ellipse is where A x² + 2 B x + C ≤ 0.
+  const squared = uColumn * uColumn + vColumn * vColumn;
+  const crossed = uColumn * uRow + vColumn * vRow;
+  const rowSquared = uRow * uRow + vRow * vRow;
   for (let row = box.top; row <= box.bottom; row++) {
     const down = row - middle.row;
-    for (let column = box.left; column <= box.right; column++) {
-      const across = column - middle.column;
-      const alongU = across * uColumn + down * uRow;
-      const alongV = across * vColumn + down * vRow;
-      if (alongU * alongU + alongV * alongV <= 1 + EDGE) visit(row * columns + column);
-    }
+    const mid = (-crossed * down) / squared;
+    const half = Math.sqrt(
+      Math.max(0, mid * mid - (rowSquared * down * down - 1 - EDGE) / squared),
+    );
+    let first = Math.max(box.left, Math.floor(middle.column + mid - half));
+    let last = Math.min(box.right, Math.ceil(middle.column + mid + half));
+    // The root rounds: the ends are walked to the pixels that really lie inside.
+    while (first <= last && !isInside(first - middle.column, down)) first++;
+    while (last >= first && !isInside(last - middle.column, down)) last--;
+    if (first <= last) visit(row * columns + first, row * columns + last + 1);
   }
   return box.overBorder;
 }
@@ -73,7 +87,7 @@ function visitEllipse(shape: Ellipse, grid: SliceGrid, visit: (index: number) =>
  * Polygon by rows, even-odd: pixels between each pair of crossings, and those on an edge. An outline that crosses
  * itself counts its overlaps as holes, as the even-odd rule does.
  */
-function visitOutline(shape: Outline, grid: SliceGrid, visit: (index: number) => void): boolean {
+function visitOutline(shape: Outline, grid: SliceGrid, visit: VisitRun): boolean {
   const corners = shape.pointsMm.map((point) => patientToPixel(grid, point));
   let [left, right, top, bottom] = [Infinity, -Infinity, Infinity, -Infinity];
   for (const { column, row } of corners) {
@@ -91,8 +105,12 @@ function visitOutline(shape: Outline, grid: SliceGrid, visit: (index: number) =>
       const last = Math.min(box.right, Math.floor(to + EDGE));
       for (let column = first; column <= last; column++) inside[column - box.left] = 1;
     });
+    const start = row * grid.columns + box.left;
     for (let at = 0; at < inside.length; at++) {
-      if (inside[at] === 1) visit(row * grid.columns + box.left + at);
+      if (inside[at] === 0) continue;
+      const from = at;
+      while (at < inside.length && inside[at] === 1) at++;
+      visit(start + from, start + at);
     }
   }
   return box.overBorder;
