@@ -78,7 +78,7 @@ function createSurface(): Surface {
     drawn: ({ id, stored, pixels, window, transform: { grid } }) => {
       const table = greyTable(pixels, window);
       if (drawnId === id && drawnTable === table) return canvas;
-      const context = canvas.getContext('2d', { alpha: false });
+      const context = canvas.getContext('2d', { alpha: false, willReadFrequently: true });
       if (context === null) throw new Error('invalid canvas: it has no 2d context');
       if (data?.width !== grid.columns || data.height !== grid.rows) {
         canvas.width = grid.columns;

@@ -13,8 +13,12 @@ const BENCHMARKS: readonly (() => Promise<Row | readonly Row[]>)[] = [
   linkedScroll,
 ];
 
+// Named ones alone: npm run bench -- linkedScroll
+const named = process.argv.slice(2).filter((argument) => !argument.startsWith('-'));
+const chosen = BENCHMARKS.filter(({ name }) => named.length === 0 || named.includes(name));
+
 // One after the other: two at once would measure each other.
-for (const benchmark of BENCHMARKS) {
+for (const benchmark of chosen) {
   const rows = await benchmark();
   for (const row of [rows].flat()) process.stdout.write(`${rowInWords(row)}\n`);
 }
