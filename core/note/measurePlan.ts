@@ -1,5 +1,11 @@
 import type { StoredValues } from '../dicom/index.js';
-import { findSlice, measureRegion, type RegionValue } from '../region/index.js';
+import {
+  type Flag,
+  findSlice,
+  measureRegion,
+  notMeasured,
+  type RegionValue,
+} from '../region/index.js';
 import { type Result, refuse, success } from '../result.js';
 import type { Stack } from '../stack/index.js';
 import { type MeasuredContrast, measuredContrast } from './measuredContrast.js';
@@ -55,12 +61,15 @@ export function slicesNeeded(plan: Plan, stack: Stack): readonly number[] {
  * Measures a plan on one stack or on both. A region that lies on no slice, or a contrast of an unknown region, has
  * null values and a flag that says why, and the rest goes on. Two things under one identifier are refused: no value
  * could then be told from another.
+ *
+ * @param notOnSharp why nothing may be measured on the sharp stack: another patient, another frame of reference
  */
 export function measurePlan(
   plan: Plan,
   soft: Stack,
   sharp: Stack | undefined,
   storedOf: StackStoredOf,
+  notOnSharp?: Flag,
 ): Result<MeasuredPlan> {
   for (const [what, list] of Object.entries({
     region: plan.regions,
@@ -75,12 +84,14 @@ export function measurePlan(
   }
   const on = (stack: Stack, { shape }: PlanRegion) =>
     measureRegion(shape, stack, (sliceIndex) => storedOf(stack, sliceIndex));
+  const onSharp = (stack: Stack, region: PlanRegion) =>
+    notOnSharp === undefined ? on(stack, region) : notMeasured(region.shape, notOnSharp);
   const regions = plan.regions.map(
     (region): MeasuredRegion => ({
       id: region.id,
       role: region.role,
       soft: on(soft, region),
-      sharp: sharp === undefined ? null : on(sharp, region),
+      sharp: sharp === undefined ? null : onSharp(sharp, region),
     }),
   );
   const byId = new Map(regions.map((region) => [region.id, region]));

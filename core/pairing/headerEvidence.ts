@@ -1,5 +1,6 @@
 import { dot, gridNormal } from '../geometry/index.js';
 import type { Evidence, Link } from '../note/index.js';
+import { FLAGS, type Flag } from '../region/index.js';
 import type { Stack } from '../stack/index.js';
 import { tiltDegrees } from '../stack/index.js';
 
@@ -14,6 +15,12 @@ export interface HeaderEvidence {
 const PHASE_TOLERANCE_PERCENT = 0.5;
 const THICKNESS_TOLERANCE_MM = 0.01;
 const TILT_TOLERANCE_DEG = 0.2;
+
+/** Why nothing may be measured on the second stack of a pair, or undefined when it may. */
+export function reasonNotToMeasure({ link, refusal }: HeaderEvidence): Flag | undefined {
+  if (refusal !== undefined) return FLAGS.notOneAcquisition(`${refusal}.`);
+  return link === 'index' ? FLAGS.positionsNotComparable : undefined;
+}
 
 /** Compares what the files of two stacks state. Nothing is measured here, and labels are never interpreted. */
 export function headerEvidence(soft: Stack, sharp: Stack): HeaderEvidence {
@@ -60,7 +67,8 @@ export function headerEvidence(soft: Stack, sharp: Stack): HeaderEvidence {
     near('tube voltage', a.acquisition.kvp, b.acquisition.kvp, 0.5, 'kVp'),
     compare('kernel label', a.acquisition.kernelLabel, b.acquisition.kernelLabel),
   ];
-  const link: Link = frame.state === 'agrees' && overlap.state !== 'differs' ? 'position' : 'index';
+  const link: Link =
+    frame.state !== 'differs' && overlap.state !== 'differs' ? 'position' : 'index';
   const refusal = [patient, phase].find(({ state }) => state === 'differs');
   return {
     link,

@@ -28,6 +28,14 @@ export const FLAGS = {
     code: 'lossy',
     text: 'The image was compressed with loss: SD and SNR are not the scanner’s.',
   },
+  positionsNotComparable: {
+    code: 'positions-not-comparable',
+    text: 'Not measured here: positions of the two stacks can’t be compared.',
+  },
+  notOneAcquisition: (why: string): Flag => ({
+    code: 'not-one-acquisition',
+    text: `Not measured here. ${why}`,
+  }),
   noStandardError: {
     code: 'no-standard-error',
     text: 'No standard error: this version does not measure how the noise is correlated.',

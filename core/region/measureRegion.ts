@@ -139,6 +139,11 @@ function halfPixelMoves({ rowDirection, columnDirection, pixelSpacingMm }: Slice
   });
 }
 
+/** What a region has on a stack on which it must not be measured, and why. */
+export function notMeasured(shape: Shape, why: Flag): RegionValue {
+  return withoutValue(shape, null, null, null, [why]);
+}
+
 function withoutValue(
   shape: Shape,
   sliceIndex: number | null,

@@ -51,7 +51,7 @@ function row(name: string, soft: string, sharp: string, delta?: string): Readout
 }
 
 function bandText(value: Value): string {
-  return typeof value?.snr === 'number' ? snrBand(value.snr) : NO_VALUE;
+  return (typeof value?.snr === 'number' ? snrBand(value.snr) : undefined) ?? NO_VALUE;
 }
 
 function rangeText(value: Value): string {

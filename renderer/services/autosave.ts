@@ -92,11 +92,12 @@ export function createAutosave({ client, onState, timeOfDay, signal }: AutosaveO
       start(note, tag, false);
       onState(tag === undefined ? { kind: 'none' } : { kind: 'saved', at: timeOfDay() });
     },
+    // While a write is running the kept note is the one before it: a change back to that is a change too.
     save: (note) => {
-      if (note !== kept) keep(note);
+      if (note !== kept || running !== undefined) keep(note);
     },
     saveNow: (note) => {
-      if (note !== kept || etag === undefined) keep(note);
+      if (note !== kept || running !== undefined || etag === undefined) keep(note);
     },
     settled: async () => {
       while (running !== undefined) await running;

@@ -2,7 +2,7 @@ import type { OpenFolder } from '../../app/host/contract.js';
 import { defaultWindow } from '../../core/intensity/index.js';
 import type { Kernel, NoteRegion, RegionValues } from '../../core/note/index.js';
 import { headerEvidence } from '../../core/pairing/index.js';
-import type { Shape } from '../../core/region/index.js';
+import { FLAGS, notMeasured, type Shape } from '../../core/region/index.js';
 import type { Result } from '../../core/result.js';
 import type { Stack } from '../../core/stack/index.js';
 import type { HostClient, KeptNote } from '../host/client.js';
@@ -26,7 +26,6 @@ import {
 } from './choosePair.js';
 import { createJobs } from './jobs.js';
 import { loadVolumes } from './loadVolumes.js';
-import { positionsNotComparable } from './notComparable.js';
 import { pairMessage } from './pairMessage.js';
 
 export interface BenchOptions {
@@ -86,7 +85,8 @@ export function createBench(options: BenchOptions): Bench {
     if (volumes === undefined) return { soft: null, sharp: null };
     if (store.now().pair?.link !== 'index') return measureShape(shape, volumes);
     const { soft } = measureShape(shape, { soft: volumes.soft, sharp: undefined });
-    return { soft, sharp: volumes.sharp === undefined ? null : positionsNotComparable(shape) };
+    const sharp = volumes.sharp && notMeasured(shape, FLAGS.positionsNotComparable);
+    return { soft, sharp: sharp ?? null };
   };
 
   const remeasure = (): void => {

@@ -1,4 +1,4 @@
-import { readdirSync, readFileSync } from 'node:fs';
+import { readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, type Page, test } from '@playwright/test';
 import { csvParse } from 'd3';
@@ -220,7 +220,61 @@ test('deleting a region takes its contrast, and undo brings both back', async ()
   await expect(page.locator('[data-panel=ledger]')).toContainText('noise of Wall 1');
 });
 
-test('the window is a picture worth showing, at two sizes', async () => {
+/** The places that the study's own truth file names, as marks of the saved note; the page measures them on opening. */
+function markTruth(): void {
+  const notes = join(home.path, 'data', 'notes');
+  const [folder = ''] = readdirSync(notes);
+  const path = join(notes, folder, 'note.json');
+  const note = JSON.parse(readFileSync(path, 'utf8')) as Note;
+  const truthFile = readdirSync(home.path, { recursive: true, encoding: 'utf8' }).find((name) =>
+    name.endsWith('truth.json'),
+  );
+  const truth = JSON.parse(readFileSync(join(home.path, truthFile ?? ''), 'utf8'));
+  const isOnSlice = (id: string) => ['R1', 'L1', 'F1'].includes(id);
+  const shapes = truth.regions.filter(({ id }: { id: string }) => isOnSlice(id));
+  const none = { soft: null, sharp: null, quote: null, quoteReason: '' };
+  const regions = shapes.map(({ id, role, label, shape }: Note['regions'][number]) => ({
+    id,
+    role,
+    shape,
+    label: `${role[0]?.toUpperCase()}${role.slice(1)} 1`,
+    place: label,
+    findingId: id === 'L1' ? 'D1' : null,
+    ...none,
+  }));
+  const stent = {
+    id: 'D1',
+    segment: 7,
+    kind: 'stent',
+    nominalMm: 3,
+    assessability: 'limited',
+    reason: 'struts bloom on the soft kernel',
+  };
+  const contrasts = [
+    { id: 'C1', lumen: 'L1', wall: 'F1', noise: 'reference', reference: 'R1' },
+  ].map((plan) => ({ ...plan, formula: '', soft: null, sharp: null, flags: [] }));
+  writeFileSync(path, JSON.stringify({ ...note, regions, findings: [stent], contrasts }));
+}
+
+test('the window shows a stent on both kernels, at two sizes', async () => {
+  await expect.poll(() => savedNote().regions.length).toBe(2);
+  await page.goto('about:blank');
+  markTruth();
+  await page.goto(shell.address);
+  await waitForPair(page);
+  await regionRow(page, 'L1').click();
+  await softPlate(page).focus();
+  await page.keyboard.press('g');
+  await softPlate(page).hover({ position: { x: 382, y: 162 } });
+  await page.keyboard.down('Control');
+  await page.mouse.wheel(0, -600);
+  await page.keyboard.up('Control');
+  // The plain region in the stent reads far too high on the soft kernel, and nearer to 350 HU on the sharp one.
+  const row = await regionRow(page, 'L1').innerText();
+  const [soft = 0, sharp = 0] = [...row.matchAll(/(\d{3}\.\d) ± /g)].map(([, mean]) =>
+    Number(mean),
+  );
+  expect(soft).toBeGreaterThan(sharp + 80);
   await page.setViewportSize({ width: 1280, height: 720 });
   await page.screenshot({ path: 'test-results/window-1280.png' });
   await page.setViewportSize({ width: 1440, height: 900 });

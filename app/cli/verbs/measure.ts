@@ -8,7 +8,7 @@ import {
   selectStack,
   slicesNeeded,
 } from '../../../core/note/index.js';
-import { headerEvidence } from '../../../core/pairing/index.js';
+import { headerEvidence, reasonNotToMeasure } from '../../../core/pairing/index.js';
 import { success } from '../../../core/result.js';
 import type { Stack } from '../../../core/stack/index.js';
 import { indexFolder } from '../../host/library/indexFolder.js';
@@ -59,12 +59,20 @@ export const measureVerb: Verb = {
         context.say(`${visibleText(file)}: ${visibleText(problem)}`);
       }
     }
-    const measured = measurePlan(plan, soft.value, sharp?.value, (stack, index) =>
-      read.get(stack)?.stored.get(index),
+    const notOnSharp =
+      sharp === undefined ? undefined : reasonNotToMeasure(headerEvidence(soft.value, sharp.value));
+    if (notOnSharp !== undefined) context.say(notOnSharp.text);
+    const measured = measurePlan(
+      plan,
+      soft.value,
+      sharp?.value,
+      (stack, index) => read.get(stack)?.stored.get(index),
+      notOnSharp,
     );
     if (!measured.ok) return measured;
     const document: MeasuredPlan = measured.value;
-    return success({ document, text: measuredText(document), exitCode: 0 });
+    const exitCode = notOnSharp === undefined ? 0 : 1;
+    return success({ document, text: measuredText(document), exitCode });
   },
 };
 

@@ -151,7 +151,7 @@ describe('measure', () => {
     expect(sharp.flags.map((flag: { code: string }) => flag.code)).toEqual(['no-slice-here']);
   });
 
-  it('says on standard error when the two stacks do not agree, and still measures them', async () => {
+  it('measures nothing on a sharp stack of another patient, says why, and ends with 1', async () => {
     writeStudy();
     const change = { 1048608: { tag: 0x00100020, vr: 'LO', value: 'C-2' } } as const;
     pairFiles(change).forEach((bytes, index) => {
@@ -159,9 +159,11 @@ describe('measure', () => {
     });
     writePlan();
     const { code, out, err } = await cli(['measure', 'plan.json', '--in', 'study', '--json']);
-    expect(code).toBe(0);
+    expect(code).toBe(1);
     expect(err).toContain('The pair: another patient: ');
-    expect(JSON.parse(out).regions).toHaveLength(1);
+    const [region] = JSON.parse(out).regions;
+    expect(region.soft.meanHu).toBeTypeOf('number');
+    expect([region.sharp.meanHu, region.sharp.flags[0].code]).toEqual([null, 'not-one-acquisition']);
   });
 
   it.each([

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { readHeader } from '../../../../core/dicom/index.js';
-import { headerEvidence } from '../../../../core/pairing/index.js';
+import { headerEvidence, reasonNotToMeasure } from '../../../../core/pairing/index.js';
 import { buildStacks, type Stack } from '../../../../core/stack/index.js';
 import { CORPUS_ROOT, type CtSliceOptions, ctSlice } from '../../../corpus/ctSlice.js';
 
@@ -62,5 +62,24 @@ describe('headerEvidence', () => {
     expect(headerEvidence(soft, stackAt(50, { change: phase(75) })).link).toBe('index');
     expect(stateOf(stackAt(50), 'overlap')).toBe('differs');
     expect(stateOf(stackAt(0), 'phase')).toBe('unknown');
+  });
+
+  it('links by position where neither stack states a frame of reference, which stays unknown', () => {
+    const none = { 2097234: undefined };
+    const got = headerEvidence(stackAt(0, { change: none }), stackAt(0, { change: none }));
+    const frame = got.evidence.find(({ check }) => check === 'frame of reference');
+    expect([got.link, frame?.state]).toEqual(['position', 'unknown']);
+  });
+});
+
+describe('reasonNotToMeasure', () => {
+  it('names another phase and positions that can’t be compared, and is silent on a pair', () => {
+    const frame = { 2097234: { tag: 0x00200052, vr: 'UI', value: '2.25.5' } as const };
+    const code = (sharp: Stack) => reasonNotToMeasure(headerEvidence(soft, sharp))?.code;
+    expect(code(stackAt(0, { change: phase(40) }))).toBe('not-one-acquisition');
+    expect(code(stackAt(0, { change: { ...phase(75), ...frame } }))).toBe(
+      'positions-not-comparable',
+    );
+    expect(code(stackAt(0, { change: phase(75) }))).toBeUndefined();
   });
 });

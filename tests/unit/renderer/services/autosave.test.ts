@@ -58,6 +58,16 @@ function standInHost() {
 }
 
 describe('Keeping the note', () => {
+  it('writes a change that is undone while it is being written, and then the note before it', async () => {
+    const host = standInHost();
+    const before = sampleNote('before');
+    host.autosave.begin(before, undefined);
+    host.autosave.save(sampleNote('deleted'));
+    host.autosave.save(before);
+    await host.letThrough();
+    expect(host.written.map(({ comment }) => comment)).toEqual(['deleted', 'before']);
+  });
+
   it('writes a first change without a tag, and the next with the tag of the first', async () => {
     const host = standInHost();
     host.autosave.begin(sampleNote(''), undefined);

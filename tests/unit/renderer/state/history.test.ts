@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Note, RegionValues } from '../../../../core/note/index.js';
-import { positionsNotComparable } from '../../../../renderer/services/notComparable.js';
+import { FLAGS, notMeasured } from '../../../../core/region/index.js';
 import {
   placeRegion,
   removeSelected,
@@ -96,7 +96,10 @@ describe('Regions', () => {
 });
 
 describe('Measuring a note again', () => {
-  const value = (meanHu: number | null) => ({ ...positionsNotComparable(circle(0)), meanHu });
+  const value = (meanHu: number | null) => ({
+    ...notMeasured(circle(0), FLAGS.positionsNotComparable),
+    meanHu,
+  });
   const noteWith = (values: RegionValues): Note => {
     const { note } = placeRegion('lumen', circle(0), values, NOW)(sampleState());
     if (note === undefined) throw new Error('invalid sample');
