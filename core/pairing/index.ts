@@ -1,1 +1,2 @@
+export * from './contract.js';
 export * from './headerEvidence.js';
