@@ -163,7 +163,10 @@ describe('measure', () => {
     expect(err).toContain('The pair: another patient: ');
     const [region] = JSON.parse(out).regions;
     expect(region.soft.meanHu).toBeTypeOf('number');
-    expect([region.sharp.meanHu, region.sharp.flags[0].code]).toEqual([null, 'not-one-acquisition']);
+    expect([region.sharp.meanHu, region.sharp.flags[0].code]).toEqual([
+      null,
+      'not-one-acquisition',
+    ]);
   });
 
   it.each([
