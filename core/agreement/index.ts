@@ -1,0 +1,3 @@
+export * from './blandAltman.js';
+export * from './intraclass.js';
+export * from './studentT.js';
