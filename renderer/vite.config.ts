@@ -5,6 +5,13 @@ export default defineConfig({
   root: import.meta.dirname,
   base: './',
   oxc: { jsx: { runtime: 'automatic', importSource: 'preact' } },
+  // The decoders name Node's modules, which they use only outside a browser.
+  resolve: {
+    alias: {
+      fs: new URL('volumes/noNode.ts', import.meta.url).pathname,
+      path: new URL('volumes/noNode.ts', import.meta.url).pathname,
+    },
+  },
   worker: { format: 'es' },
   build: {
     outDir: '../dist/renderer',

@@ -2,6 +2,7 @@ import { join } from 'node:path';
 import { createChooser } from './folders/chooser.js';
 import { createGrants } from './folders/grants.js';
 import { createRecents } from './folders/recents.js';
+import { createHeaderCache } from './library/headerCache.js';
 import { createLibrary } from './library/library.js';
 import { createNotes } from './notes/notesStore.js';
 import { listPageFiles } from './pageFiles.js';
@@ -11,6 +12,7 @@ import { createSettings } from './settings.js';
 import { fileErrorReason } from './storage/fileError.js';
 import type { UserFolders } from './userFolders.js';
 import { programVersion } from './version.js';
+import { workerFileHash } from './workerFile.js';
 
 /** What the services are made of. */
 export interface ServiceOptions {
@@ -34,14 +36,33 @@ export function createServices(options: ServiceOptions): Services {
   const settings = createSettings(folders.config);
   const notes = createNotes(join(folders.data, 'notes'));
   const report = options.report ?? ((error: unknown) => console.error(error));
+  const cache = createHeaderCache({
+    folder: join(folders.cache, 'headers'),
+    reader: `${programVersion()} ${workerFileHash('index.worker')}`,
+    report,
+  });
+
+  const library = createLibrary(grants, { threads: options.threads, cache });
 
   return {
     version: programVersion(),
     grants,
-    recents,
+    recents: {
+      ...recents,
+      // What is forgotten leaves nothing behind: the cache of its headers names the patients.
+      async remove(id) {
+        const root = await recents.find(id);
+        await recents.remove(id);
+        if (root !== undefined) await cache.forget(root);
+      },
+      async clear() {
+        await recents.clear();
+        await cache.clear();
+      },
+    },
     settings,
     notes,
-    library: createLibrary(grants, options.threads),
+    library,
     chooser: createChooser(options.home),
     pages: listPageFiles(options.rendererDirectory),
     presence: createPresence(),
@@ -49,6 +70,7 @@ export function createServices(options: ServiceOptions): Services {
     async openFolder(path) {
       const opened = await grants.open(path);
       if (!opened.ok) return opened;
+      library.warm().catch(report);
       const root = grants.find(opened.value.grant)?.root;
       try {
         if (root !== undefined) await recents.add(root);
@@ -64,7 +86,7 @@ export function createServices(options: ServiceOptions): Services {
       return made.ok ? grants.open(made.value.folder) : made;
     },
     async settled() {
-      await Promise.all([notes.settled(), settings.settled(), recents.settled()]);
+      await Promise.all([notes.settled(), settings.settled(), recents.settled(), cache.settled()]);
     },
   };
 }

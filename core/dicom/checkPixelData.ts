@@ -4,15 +4,19 @@ import {
   codeStreamOf,
   readCodeStreamHeader,
 } from './compressed/codeStreamHeader.js';
-import type { PixelEncoding } from './ctImage.js';
 import type { DataSet } from './dataSet.js';
-import { isNative, transferSyntaxInWords } from './uids.js';
+import { isNative, TRANSFER_SYNTAX, transferSyntaxInWords } from './uids.js';
 
 /** How the pixels of a file are really encoded, as far as its beginning shows. */
 export interface CheckedPixels {
-  readonly pixels: PixelEncoding;
+  /** As the file says, unless its pixels show that they are not compressed. */
+  readonly transferSyntaxUid: string;
   /** Pixels are in fragments, as compressed ones are. */
   readonly inFragments: boolean;
+  /** Whole frames that Pixel Data has room for, when they are not compressed; else those stated. */
+  readonly framesPresent: number;
+  /** Head of the first code stream, when the bytes reach it. */
+  readonly codeStream?: CodeStreamHeader;
   readonly lossy: boolean;
   readonly findings: readonly Finding[];
 }
@@ -27,16 +31,17 @@ const MAY_BE_LOSSY: ReadonlySet<string> = new Set([
 const NEAR_LOSSLESS = '1.2.840.10008.1.2.4.81';
 
 /**
- * Checks Pixel Data against what the header asks for. Of compressed pixels the head of the first code stream is
- * read, when the bytes reach it: its precision and sign count, not the tags'.
+ * Checks Pixel Data against what the header asks for. Pixels that stand in one piece under a compressed transfer
+ * syntax are native when their length says so (AWKWARD row 69); more frames than stated are not read, fewer are
+ * told (row 65).
  *
- * @param bytesNeeded of native pixels, all frames
+ * @param frameBytes of one native frame
  */
 export function checkPixelData(
   dataSet: DataSet,
   transferSyntaxUid: string,
-  pixels: PixelEncoding,
-  bytesNeeded: number,
+  frameBytes: number,
+  frameCount: number,
 ): Result<CheckedPixels> {
   const { pixelData, bytes } = dataSet;
   if (pixelData === undefined) return refuse('no-image', 'No image: the file has no Pixel Data.');
@@ -49,48 +54,66 @@ export function checkPixelData(
       where,
     );
   }
-  if (!compressed || !pixelData.inFragments) {
-    if (pixelData.length < bytesNeeded) {
-      return refuse(
-        'short-pixel-data',
-        `Pixel Data has ${pixelData.length} bytes; ${bytesNeeded} are needed.`,
-        where,
-      );
-    }
-    if (compressed && pixelData.length !== bytesNeeded + (bytesNeeded & 1)) {
-      return refuse(
-        'bad-pixel-data',
-        `Pixel Data is in one piece although the file says ${transferSyntaxInWords(transferSyntaxUid)}, and its length fits no native image.`,
-        where,
-      );
-    }
-    const findings = compressed
-      ? [
-          {
-            code: 'native-pixels',
-            text: 'The pixels are not compressed although the file says so; their length told.',
-          },
-        ]
-      : [];
-    return success({ pixels, inFragments: false, lossy: false, findings });
+  if (pixelData.inFragments) {
+    return success(fromFragments(bytes, pixelData.offset, transferSyntaxUid, frameCount));
   }
-  const header = firstCodeStream(bytes, pixelData.offset);
-  const corrected = header === undefined ? undefined : fromCodeStream(pixels, header);
+  const bytesNeeded = frameBytes * frameCount;
+  const { length } = pixelData;
+  if (compressed && length !== bytesNeeded) {
+    return refuse(
+      'bad-pixel-data',
+      `Pixel Data is in one piece although the file says ${transferSyntaxInWords(transferSyntaxUid)}, and its length fits no native image.`,
+      where,
+    );
+  }
+  const framesPresent = Math.min(frameCount, Math.floor(length / frameBytes));
+  if (framesPresent === 0) {
+    return refuse(
+      'short-pixel-data',
+      `Pixel Data has ${length} bytes; ${bytesNeeded} are needed.`,
+      where,
+    );
+  }
+  const findings: Finding[] = [];
+  if (compressed) {
+    findings.push({
+      code: 'native-pixels',
+      text: `The pixels are not compressed although the file says ${transferSyntaxInWords(transferSyntaxUid)}; their length told.`,
+    });
+  }
+  if (length - bytesNeeded >= frameBytes) {
+    const more = Math.floor(length / frameBytes) - frameCount;
+    findings.push({
+      code: 'more-frames',
+      text: `Pixel Data holds ${more} more frame(s) than the ${frameCount} stated; they were not read.`,
+    });
+  }
   return success({
-    pixels: corrected ?? pixels,
-    inFragments: true,
-    lossy:
-      MAY_BE_LOSSY.has(transferSyntaxUid) || (header?.lossy ?? transferSyntaxUid === NEAR_LOSSLESS),
-    findings:
-      corrected === undefined
-        ? []
-        : [
-            {
-              code: 'code-stream-differs',
-              text: `The compressed pixels have ${corrected.bitsStored} bits, ${corrected.signed ? 'signed' : 'unsigned'}; the header says otherwise and was corrected.`,
-            },
-          ],
+    transferSyntaxUid: compressed ? TRANSFER_SYNTAX.explicitLittleEndian : transferSyntaxUid,
+    inFragments: false,
+    framesPresent,
+    lossy: false,
+    findings,
   });
+}
+
+function fromFragments(
+  bytes: Uint8Array,
+  itemsAt: number,
+  transferSyntaxUid: string,
+  frameCount: number,
+): CheckedPixels {
+  const codeStream = firstCodeStream(bytes, itemsAt);
+  return {
+    transferSyntaxUid,
+    inFragments: true,
+    framesPresent: frameCount,
+    ...(codeStream && { codeStream }),
+    lossy:
+      MAY_BE_LOSSY.has(transferSyntaxUid) ||
+      (codeStream?.lossy ?? transferSyntaxUid === NEAR_LOSSLESS),
+    findings: [],
+  };
 }
 
 /** Head of the code stream in the first fragment behind the offset table; undefined when the bytes end before it. */
@@ -100,25 +123,4 @@ function firstCodeStream(bytes: Uint8Array, itemsAt: number): CodeStreamHeader |
   const fragmentAt = itemsAt + 8 + view.getUint32(itemsAt + 4, true);
   if (fragmentAt + 8 > bytes.length) return undefined;
   return readCodeStreamHeader(codeStreamOf(bytes.subarray(fragmentAt + 8)));
-}
-
-/**
- * Precision and sign as the code stream has them. Its sign counts when it says signed; an unsigned JPEG 2000 stream
- * under a signed header holds two's complement words of its precision, as archives write them.
- *
- * @returns undefined when header and code stream agree
- */
-function fromCodeStream(
-  pixels: PixelEncoding,
-  header: CodeStreamHeader,
-): PixelEncoding | undefined {
-  const { bitsPerSample } = header;
-  if (bitsPerSample > 16 || bitsPerSample < 1) return undefined;
-  const signed = header.signed === true || pixels.signed;
-  const signDiffers = header.signed !== undefined && header.signed !== pixels.signed;
-  // Writers pad words: a stream of 16 bits may carry 12 stored ones, and the stored ones are right.
-  const bitsDiffer =
-    bitsPerSample < pixels.bitsStored || (signDiffers && bitsPerSample !== pixels.bitsStored);
-  if (!bitsDiffer && !signDiffers) return undefined;
-  return { ...pixels, signed, bitsStored: bitsPerSample, highBit: bitsPerSample - 1 };
 }

@@ -50,10 +50,16 @@ export interface Acquisition {
   /** Convolution Kernel (0018,1210), its values joined with a backslash as in the file. */
   readonly kernelLabel?: string;
   readonly acquisitionNumber?: number;
+  /** Acquisition UID (0008,0017). */
+  readonly acquisitionUid?: string;
   readonly acquisitionDate?: string;
   readonly acquisitionTime?: string;
   readonly phasePercent?: number;
   readonly triggerTimeMs?: number;
+  /** Nominal Interval (0018,1062) or R-R Interval Time Nominal (0020,9251): the usual R-R interval of these images, ms. */
+  readonly nominalIntervalMs?: number;
+  /** Temporal Position Identifier (0020,0100) or Index (0020,9128). */
+  readonly temporalPosition?: number;
   readonly kvp?: number;
   readonly thicknessMm?: number;
   readonly contrastAgent?: string;
@@ -67,7 +73,9 @@ export interface Acquisition {
 /** One CT slice: everything its file says that the bench uses, without the pixels. */
 export interface CtImage {
   readonly sopClassUid: string;
+  /** Empty when the file has none; stacks then give it one of their own making, with a finding. So with study and series. */
   readonly sopInstanceUid: string;
+  /** How the pixels are really encoded, where that differs from what the file says. */
   readonly transferSyntaxUid: string;
   /** Frame of a multi-frame image, from 0; absent for an image of its own. */
   readonly frame?: number;

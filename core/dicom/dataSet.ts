@@ -4,6 +4,8 @@ import type { Finding } from '../result.js';
 export interface ElementPlace {
   readonly offset: number;
   readonly length: number;
+  /** The file's value representation, where it is another than the standard's: it tells how the value is written. */
+  readonly fileVr?: string;
 }
 
 /** Pixel Data (7FE0,0010): its length is open when it is in fragments. */

@@ -1,13 +1,13 @@
+import { unmarkedPadding } from '../intensity/unmarkedPadding.js';
 import { type Result, refuse, success } from '../result.js';
 import type { Codecs } from './compressed/codecs.js';
-import { decodeFrame } from './compressed/decodeFrame.js';
-import { frameBytes, readFragments } from './compressed/fragments.js';
+import type { FramePlaces } from './compressed/framesOfFragments.js';
 import type { CtImage } from './ctImage.js';
-import type { DataSet } from './dataSet.js';
+import { decodeFrameBytes } from './decodeFrameBytes.js';
+import { locateFrames, walkBytes } from './locateFrames.js';
 import { openDataSet } from './openDataSet.js';
-import { type ImageFile, readImages } from './readImage.js';
-import { type StoredValues, storedValues } from './storedValues.js';
-import { transferSyntaxInWords } from './uids.js';
+import { readImages } from './readImage.js';
+import type { StoredValues } from './storedValues.js';
 
 /** A CT slice with its stored values, rows × columns, row after row. */
 export interface DecodedImage {
@@ -31,48 +31,33 @@ export async function decodeImage(
   if (!dataSet.ok) return dataSet;
   const file = readImages(dataSet.value);
   if (!file.ok) return file;
-  const image = file.value.images[frame];
+  const image = file.value.images.find((one) => (one.frame ?? 0) === frame);
   if (image === undefined) {
     return refuse('frame-missing', `The file has no frame ${frame + 1}.`);
   }
-  const stored = file.value.inFragments
-    ? await decodeCompressed(dataSet.value, file.value, image, frame, codecs)
-    : decodeNative(dataSet.value, image, frame);
-  return stored.ok ? success({ image, stored: stored.value }) : stored;
+  const { bytes: content } = dataSet.value;
+  const located = walkBytes(locateFrames(dataSet.value, file.value, content.length), content);
+  if (!located.ok) return located;
+  const places = located.value[frame];
+  if (places === undefined) throw new RangeError(`no places for frame: ${frame}`);
+  if (!places.ok) return places;
+  const stored = await decodeFrameBytes(joinPlaces(content, places.value), image, codecs);
+  if (!stored.ok) return stored;
+  const unmarked = unmarkedPadding(stored.value, image.pixels);
+  const findings = unmarked === undefined ? image.findings : [...image.findings, unmarked];
+  return success({ image: { ...image, findings }, stored: stored.value });
 }
 
-function decodeNative(
-  { bytes, pixelData, littleEndian }: DataSet,
-  image: CtImage,
-  frame: number,
-): Result<StoredValues> {
-  const size = image.grid.rows * image.grid.columns * 2;
-  const start = (pixelData?.offset ?? 0) + frame * size;
-  if (start + size > bytes.length) {
-    return refuse(
-      'cut-pixels',
-      `The file ends at byte ${bytes.length}; its pixels go on to byte ${start + size}.`,
-    );
+/** The bytes of places, one after the other; a view where there is but one. */
+export function joinPlaces(bytes: Uint8Array, places: FramePlaces): Uint8Array {
+  const parts = places.map(({ offset, length }) => bytes.subarray(offset, offset + length));
+  const [only] = parts;
+  if (parts.length === 1 && only !== undefined) return only;
+  const whole = new Uint8Array(parts.reduce((sum, part) => sum + part.length, 0));
+  let at = 0;
+  for (const part of parts) {
+    whole.set(part, at);
+    at += part.length;
   }
-  return success(storedValues(bytes.subarray(start, start + size), image.pixels, !littleEndian));
-}
-
-async function decodeCompressed(
-  { bytes, pixelData }: DataSet,
-  { images }: ImageFile,
-  image: CtImage,
-  frame: number,
-  codecs: Codecs | undefined,
-): Promise<Result<StoredValues>> {
-  if (codecs === undefined) {
-    return refuse(
-      'no-decoder',
-      `There is no decoder for ${transferSyntaxInWords(image.transferSyntaxUid)} here.`,
-    );
-  }
-  const fragments = readFragments(bytes, pixelData?.offset ?? 0);
-  if (!fragments.ok) return fragments;
-  const coded = frameBytes(fragments.value, frame, images.length);
-  if (!coded.ok) return coded;
-  return decodeFrame(coded.value, image.grid, image.pixels, image.transferSyntaxUid, codecs);
+  return whole;
 }

@@ -1,11 +1,10 @@
-import { type Attributes, attributesOf } from './attributes.js';
-import type { DataSet } from './dataSet.js';
+import type { Attributes } from './attributes.js';
 import { layeredAttributes } from './layeredAttributes.js';
 
 const SHARED = 'x52009229';
 const PER_FRAME = 'x52009230';
 
-/** The macros whose attributes the bench reads (PS3.3 C.7.6.16.2, C.8.15.3), each a sequence of one item. */
+/** The macros whose attributes the bench reads (PS3.3 C.7.6.16.2, C.7.6.18.2, C.8.15.3), each a sequence of one item. */
 const MACROS = [
   'x00289110', // Pixel Measures
   'x00209113', // Plane Position (Patient)
@@ -24,14 +23,10 @@ const MACROS = [
  * Attributes of each frame of an enhanced multi-frame image: its own functional groups, then the shared ones, then
  * the top level. Undefined when the file has no functional groups.
  */
-export function frameAttributes(dataSet: DataSet): readonly Attributes[] | undefined {
-  const top = attributesOf(dataSet);
-  const characterSet = top.text('x00080005') ?? '';
-  const macrosOf = (group: DataSet | undefined): Attributes[] =>
-    MACROS.flatMap((macro) => group?.items(macro)?.slice(0, 1) ?? []).map((item) =>
-      attributesOf(item, characterSet),
-    );
-  const shared = macrosOf(dataSet.items(SHARED)?.[0]);
-  const frames = dataSet.items(PER_FRAME);
+export function frameAttributes(top: Attributes): readonly Attributes[] | undefined {
+  const macrosOf = (group: Attributes | undefined): Attributes[] =>
+    MACROS.flatMap((macro) => group?.items(macro)?.slice(0, 1) ?? []);
+  const shared = macrosOf(top.items(SHARED)?.[0]);
+  const frames = top.items(PER_FRAME);
   return frames?.map((frame) => layeredAttributes([...macrosOf(frame), ...shared, top]));
 }

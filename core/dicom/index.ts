@@ -1,6 +1,12 @@
 export type { Codecs, CodedImage, FrameDecoder } from './compressed/codecs.js';
+export type { ByteWalk } from './compressed/fragments.js';
+export type { FramePlaces } from './compressed/framesOfFragments.js';
 export * from './ctImage.js';
-export * from './decodeImage.js';
+export { decodeFrameBytes } from './decodeFrameBytes.js';
+export { type DecodedImage, type DecodeOptions, decodeImage } from './decodeImage.js';
+export { frameWalkOf } from './frameWalkOf.js';
+export { isReadWhole, isSameInstance } from './isReadWhole.js';
+export type { FrameWalk } from './locateFrames.js';
 export * from './readHeader.js';
 export type { StoredValues } from './storedValues.js';
 export { SOP_CLASS, sopClassInWords, TRANSFER_SYNTAX, transferSyntaxInWords } from './uids.js';

@@ -12,7 +12,11 @@ export function layeredAttributes(layers: readonly Attributes[]): Attributes {
     integer: (tag) => owner(tag)?.integer(tag),
     unsignedShort: (tag) => owner(tag)?.unsignedShort(tag),
     signedShort: (tag) => owner(tag)?.signedShort(tag),
+    unsignedLong: (tag) => owner(tag)?.unsignedLong(tag),
     float: (tag) => owner(tag)?.float(tag),
     double: (tag) => owner(tag)?.double(tag),
+    items: (tag) => owner(tag)?.items(tag),
+    // Items gather their findings with those of the data set around them: the last layer has them all.
+    findings: () => layers[layers.length - 1]?.findings() ?? [],
   };
 }

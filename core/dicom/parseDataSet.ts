@@ -3,6 +3,7 @@ import { type Result, refuse, success } from '../result.js';
 import { type DataSet, tagInWords } from './dataSet.js';
 import { inflateRaw } from './inflate.js';
 import { isKnownVr } from './recover/vr.js';
+import { isRegular } from './regularity.js';
 import { TRANSFER_SYNTAX } from './uids.js';
 
 const PIXEL_DATA = 'x7fe00010';
@@ -13,7 +14,8 @@ const UNDEFINED_LENGTH = 0xffffffff;
  *
  * @param bytes the file, or as much of its beginning as has been read
  * @returns refused with the tag and offset where the bytes stop making sense; for a part of a file that may
- *   only mean that more of it is needed
+ *   only mean that more of it is needed. Refused as `irregular` where the standard is broken in a way that the
+ *   parser does not see.
  */
 export function parseDataSet(bytes: Uint8Array): Result<DataSet> {
   let inflated: Result<Uint8Array> | undefined;
@@ -27,9 +29,12 @@ export function parseDataSet(bytes: Uint8Array): Result<DataSet> {
   };
   try {
     const parsed = dicomParser.parseDicom(bytes, { untilTag: PIXEL_DATA, inflater } as object);
-    const wrong = firstImpossible(parsed);
-    if (wrong !== undefined) return wrong;
-    return success(fromParsed(parsed, syntaxOf(parsed)));
+    const syntax = syntaxOf(parsed);
+    const explicitVr = syntax !== TRANSFER_SYNTAX.implicitLittleEndian;
+    if (!isRegular(parsed, explicitVr) || (!explicitVr && looksExplicit(parsed))) {
+      return refuse('irregular', 'The data set breaks the rules of the standard.');
+    }
+    return success(fromParsed(parsed, syntax));
   } catch (thrown) {
     if (inflated !== undefined && !inflated.ok) return inflated;
     return refuseThrown(thrown, bytes.length);
@@ -38,6 +43,17 @@ export function parseDataSet(bytes: Uint8Array): Result<DataSet> {
 
 function syntaxOf(parsed: ParsedDataSet): string | undefined {
   return parsed.string('x00020010')?.trim();
+}
+
+/** The first element behind the meta information has letters of a VR where an implicit one has its length. */
+function looksExplicit({ elements, byteArray }: ParsedDataSet): boolean {
+  for (const key in elements) {
+    const element = elements[key];
+    if (element === undefined || element.parser !== undefined) continue;
+    const [a = 0, b = 0] = byteArray.subarray(element.dataOffset - 4, element.dataOffset - 2);
+    return isKnownVr(String.fromCharCode(a, b));
+  }
+  return false;
 }
 
 function fromParsed(parsed: ParsedDataSet, transferSyntaxUid: string | undefined): DataSet {
@@ -67,30 +83,6 @@ function fromParsed(parsed: ParsedDataSet, transferSyntaxUid: string | undefined
 
 function emptyOf(parsed: ParsedDataSet): ParsedDataSet {
   return { ...parsed, elements: {} };
-}
-
-/** The parser lets three things pass that no data set may have; the first of them. */
-function firstImpossible(parsed: ParsedDataSet): Result<never> | undefined {
-  const { elements } = parsed;
-  for (const key in elements) {
-    const element = elements[key];
-    if (element === undefined || key === PIXEL_DATA || element.parser !== undefined) continue;
-    if (element.dataOffset + element.length > parsed.byteArray.length) {
-      return refuseCut(element, parsed.byteArray.length);
-    }
-    if (element.vr !== undefined && !isKnownVr(element.vr)) {
-      const tag = tagInWords(key);
-      return refuse('bad-vr', `${tag} has no valid value representation.`, { tag });
-    }
-    const mayBeOpen = element.vr === 'SQ' || element.vr === 'UN' || element.vr === undefined;
-    if (element.hadUndefinedLength === true && !mayBeOpen) {
-      const tag = tagInWords(key);
-      return refuse('undefined-length', `${tag} has no length, which only sequences may lack.`, {
-        tag,
-      });
-    }
-  }
-  return undefined;
 }
 
 function refuseCut(element: Element, size: number): Result<never> {

@@ -25,8 +25,13 @@ export function readIdentity(attributes: Attributes, studyInstanceUid: string): 
   };
 }
 
-/** Series and acquisition attributes, as the file has them. Percent phase is never computed from a trigger time. */
+/**
+ * Series and acquisition attributes, as the file has them; of a frame its own ones (PS3.3 C.7.6.16.2.2, C.7.6.18).
+ * Percent phase is never computed from a trigger time.
+ */
 export function readAcquisition(attributes: Attributes, seriesInstanceUid: string): Acquisition {
+  const frame = momentOf(attributes.text('x00189074'));
+  const whole = momentOf(attributes.text('x0008002a'));
   return {
     seriesInstanceUid,
     lossy: attributes.text('x00282110') === '01',
@@ -37,11 +42,14 @@ export function readAcquisition(attributes: Attributes, seriesInstanceUid: strin
       seriesTime: attributes.text('x00080031'),
       frameOfReferenceUid: attributes.text('x00200052'),
       kernelLabel: attributes.text('x00181210'),
-      acquisitionNumber: attributes.integer('x00200012'),
-      acquisitionDate: attributes.text('x00080022'),
-      acquisitionTime: attributes.text('x00080032'),
-      phasePercent: attributes.float('x00209241'),
-      triggerTimeMs: attributes.decimal('x00181060'),
+      acquisitionNumber: attributes.unsignedShort('x00209156') ?? attributes.integer('x00200012'),
+      acquisitionUid: attributes.text('x00080017'),
+      acquisitionDate: frame?.date ?? attributes.text('x00080022') ?? whole?.date,
+      acquisitionTime: frame?.time ?? attributes.text('x00080032') ?? whole?.time,
+      phasePercent: finite(attributes.float('x00209241')),
+      triggerTimeMs: attributes.decimal('x00181060') ?? finite(attributes.double('x00209153')),
+      nominalIntervalMs: attributes.decimal('x00181062') ?? finite(attributes.double('x00209251')),
+      temporalPosition: attributes.integer('x00200100') ?? attributes.unsignedLong('x00209128'),
       kvp: attributes.decimal('x00180060'),
       thicknessMm: attributes.decimal('x00180050'),
       contrastAgent: attributes.text('x00180010'),
@@ -51,4 +59,15 @@ export function readAcquisition(attributes: Attributes, seriesInstanceUid: strin
       reconstructionDiameterMm: attributes.decimal('x00181100'),
     }),
   };
+}
+
+/** A DT value (PS3.5 6.2) as date and time; undefined when it is too short for both. */
+function momentOf(text: string | undefined): { date: string; time: string } | undefined {
+  const match = /^(\d{8})(\d{2,6}(?:\.\d+)?)/.exec(text ?? '');
+  const [, date, time] = match ?? [];
+  return date === undefined || time === undefined ? undefined : { date, time };
+}
+
+function finite(value: number | undefined): number | undefined {
+  return value !== undefined && Number.isFinite(value) ? value : undefined;
 }

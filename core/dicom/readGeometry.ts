@@ -8,17 +8,31 @@ const COSINE_TOLERANCE = 1e-3;
 /** Rounding of a Decimal String's 16 characters stays below this; more than it is put right, with a finding. */
 const COSINE_ROUNDING = 1e-5;
 
+/** Largest slice that is read, bytes of stored values: 16384 × 16384. Headers that ask for more are damage. */
+const MOST_SLICE_BYTES = 2 ** 29;
+
+/** The pixel grid of a slice, and what was put right. */
+export interface GeometryReading {
+  readonly grid: SliceGrid;
+  readonly findings: readonly Finding[];
+}
+
 /**
  * The pixel grid of a slice from Image Position, Image Orientation and Pixel Spacing (PS3.3 C.7.6.2).
  * Nothing is invented: a missing or impossible value refuses the slice. Directions that are off by less
  * than 1e-3 are made unit and orthogonal.
  */
-export function readGeometry(
-  attributes: Attributes,
-): Result<{ grid: SliceGrid; findings: readonly Finding[] }> {
+export function readGeometry(attributes: Attributes): Result<GeometryReading> {
   const rows = attributes.unsignedShort('x00280010');
   const columns = attributes.unsignedShort('x00280011');
   if (!rows || !columns) return refuse('no-image', 'No image: Rows or Columns is missing or zero.');
+  const sliceBytes = rows * columns * 2;
+  if (sliceBytes > MOST_SLICE_BYTES) {
+    const gigabytes = (sliceBytes / 2 ** 30).toFixed(1);
+    return refuse('too-large', `${rows} × ${columns} pixels: one slice needs ${gigabytes} GB.`, {
+      tag: '(0028,0010)',
+    });
+  }
 
   const position = numbers(attributes, 'x00200032', 3);
   if (!position) return refuseMissing('Image Position (Patient)', '(0020,0032)');

@@ -1,13 +1,19 @@
-import type { Refusal } from '../result.js';
+import type { Finding, Refusal } from '../result.js';
 import type { CtImage } from './ctImage.js';
 import type { DataSet } from './dataSet.js';
-import { hasPreamble, NOT_DICOM, openDataSet } from './openDataSet.js';
+import { frameRemarks } from './frameRemarks.js';
+import { isDeflated } from './locateFrames.js';
+import { hasPreamble, isFinalRefusal, NOT_DICOM, openDataSet } from './openDataSet.js';
 import { type ImageFile, readImages } from './readImage.js';
-import { TRANSFER_SYNTAX } from './uids.js';
 
 /** What the beginning of a file tells: its CT slices, no slice and why, or that more of the file is needed. */
 export type HeaderReading =
-  | { readonly kind: 'image'; readonly images: readonly [CtImage, ...CtImage[]] }
+  | {
+      readonly kind: 'image';
+      readonly images: readonly [CtImage, ...CtImage[]];
+      /** Frames of the file that are no slices, and why. */
+      readonly leftOut?: readonly Finding[];
+    }
   | { readonly kind: 'leftOut'; readonly code: string; readonly text: string }
   | { readonly kind: 'needMore' };
 
@@ -29,7 +35,7 @@ export function readHeader(bytes: Uint8Array, fileSize: number): HeaderReading {
   if (bytes.length < 132 && !whole) return { kind: 'needMore' };
   const dataSet = openDataSet(bytes);
   if (!dataSet.ok) {
-    if (dataSet.refusal.code === NOT_DICOM.refusal.code) return leftOut(dataSet.refusal);
+    if (isFinalRefusal(dataSet.refusal.code)) return leftOut(dataSet.refusal);
     if (!whole) return { kind: 'needMore' };
     return leftOut(hasPreamble(bytes) ? dataSet.refusal : NOT_DICOM.refusal);
   }
@@ -40,27 +46,41 @@ export function readHeader(bytes: Uint8Array, fileSize: number): HeaderReading {
     const mayGoOn = !whole && !saysAnotherKind && pixelData === undefined;
     return mayGoOn ? { kind: 'needMore' } : leftOut(file.refusal);
   }
-  const headEnds = (pixelData?.offset ?? 0) + CODE_STREAM_HEAD;
   if (file.value.inFragments) {
-    if (!whole && headEnds > bytes.length) return { kind: 'needMore' };
-    return { kind: 'image', images: file.value.images };
+    if (!whole && codeStreamHeadEnds(dataSet.value) > bytes.length) return { kind: 'needMore' };
+    return imageReading(file.value);
   }
   const size = isDeflated(file.value) ? dataSet.value.bytes.length : fileSize;
-  const end = nativeEnd(dataSet.value, file.value);
-  if (end > size) {
-    return leftOut({
-      code: 'cut-pixels',
-      text: `The file ends at byte ${size}; its pixels go on to byte ${end}.`,
-    });
-  }
-  return { kind: 'image', images: file.value.images };
+  return withinFile(dataSet.value, file.value, size);
 }
 
-function isDeflated({ images }: ImageFile): boolean {
-  return images[0].transferSyntaxUid === TRANSFER_SYNTAX.deflated;
+function imageReading({ images, leftOut }: Pick<ImageFile, 'images' | 'leftOut'>): HeaderReading {
+  return { kind: 'image', images, ...(leftOut.length > 0 && { leftOut }) };
 }
 
-function nativeEnd({ pixelData }: DataSet, { images }: ImageFile): number {
-  const { rows, columns } = images[0].grid;
-  return (pixelData?.offset ?? 0) + rows * columns * 2 * images.length;
+/** End of what the head of the first code stream may need, behind an offset table of any length. */
+function codeStreamHeadEnds({ bytes, pixelData }: DataSet): number {
+  const at = pixelData?.offset ?? 0;
+  if (at + 8 > bytes.length) return at + CODE_STREAM_HEAD;
+  const table = new DataView(bytes.buffer, bytes.byteOffset, bytes.length).getUint32(at + 4, true);
+  return at + table + CODE_STREAM_HEAD;
+}
+
+/** Native frames that the file ends before are left out; those before the cut are whole. */
+function withinFile({ pixelData }: DataSet, file: ImageFile, size: number): HeaderReading {
+  const { rows, columns } = file.images[0].grid;
+  const start = pixelData?.offset ?? 0;
+  const frameBytes = rows * columns * 2;
+  const endOf = ({ frame = 0 }: CtImage): number => start + (frame + 1) * frameBytes;
+  const [first, ...rest] = file.images.filter((image) => endOf(image) <= size);
+  const cut = file.images.filter((image) => endOf(image) > size);
+  const end = cut.reduce((most, image) => Math.max(most, endOf(image)), 0);
+  const text = `The file ends at byte ${size}; its pixels go on to byte ${end}.`;
+  if (first === undefined) return { kind: 'leftOut', code: 'cut-pixels', text };
+  const remarks = frameRemarks();
+  for (const { frame = 0 } of cut) remarks.add(frame, { code: 'cut-pixels', text });
+  return imageReading({
+    images: [first, ...rest],
+    leftOut: [...file.leftOut, ...remarks.findings()],
+  });
 }

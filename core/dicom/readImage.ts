@@ -1,13 +1,15 @@
 import { type Finding, type Result, refuse, success } from '../result.js';
 import { type Attributes, attributesOf } from './attributes.js';
-import { checkPixelData } from './checkPixelData.js';
+import { type CheckedPixels, checkPixelData } from './checkPixelData.js';
+import { correctEncoding } from './correctEncoding.js';
 import type { CtImage } from './ctImage.js';
 import type { DataSet } from './dataSet.js';
-import { frameAttributes } from './functionalGroups.js';
+import { frameRemarks } from './frameRemarks.js';
 import { readAcquisition, readIdentity } from './readAcquisition.js';
-import { readGeometry } from './readGeometry.js';
+import { readFrameList } from './readFrameList.js';
+import { type GeometryReading, readGeometry } from './readGeometry.js';
 import { type ImageKind, readKind } from './readKind.js';
-import { readPixels } from './readPixels.js';
+import { type PixelsReading, readPixels } from './readPixels.js';
 import { readWindows } from './readWindows.js';
 
 /** Texts in which a file may say that it is synthetic: study, series, derivation, image comments. */
@@ -17,6 +19,10 @@ const TELLING_TAGS = ['x00081030', 'x0008103e', 'x00082111', 'x00204000'] as con
 export interface ImageFile {
   readonly images: readonly [CtImage, ...CtImage[]];
   readonly inFragments: boolean;
+  /** Frames that the file states, those left out among them. */
+  readonly frameCount: number;
+  /** Frames that are no slices, and why. */
+  readonly leftOut: readonly Finding[];
 }
 
 /** The CT slices of a data set, or why the file has none that the bench can use. Pixels are not touched. */
@@ -26,110 +32,103 @@ export function readImages(dataSet: DataSet): Result<ImageFile> {
   if (!kind.ok) return kind;
   const frames = readFrameList(dataSet, attributes, kind.value);
   if (!frames.ok) return frames;
+  const { number } = frames.value;
+  const remarks = frameRemarks();
+  let checked: CheckedPixels | undefined;
   const images: CtImage[] = [];
-  let inFragments = false;
-  for (const [index, frame] of frames.value.attributes.entries()) {
-    const image = readOne(dataSet, frame, kind.value, frames.value);
-    if (!image.ok) return image;
-    inFragments = image.value.inFragments;
-    images.push(kind.value.enhanced ? { ...image.value.image, frame: index } : image.value.image);
+  for (let index = 0; index < number; index++) {
+    const frame = frames.value.attributes[index];
+    if (frame === undefined) {
+      remarks.add(index, {
+        code: 'frame-missing',
+        text: 'The file has no functional groups for it.',
+      });
+      continue;
+    }
+    const slice = readSlice(frame);
+    if (!slice.ok) {
+      if (!kind.value.enhanced) return slice;
+      remarks.add(index, slice.refusal);
+      continue;
+    }
+    if (checked === undefined) {
+      const { rows, columns } = slice.value.geometry.grid;
+      const { transferSyntaxUid } = kind.value;
+      const pixels = checkPixelData(dataSet, transferSyntaxUid, rows * columns * 2, number);
+      if (!pixels.ok) return pixels;
+      checked = pixels.value;
+    }
+    if (index >= checked.framesPresent) {
+      remarks.add(index, { code: 'frame-missing', text: 'Pixel Data ends before it.' });
+      continue;
+    }
+    const shared = [...dataSet.findings, ...frames.value.findings];
+    const image = imageOf(frame, slice.value, kind.value, checked, shared);
+    images.push(kind.value.enhanced ? { ...image, frame: index } : image);
   }
   const [first, ...rest] = images;
-  if (first === undefined) return refuse('no-image', 'No image: the file has no frames.');
-  return success({ images: [first, ...rest], inFragments });
+  if (first === undefined || checked === undefined) {
+    return remarks.refusal() ?? refuse('no-image', 'No image: the file has no frames.');
+  }
+  return success({
+    images: [first, ...rest],
+    inFragments: checked.inFragments,
+    frameCount: number,
+    leftOut: remarks.findings(),
+  });
 }
 
-interface FrameList {
-  readonly attributes: readonly Attributes[];
-  readonly findings: readonly Finding[];
+interface Slice {
+  readonly geometry: GeometryReading;
+  readonly encoding: PixelsReading;
 }
 
-/** One set of attributes a frame. Number of Frames is 1 when it is empty or zero. */
-function readFrameList(
-  dataSet: DataSet,
-  attributes: Attributes,
-  { enhanced }: ImageKind,
-): Result<FrameList> {
-  const stated = attributes.integer('x00280008');
-  const number = stated === undefined || stated < 1 ? 1 : stated;
-  if (!enhanced) {
-    if (number > 1) {
-      return refuse(
-        'frames-without-geometry',
-        `${number} frames in a single-frame CT image: there is no position for each of them.`,
-        { tag: '(0028,0008)' },
-      );
-    }
-    return success({ attributes: [attributes], findings: [] });
-  }
-  const frames = frameAttributes(dataSet);
-  if (frames === undefined || frames.length === 0) {
-    return refuse('no-geometry', 'No geometry: the functional groups of the frames are missing.', {
-      tag: '(5200,9230)',
-    });
-  }
-  if (frames.length < number) {
-    return refuse(
-      'frame-missing',
-      `${number} frames are stated, but only ${frames.length} have functional groups.`,
-      { tag: '(5200,9230)' },
-    );
-  }
-  const more: Finding[] =
-    stated !== number
-      ? [{ code: 'frames-not-stated', text: 'Number of Frames is empty or zero; 1 was read.' }]
-      : [];
-  return success({ attributes: frames.slice(0, number), findings: more });
-}
-
-function readOne(
-  dataSet: DataSet,
-  attributes: Attributes,
-  kind: ImageKind,
-  frames: FrameList,
-): Result<{ image: CtImage; inFragments: boolean }> {
+function readSlice(attributes: Attributes): Result<Slice> {
   if (isLocalizer(attributes)) return refuse('localizer', 'A localizer, not a slice.');
   const geometry = readGeometry(attributes);
   if (!geometry.ok) return geometry;
   const encoding = readPixels(attributes);
   if (!encoding.ok) return encoding;
-  const { grid } = geometry.value;
-  const checked = checkPixelData(
-    dataSet,
-    kind.transferSyntaxUid,
-    encoding.value.pixels,
-    grid.rows * grid.columns * 2 * frames.attributes.length,
-  );
-  if (!checked.ok) return checked;
+  return success({ geometry: geometry.value, encoding: encoding.value });
+}
+
+function imageOf(
+  attributes: Attributes,
+  { geometry, encoding }: Slice,
+  { sopClassUid }: ImageKind,
+  checked: CheckedPixels,
+  shared: readonly Finding[],
+): CtImage {
+  const { codeStream } = checked;
+  const corrected = codeStream && correctEncoding(encoding.pixels, codeStream);
   const uids = readUids(attributes);
-  if (!uids.ok) return uids;
   const windows = readWindows(attributes);
-  const stated = readAcquisition(attributes, uids.value.series);
-  const lossy = stated.lossy || checked.value.lossy;
+  const stated = readAcquisition(attributes, uids.series);
+  const lossy = stated.lossy || checked.lossy;
   const instanceNumber = attributes.integer('x00200013');
-  const image: CtImage = {
-    sopClassUid: kind.sopClassUid,
-    sopInstanceUid: uids.value.instance,
-    transferSyntaxUid: kind.transferSyntaxUid,
+  return {
+    sopClassUid,
+    sopInstanceUid: uids.instance,
+    transferSyntaxUid: checked.transferSyntaxUid,
     ...(instanceNumber !== undefined && { instanceNumber }),
     imageType: attributes.texts('x00089007') ?? attributes.texts('x00080008') ?? [],
     synthetic: TELLING_TAGS.some((tag) => /\bsynthetic\b/i.test(attributes.text(tag) ?? '')),
-    identity: readIdentity(attributes, uids.value.study),
+    identity: readIdentity(attributes, uids.study),
     acquisition: { ...stated, lossy },
-    grid,
-    pixels: checked.value.pixels,
+    grid: geometry.grid,
+    pixels: corrected?.pixels ?? encoding.pixels,
     windows: windows.windows,
     findings: [
-      ...dataSet.findings,
-      ...frames.findings,
-      ...geometry.value.findings,
-      ...encoding.value.findings,
-      ...checked.value.findings,
+      ...shared,
+      ...geometry.findings,
+      ...encoding.findings,
+      ...checked.findings,
+      ...(corrected ? [corrected.finding] : []),
       ...windows.findings,
       ...(lossy ? [LOSSY] : []),
+      ...attributes.findings(),
     ],
   };
-  return success({ image, inFragments: checked.value.inFragments });
 }
 
 const LOSSY: Finding = {
@@ -137,22 +136,17 @@ const LOSSY: Finding = {
   text: 'The image was compressed with loss: noise and edges are not the scanner’s.',
 };
 
+/** Value 3 of the image's or the frame's type (PS3.3 C.8.2.1.1.1, C.8.15.3.1.1). */
 function isLocalizer(attributes: Attributes): boolean {
   const type = attributes.texts('x00089007') ?? attributes.texts('x00080008');
   return type?.[2] === 'LOCALIZER';
 }
 
-function readUids(
-  attributes: Attributes,
-): Result<{ study: string; series: string; instance: string }> {
-  const study = attributes.text('x0020000d');
-  const series = attributes.text('x0020000e');
-  const instance = attributes.text('x00080018');
-  if (!study || !series || !instance) {
-    return refuse(
-      'no-uid',
-      'The study, series or instance UID is missing: the slice has no place.',
-    );
-  }
-  return success({ study, series, instance });
+/** Empty where the file has none: stacks give it one, with a finding (AWKWARD row 88). */
+function readUids(attributes: Attributes): { study: string; series: string; instance: string } {
+  return {
+    study: attributes.text('x0020000d') ?? '',
+    series: attributes.text('x0020000e') ?? '',
+    instance: attributes.text('x00080018') ?? '',
+  };
 }

@@ -2,10 +2,20 @@ import { type Finding, type Result, refuse, success } from '../result.js';
 import type { Attributes } from './attributes.js';
 import type { PixelEncoding } from './ctImage.js';
 
+/** How pixels are stored and what they mean, with what is odd about it. */
+export interface PixelsReading {
+  readonly pixels: PixelEncoding;
+  readonly findings: readonly Finding[];
+}
+
 /** How the pixels of a CT slice are stored (PS3.3 C.7.6.3) and what they mean (C.11.1, C.7.5.1.1.2). */
-export function readPixels(
-  attributes: Attributes,
-): Result<{ pixels: PixelEncoding; findings: readonly Finding[] }> {
+export function readPixels(attributes: Attributes): Result<PixelsReading> {
+  const isFloat = attributes.has('x7fe00008') || attributes.has('x7fe00009');
+  if (isFloat) {
+    return refuse('float-pixels', 'Not a CT slice: its pixels are floating-point numbers.', {
+      tag: attributes.has('x7fe00008') ? '(7FE0,0008)' : '(7FE0,0009)',
+    });
+  }
   const samples = attributes.unsignedShort('x00280002') ?? 1;
   const bitsAllocated = attributes.unsignedShort('x00280100');
   const photometric = attributes.text('x00280004') ?? '';
@@ -69,6 +79,11 @@ function readRescale(attributes: Attributes): {
   }
   const slope = attributes.decimal('x00281053');
   const intercept = attributes.decimal('x00281052');
+  const isNoNumber = (tag: string, value: number | undefined) =>
+    value === undefined && attributes.has(tag);
+  if (isNoNumber('x00281053', slope) || isNoNumber('x00281052', intercept)) {
+    return stored('bad-rescale', 'Rescale Slope or Intercept is no number: no HU.');
+  }
   if (slope === undefined || intercept === undefined) {
     return stored(
       'no-rescale',

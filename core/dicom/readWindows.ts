@@ -44,5 +44,11 @@ export function readWindows(attributes: Attributes): {
       ...(explanation && { explanation }),
     });
   }
+  if (windows.length === 0 && attributes.has('x00283010')) {
+    findings.push({
+      code: 'voi-lut',
+      text: 'The file has a lookup table for display in place of a window; a window is used.',
+    });
+  }
   return { windows, findings };
 }

@@ -4,8 +4,11 @@ export const SOP_CLASS = {
   enhancedCtImage: '1.2.840.10008.5.1.4.1.1.2.1',
 } as const;
 
+/** Media Storage Directory Storage: the index of a medium (PS3.3 F.2). */
+export const DICOMDIR = '1.2.840.10008.1.3.10';
+
 const OTHER_SOP_CLASSES: Readonly<Record<string, string>> = {
-  '1.2.840.10008.1.3.10': 'a DICOMDIR',
+  [DICOMDIR]: 'a DICOMDIR',
   '1.2.840.10008.5.1.4.1.1.2.2': 'a converted enhanced CT image',
   '1.2.840.10008.5.1.4.1.1.4': 'an MR image',
   '1.2.840.10008.5.1.4.1.1.7': 'a secondary capture',
@@ -47,10 +50,25 @@ const OTHER_TRANSFER_SYNTAXES: Readonly<Record<string, string>> = {
   '1.2.840.10008.1.2.4.81': 'JPEG-LS near-lossless',
   '1.2.840.10008.1.2.4.90': 'JPEG 2000 lossless',
   '1.2.840.10008.1.2.4.91': 'JPEG 2000',
+  '1.2.840.10008.1.2.4.94': 'JPIP, pixels elsewhere',
+  '1.2.840.10008.1.2.4.95': 'JPIP, pixels elsewhere, deflated',
+  '1.2.840.10008.1.2.4.100': 'MPEG-2 video',
+  '1.2.840.10008.1.2.4.101': 'MPEG-2 video',
+  '1.2.840.10008.1.2.4.102': 'MPEG-4 video',
+  '1.2.840.10008.1.2.4.103': 'MPEG-4 video',
+  '1.2.840.10008.1.2.4.104': 'MPEG-4 video',
+  '1.2.840.10008.1.2.4.105': 'MPEG-4 video',
+  '1.2.840.10008.1.2.4.106': 'MPEG-4 video',
+  '1.2.840.10008.1.2.4.107': 'HEVC video',
+  '1.2.840.10008.1.2.4.108': 'HEVC video',
+  '1.2.840.10008.1.2.4.110': 'JPEG XL lossless',
+  '1.2.840.10008.1.2.4.111': 'JPEG XL, recompressed JPEG',
+  '1.2.840.10008.1.2.4.112': 'JPEG XL',
   '1.2.840.10008.1.2.4.201': 'HTJ2K lossless',
   '1.2.840.10008.1.2.4.202': 'HTJ2K lossless, RPCL',
   '1.2.840.10008.1.2.4.203': 'HTJ2K',
   '1.2.840.10008.1.2.5': 'RLE lossless',
+  '1.2.840.113619.5.2': 'implicit VR with big-endian pixels, a private encoding',
 };
 
 /** True for the transfer syntaxes whose pixels are not compressed frame by frame (PS3.5 A.1, A.2, A.3, A.5). */

@@ -1,6 +1,6 @@
 import type { Stack } from '../stack/index.js';
 import { noteStack } from './noteStack.js';
-import type { Conditions, Evidence, Link, Note, NotePair, Study } from './schema.js';
+import type { Conditions, Evidence, Link, Note, NotePair, PairOverride, Study } from './schema.js';
 
 /** What a new note begins with. The caller gives clock and identifier, so that the same input makes the same note. */
 export interface NoteBeginning {
@@ -46,13 +46,22 @@ export function createNote(beginning: NoteBeginning): Note {
 export function notePair(
   soft: Stack,
   sharp: Stack | undefined,
-  { link, evidence }: { readonly link: Link; readonly evidence: readonly Evidence[] },
+  {
+    link,
+    evidence,
+    overrides = [],
+  }: {
+    readonly link: Link;
+    readonly evidence: readonly Evidence[];
+    readonly overrides?: readonly PairOverride[];
+  },
 ): NotePair {
   return {
     soft: noteStack(soft),
     sharp: sharp === undefined ? null : noteStack(sharp),
     link,
     evidence,
+    overrides,
   };
 }
 

@@ -28,6 +28,8 @@ export const RegionValueSchema = z.object({
   sliceIndex: z.number().int().nullable(),
   sliceOffsetMm: maybeNumber,
   sopInstanceUid: maybeText,
+  /** Notes of earlier versions have none: their images were all single ones. */
+  frameNumber: z.number().int().positive().nullable().default(null),
   standardErrorHu: maybeNumber,
   placementHu: maybeNumber,
   flags: z.array(remark),
@@ -57,11 +59,18 @@ export const EvidenceSchema = z.object({
 /** How the two plates are linked: by position in patient space, or by slice index when positions can't be compared. */
 export const LinkSchema = z.enum(['position', 'index']);
 
+/** What the reader answers for although the files differ in it, and why. Patient and phase can't be answered for. */
+export const PairOverrideSchema = z.object({
+  check: z.enum(['frame of reference', 'study']),
+  reason: z.string().regex(/\S/),
+});
+
 export const NotePairSchema = z.object({
   soft: NoteStackSchema,
   sharp: NoteStackSchema.nullable(),
   link: LinkSchema,
   evidence: z.array(EvidenceSchema),
+  overrides: z.array(PairOverrideSchema).default([]),
 });
 
 export const StudySchema = z.object({
@@ -158,6 +167,7 @@ export type NoteStack = Frozen<z.infer<typeof NoteStackSchema>>;
 export type Study = Frozen<z.infer<typeof StudySchema>>;
 export type Conditions = Frozen<z.infer<typeof ConditionsSchema>>;
 export type NotePair = Frozen<z.infer<typeof NotePairSchema>>;
+export type PairOverride = Frozen<z.infer<typeof PairOverrideSchema>>;
 export type Evidence = Frozen<z.infer<typeof EvidenceSchema>>;
 export type Link = Frozen<z.infer<typeof LinkSchema>>;
 export type Kernel = Frozen<z.infer<typeof KernelSchema>>;

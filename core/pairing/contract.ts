@@ -13,9 +13,11 @@ export type ReadSlice = (stack: Stack, sliceIndex: number) => Promise<StoredValu
 export interface Sharpness {
   /** False when the measure can't tell: then the order of soft and sharp is not measured. */
   readonly decided: boolean;
+  /** Which of the two that were given is the sharper; undefined when the measure can't tell. */
+  readonly sharper?: 'first' | 'second';
   /** Probability that the order is right, 0.5 to 1. */
   readonly confidence: number;
-  /** SD in uniform areas, HU; null where no such area was found. */
+  /** SD in uniform areas, HU; null where no such area was found. Undecided, 'soft' is the first and 'sharp' the second. */
   readonly noiseSoftHu: number | null;
   readonly noiseSharpHu: number | null;
   /** Mean frequency of the noise power spectrum, per mm. */

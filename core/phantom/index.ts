@@ -1,3 +1,4 @@
+export * from '../stableUid.js';
 export * from './backProject.js';
 export * from './backProjectPair.js';
 export * from './demonstration/index.js';
@@ -14,5 +15,4 @@ export * from './projectSlice.js';
 export * from './quantumNoise.js';
 export * from './reconstruct.js';
 export * from './scene.js';
-export * from './stableUid.js';
 export * from './uniformSource.js';

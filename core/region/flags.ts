@@ -14,6 +14,10 @@ export const FLAGS = {
     code: 'padding-inside',
     text: `${count} pixel(s) inside are padding and were left out: move the region off the border of the scan.`,
   }),
+  belowAir: {
+    code: 'unmarked-padding',
+    text: 'Pixels inside lie below −1500 HU and are no image, though the file does not mark them: move the region off the border of the scan.',
+  },
   overBorder: {
     code: 'over-border',
     text: 'The region reaches over the border of the image: only the part inside is measured.',

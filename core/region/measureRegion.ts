@@ -1,6 +1,6 @@
 import type { StoredValues } from '../dicom/index.js';
 import { add, type SliceGrid, scale } from '../geometry/index.js';
-import { isPadding, rescaled } from '../intensity/index.js';
+import { isPadding, LOWEST_IMAGE_HU, rescaled } from '../intensity/index.js';
 import type { Stack, StackSlice } from '../stack/index.js';
 import { shapeArea } from './area.js';
 import { moveShape } from './change.js';
@@ -69,6 +69,7 @@ function measureOnSlice(
   const { n, mean, sd, min, max, median } = statistics(values);
   const flags: Flag[] = [FLAGS.noStandardError];
   if (padding > 0) flags.push(FLAGS.paddingInside(padding));
+  if (min !== undefined && min < LOWEST_IMAGE_HU) flags.push(FLAGS.belowAir);
   if (overBorder) flags.push(FLAGS.overBorder);
   if (n === 0) flags.push(FLAGS.noPixels);
   if (n === 1) flags.push(FLAGS.onePixel);
@@ -87,6 +88,7 @@ function measureOnSlice(
     sliceIndex,
     sliceOffsetMm: offsetMm,
     sopInstanceUid: slice.image.sopInstanceUid,
+    frameNumber: frameNumber(slice),
     standardErrorHu: null,
     placementHu: mean === undefined ? null : placement(shape, slice, stored, mean),
     flags,
@@ -164,8 +166,14 @@ function withoutValue(
     sliceIndex,
     sliceOffsetMm,
     sopInstanceUid: slice?.image.sopInstanceUid ?? null,
+    frameNumber: frameNumber(slice),
     standardErrorHu: null,
     placementHu: null,
     flags: flags.map(({ code, text }) => ({ code, text })),
   };
+}
+
+function frameNumber(slice: StackSlice | null): number | null {
+  const frame = slice?.image.frame;
+  return frame === undefined ? null : frame + 1;
 }

@@ -24,6 +24,8 @@ export interface RegionValue {
   /** Distance from the region's plane to the slice, along the normal, signed, mm. */
   readonly sliceOffsetMm: number | null;
   readonly sopInstanceUid: string | null;
+  /** Frame of a multi-frame image, counted from 1 as DICOM does; null for an image of its own. */
+  readonly frameNumber: number | null;
   readonly standardErrorHu: number | null;
   readonly placementHu: number | null;
   readonly flags: readonly Flag[];

@@ -50,6 +50,8 @@ export interface KernelValues {
   readonly slices: number;
   readonly sliceOffsetMm: number | null;
   readonly sopInstanceUid: string | null;
+  /** From 1; null for an image of its own. */
+  readonly frameNumber: number | null;
   readonly flags: readonly string[];
 }
 
@@ -90,6 +92,7 @@ function regionRow(note: Note, region: NoteRegion): TableRow {
         slices: stack.slices,
         sliceOffsetMm: value?.sliceOffsetMm ?? null,
         sopInstanceUid: value?.sopInstanceUid ?? null,
+        frameNumber: value?.frameNumber ?? null,
         flags: value === null ? ['Not measured on this kernel.'] : spoken(value.flags),
       };
     }),
@@ -132,6 +135,7 @@ function contrastRow(note: Note, contrast: NoteContrast): TableRow {
       slices: stack.slices,
       sliceOffsetMm: null,
       sopInstanceUid: null,
+      frameNumber: null,
       flags: [],
     })),
     flags: spoken(contrast.flags),

@@ -1,4 +1,5 @@
 import type { Note } from '../note/schema.js';
+import { speaksAgainst } from '../pairing/checks.js';
 import { cautionsOf } from './cautions.js';
 
 /** Lines that go with a table on the clipboard: what the numbers are from, and the cautions that can't be left out. */
@@ -10,10 +11,7 @@ export function shortProvenance(note: Note): readonly string[] {
       ? `Soft: ${label(pair.soft.kernelLabel)}`
       : `Soft: ${label(pair.soft.kernelLabel)}; sharp: ${label(pair.sharp.kernelLabel)}`;
   const kvp = conditions.kvp === null ? 'tube voltage not stated' : `${conditions.kvp} kV`;
-  // Kernel labels are meant to differ, and stand in the line before.
-  const doubts = pair.evidence.filter(
-    ({ check, state }) => state !== 'agrees' && check !== 'kernel label',
-  );
+  const doubts = pair.evidence.filter(speaksAgainst);
   return [
     `${kernels}; ${kvp}; ${software.name} ${software.version}; ${note.changedAt}; ${note.verification}, ${note.completion}.`,
     ...(pair.sharp === null || doubts.length === 0

@@ -31,6 +31,7 @@ const COLUMNS = [
   'centre_y_mm',
   'centre_z_mm',
   'sop_instance_uid',
+  'frame_number',
   'series_instance_uid',
   'flags',
   'kvp',
@@ -116,6 +117,7 @@ function valueLine(row: TableRow, kernel: KernelValues, quantity: QuantityValue 
     centre_y_mm: row.centreMm?.[1] ?? null,
     centre_z_mm: row.centreMm?.[2] ?? null,
     sop_instance_uid: kernel.sopInstanceUid,
+    frame_number: kernel.frameNumber,
     series_instance_uid: kernel.seriesInstanceUid,
     flags: [...kernel.flags, ...row.flags].join(' '),
   };

@@ -141,10 +141,11 @@ function remarkLine(row: TableRow, columns: number): string {
 }
 
 /** Which image a kernel's values are from. */
-function sliceText({ kernel, sliceOffsetMm, sopInstanceUid }: KernelValues): string {
+function sliceText({ kernel, sliceOffsetMm, sopInstanceUid, frameNumber }: KernelValues): string {
   if (sopInstanceUid === null) return '';
   const offset = formatFixed(sliceOffsetMm, 2);
-  return `Image, ${kernel}: SOP Instance UID ${sopInstanceUid}, ${offset} mm from the region’s plane`;
+  const frame = frameNumber === null ? '' : `, frame ${frameNumber}`;
+  return `Image, ${kernel}: SOP Instance UID ${sopInstanceUid}${frame}, ${offset} mm from the region’s plane`;
 }
 
 function facts({ facts: all }: MeasurementTable): string {

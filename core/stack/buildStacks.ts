@@ -1,89 +1,72 @@
-import type { CtImage } from '../dicom/index.js';
 import { alongNormal } from '../geometry/index.js';
 import type { Finding } from '../result.js';
 import { groupKey, sameGridKind } from './grouping.js';
+import { folderOf, type IndexedImage } from './indexedImage.js';
+import { createLeaveOut, type LeaveOut } from './leaveOut.js';
+import { separateRepeats } from './separateRepeats.js';
 import { readSpacing } from './spacing.js';
 import type { LeftOut, Stack, StackSlice } from './stack.js';
 import { tiltDegrees } from './tilt.js';
-
-/** A CT slice and the file that holds it. */
-export interface IndexedImage {
-  readonly fileId: number;
-  readonly file: string;
-  readonly image: CtImage;
-}
-
-/** Positions closer than this are one place, mm. */
-const SAME_PLACE_MM = 1e-3;
+import { withoutCopies } from './withoutCopies.js';
+import { withoutLocalizers } from './withoutLocalizers.js';
+import { hasMadeUid, withUids } from './withUids.js';
 
 /**
  * Sorts slices into stacks. Order and spacing come from positions along the normal (PS3.3 C.7.6.2.1.1), never
- * from instance numbers, slice locations or thickness. A slice that stands where another of its stack stands
- * already is left out, with the reason.
+ * from instance numbers, slice locations or thickness. Slices that can't be told apart are not stacked at all.
+ *
+ * @param folderName name of the opened folder, for slices without UIDs
  */
-export function buildStacks(files: readonly IndexedImage[]): {
-  stacks: readonly Stack[];
-  leftOut: readonly LeftOut[];
-} {
-  const leftOut: LeftOut[] = [];
+export function buildStacks(
+  files: readonly IndexedImage[],
+  folderName = '',
+): { stacks: readonly Stack[]; leftOut: readonly LeftOut[] } {
+  const leaveOut = createLeaveOut();
+  const named = files.map((file) => withUids(file, folderName));
+  const groups = withoutLocalizers(groupSlices(withoutCopies(named, leaveOut)), leaveOut);
+  const bare = groups
+    .flatMap((members) => separateRepeats(members) ?? refuseRepeats(members, leaveOut))
+    .map(orderSlices)
+    .sort(inSeriesOrder);
+  return { stacks: nameStacks(bare), leftOut: leaveOut.all() };
+}
+
+type Slices = Stack['slices'];
+
+function groupSlices(files: readonly IndexedImage[]): readonly (readonly IndexedImage[])[] {
   const groups = new Map<string, IndexedImage[][]>();
-  for (const file of withoutCopies(files, leftOut)) {
-    const key = groupKey(file.image);
+  for (const file of files) {
+    const key = groupKey(file.image) + (hasMadeUid(file) ? folderOf(file) : '');
     const kinds = groups.get(key) ?? [];
     const kind = kinds.find(([first]) => first && sameGridKind(first.image, file.image));
     if (kind) kind.push(file);
     else kinds.push([file]);
     groups.set(key, kinds);
   }
-  const bare = [...groups.values()]
-    .flat()
-    .map((members) => orderSlices(members, leftOut))
-    .sort(inSeriesOrder);
-  return { stacks: nameStacks(bare), leftOut };
+  return [...groups.values()].flat();
 }
 
-type Slices = Stack['slices'];
-
-/** The same SOP instance a second time (AWKWARD row 15): the first in the order of the files stays. */
-function withoutCopies(files: readonly IndexedImage[], leftOut: LeftOut[]): IndexedImage[] {
-  const seen = new Map<string, string>();
-  return files.filter(({ file, image }) => {
-    const instance = `${image.sopInstanceUid} ${image.frame ?? 0}`;
-    const first = seen.get(instance);
-    if (first === undefined) {
-      seen.set(instance, file);
-      return true;
-    }
-    leftOut.push({ file, code: 'duplicate', text: `The same image as ${first}: left out.` });
-    return false;
-  });
+function refuseRepeats(members: readonly IndexedImage[], leaveOut: LeaveOut): readonly [] {
+  for (const { file } of members) {
+    leaveOut.add(file, {
+      code: 'repeated-positions',
+      text: `One of ${members.length} slices of its series of which several stand at one place, and nothing tells them apart: not stacked.`,
+    });
+  }
+  return [];
 }
 
-function orderSlices(members: readonly IndexedImage[], leftOut: LeftOut[]): Slices {
+function orderSlices(members: readonly IndexedImage[]): Slices {
   const [first, ...rest] = members;
   if (first === undefined) throw new RangeError('no members in a group');
-  const { grid } = first.image;
-  const place = (member: IndexedImage): StackSlice => ({
-    ...member,
-    alongMm: alongNormal(grid, member.image.grid.positionMm),
+  const place = ({ fileId, file, image }: IndexedImage): StackSlice => ({
+    fileId,
+    file,
+    image,
+    alongMm: alongNormal(first.image.grid, image.grid.positionMm),
   });
-  const ordered = [first, ...rest]
-    .map(place)
-    .sort((a, b) => a.alongMm - b.alongMm || (a.file < b.file ? -1 : 1));
-  const slices: StackSlice[] = [];
-  for (const slice of ordered) {
-    const before = slices[slices.length - 1];
-    if (before !== undefined && slice.alongMm - before.alongMm < SAME_PLACE_MM) {
-      leftOut.push({
-        file: slice.file,
-        code: 'same-position',
-        text: `A second image at the place of ${before.file} in its series: left out.`,
-      });
-    } else {
-      slices.push(slice);
-    }
-  }
-  return slices as unknown as Slices;
+  const ordered = [first, ...rest].map(place).sort((a, b) => a.alongMm - b.alongMm);
+  return ordered as unknown as Slices;
 }
 
 function inSeriesOrder([a]: Slices, [b]: Slices): number {
@@ -96,8 +79,12 @@ function inSeriesOrder([a]: Slices, [b]: Slices): number {
     compare(x.acquisition.seriesInstanceUid, y.acquisition.seriesInstanceUid) ||
     compare(x.acquisition.phasePercent ?? -1, y.acquisition.phasePercent ?? -1) ||
     compare(x.acquisition.acquisitionNumber ?? -1, y.acquisition.acquisitionNumber ?? -1) ||
+    compare(x.acquisition.triggerTimeMs ?? -1, y.acquisition.triggerTimeMs ?? -1) ||
+    compare(x.acquisition.temporalPosition ?? -1, y.acquisition.temporalPosition ?? -1) ||
+    compare(x.acquisition.acquisitionTime ?? '', y.acquisition.acquisitionTime ?? '') ||
     compare(a.alongMm, b.alongMm) ||
-    compare(groupKey(x), groupKey(y))
+    compare(groupKey(x), groupKey(y)) ||
+    compare(a.file, b.file)
   );
 }
 
@@ -122,6 +109,12 @@ function nameStacks(all: readonly Slices[]): Stack[] {
 function makeStack(key: string, slices: Slices, parts: number): Stack {
   const spacing = readSpacing(slices.map((slice) => slice.alongMm));
   const findings = [...sharedFindings(slices), ...spacing.findings];
+  if (numbersRepeat(slices)) {
+    findings.push({
+      code: 'instance-numbers',
+      text: 'Instance numbers repeat; the order is that of the positions.',
+    });
+  }
   const tilt = tiltDegrees(slices);
   if (tilt > 0) {
     findings.push({
@@ -139,6 +132,14 @@ function makeStack(key: string, slices: Slices, parts: number): Stack {
     unit: slices[0].image.pixels.unit,
     findings,
   };
+}
+
+/** Frames of one file share its number, which says nothing. */
+function numbersRepeat(slices: Slices): boolean {
+  const numbers = slices.flatMap(({ image }) =>
+    image.frame === undefined && image.instanceNumber !== undefined ? [image.instanceNumber] : [],
+  );
+  return new Set(numbers).size < numbers.length;
 }
 
 /** Findings of the slices, each once, with the number of slices where not all have it. */

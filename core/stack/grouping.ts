@@ -13,12 +13,14 @@ export function groupKey({ identity, acquisition, grid, pixels }: CtImage): stri
   return JSON.stringify([
     identity.patientId ?? '',
     identity.patientName ?? '',
+    identity.patientBirthDate ?? '',
     identity.studyInstanceUid,
     acquisition.seriesInstanceUid,
     acquisition.frameOfReferenceUid ?? '',
     acquisition.acquisitionNumber ?? null,
     acquisition.phasePercent ?? null,
-    acquisition.triggerTimeMs ?? null,
+    // A delay goes with the heart rate: it tells phases apart only where no percentage does.
+    acquisition.phasePercent === undefined ? (acquisition.triggerTimeMs ?? null) : null,
     acquisition.kernelLabel ?? '',
     grid.rows,
     grid.columns,

@@ -1,6 +1,7 @@
 import { COMMANDS, type CommandId } from '../../core/commands/index.js';
 import type { AppState } from '../state/appState.js';
 import { selectedRegion } from '../state/regionSelectors.js';
+import { linksOf } from '../state/selectors.js';
 
 /** Commands that need nothing opened. */
 const ALWAYS: ReadonlySet<CommandId> = new Set([
@@ -30,7 +31,13 @@ export function isEnabled(state: AppState, id: CommandId): boolean {
   const { pair, note } = state;
   if (pair === undefined || note === undefined) return false;
   if (HU_WINDOWS.has(id)) return pair.soft.unit === 'HU';
-  if (id.startsWith('link.')) return pair.sharp !== undefined;
+  if (id === 'link.scroll' || id === 'link.view') {
+    return pair.sharp !== undefined && state.compare.way === 'open';
+  }
+  if (id === 'link.window' || id === 'pair.swap') return pair.sharp !== undefined;
+  if (id.startsWith('compare.')) return pair.sharp !== undefined;
+  if (id.startsWith('alternate.')) return state.compare.way === 'alternate';
+  if (id === 'view.noiseAreas') return hasNoiseAreas(state);
   if (NEEDS_REGIONS.has(id)) return note.regions.length > 0;
   if (id === 'edit.undo') return state.history.undo.length > 0;
   if (id === 'edit.redo') return state.history.redo.length > 0;
@@ -44,9 +51,18 @@ export function isChecked(state: AppState, id: CommandId): boolean {
   if (id.startsWith('tool.')) return id === `tool.${state.tool}`;
   if (id.startsWith('role.')) return id === `role.${state.role}`;
   if (id === 'view.smooth') return state.smooth;
-  if (id === 'link.scroll') return state.links.scroll;
-  if (id === 'link.window') return state.links.window;
-  return id === 'link.view' && state.links.view;
+  if (id === 'view.noiseAreas') return state.noiseAreas && hasNoiseAreas(state);
+  if (id.startsWith('compare.')) {
+    return state.pair?.sharp !== undefined && id === `compare.${state.compare.way}`;
+  }
+  const links = linksOf(state);
+  if (id === 'link.scroll') return links.scroll;
+  if (id === 'link.window') return links.window;
+  return id === 'link.view' && links.view;
+}
+
+function hasNoiseAreas({ assessment }: AppState): boolean {
+  return assessment.kind === 'done' && assessment.measured.areas.length > 0;
 }
 
 export function enabledCommands(state: AppState): readonly CommandId[] {

@@ -4,11 +4,13 @@ import type { Note } from '../../core/note/index.js';
 import type { Role } from '../../core/region/index.js';
 import type { Shell } from '../host/shell.js';
 import type { Bench } from '../services/bench.js';
-import type { DialogId, Message, ToolId } from '../state/appState.js';
+import type { CompareWay, DialogId, Message, ToolId } from '../state/appState.js';
+import { setCompare, switchKernel } from '../state/changes/compare.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { removeSelected, setRole, stepSelection } from '../state/changes/regions.js';
 import { fitView, scrollBy, setWindow, toggleLink } from '../state/changes/view.js';
 import { redo, undo } from '../state/history.js';
+import { noiseAreasText } from '../state/noiseSelectors.js';
 import { stackOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import { zoomBy } from '../tools/zoomTool.js';
@@ -46,6 +48,7 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
   const role = (id: Role) => () => store.change('Choose role', setRole(id));
   const link = (which: 'scroll' | 'window' | 'view') => () =>
     store.change('Link', toggleLink(which));
+  const compare = (way: CompareWay) => () => store.change('Compare', setCompare(way));
   const preset = (id: 'vessel' | 'stent' | 'tissue' | 'lung') => () => {
     const window = PRESETS.find((one) => one.id === id)?.window;
     if (window !== undefined) store.change('Window', setWindow(store.now().active, window));
@@ -75,6 +78,9 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
       void bench.openDemonstration();
     },
     'pair.choose': dialog('choosePair'),
+    'pair.swap': () => {
+      void bench.swapPair();
+    },
     'folder.contents': dialog('contents'),
     'export.csv': save('csv'),
     'export.html': save('html'),
@@ -100,6 +106,20 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
     'view.zoomIn': zoom(ZOOM_STEP),
     'view.zoomOut': zoom(1 / ZOOM_STEP),
     'view.smooth': () => store.change('Smooth', (state) => ({ ...state, smooth: !state.smooth })),
+    'compare.open': compare('open'),
+    'compare.fold': compare('fold'),
+    'compare.alternate': compare('alternate'),
+    'compare.difference': compare('difference'),
+    'alternate.switch': () => store.change('Switch kernel', switchKernel),
+    // Held, it is the keyboard that shows the other kernel and takes it back; chosen from a menu it is a switch.
+    'alternate.hold': () => store.change('Switch kernel', switchKernel),
+    'view.noiseAreas': () =>
+      store.change('Outline noise areas', (state) => {
+        const noiseAreas = !state.noiseAreas;
+        const text = noiseAreas ? noiseAreasText(state) : undefined;
+        const message = text === undefined ? state.message : ({ tone: 'plain', text } as const);
+        return { ...state, noiseAreas, message };
+      }),
     'window.file': () => {
       const state = store.now();
       const image = stackOf(state, state.active)?.slices[0].image;

@@ -1,11 +1,17 @@
 import type { Engine } from '../engine.js';
 import { PANEL_ORDER } from '../panels/AppFrame.js';
+import { holdOther } from '../state/changes/compare.js';
 import { commandForKey } from './keyMap.js';
 
 /** Listens for the keys of commands, for F6, and for what is held in the middle of a drag. */
 export function connectKeyboard(engine: Engine, page: Document): void {
   const { store, run, machine, signal } = engine;
   const mac = /Mac/.test(navigator.platform);
+  let holding: string | undefined;
+  const letGo = (): void => {
+    holding = undefined;
+    store.change('Let go of the other kernel', holdOther(false));
+  };
   page.addEventListener(
     'keydown',
     (event) => {
@@ -31,6 +37,13 @@ export function connectKeyboard(engine: Engine, page: Document): void {
           letterKeys: store.now().settings.letterKeys,
         },
       );
+      if (command === 'alternate.hold' || isSpaceOnPlate(event)) {
+        if (store.now().compare.way !== 'alternate') return;
+        event.preventDefault();
+        holding = event.key;
+        store.change('Hold the other kernel', holdOther(true));
+        return;
+      }
       if (command === undefined) return;
       event.preventDefault();
       run(command);
@@ -41,9 +54,19 @@ export function connectKeyboard(engine: Engine, page: Document): void {
     'keyup',
     (event) => {
       if (event.key === 'Shift' || event.key === 'Alt') machine.modifiers(held(event));
+      // A key that went down with Shift can come up without: any case of the letter ends the hold.
+      if (event.key.toLowerCase() === holding?.toLowerCase()) letGo();
     },
     { signal },
   );
+  // When the window loses the keyboard the key's end is never told.
+  page.defaultView?.addEventListener('blur', letGo, { signal });
+}
+
+/** Space on the image itself; on a button it presses the button. */
+function isSpaceOnPlate({ key, target, ctrlKey, metaKey, altKey }: KeyboardEvent): boolean {
+  if (key !== ' ' || ctrlKey || metaKey || altKey) return false;
+  return target instanceof HTMLElement && target.classList.contains('plate-surface');
 }
 
 function held(event: KeyboardEvent): { readonly shift: boolean; readonly alt: boolean } {

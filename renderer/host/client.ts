@@ -44,7 +44,8 @@ export interface HostClient {
     onProgress: (progress: Progress) => void,
     signal: AbortSignal,
   ): Promise<Result<FolderIndex>>;
-  frame(grant: string, fileId: number): FrameRequest;
+  /** With a frame (from 0) of a multi-frame file, only that frame's encoded bytes. */
+  frame(grant: string, fileId: number, frame?: number): FrameRequest;
   demonstration(
     onProgress: (progress: Progress) => void,
     signal: AbortSignal,
@@ -103,12 +104,13 @@ export function createClient(origin: string, transport: Transport): HostClient {
       sendForJson(transport, { method: 'DELETE', url: api.recent.$url(), signal }),
     index: (grant, onProgress, signal) =>
       followJob(transport, { method: 'GET', url: indexUrl(grant), signal }, onProgress),
-    frame: (grant, fileId) => ({
-      url: folder.frames[':fileId'].$url({
+    frame: (grant, fileId, frame) => {
+      const url = folder.frames[':fileId'].$url({
         param: { grant: encoded(grant), fileId: String(fileId) },
-      }).href,
-      headers: requestHeaders(transport),
-    }),
+      });
+      if (frame !== undefined) url.searchParams.set('frame', String(frame));
+      return { url: url.href, headers: requestHeaders(transport) };
+    },
     demonstration: (onProgress, signal) =>
       followJob(transport, { method: 'POST', url: api.demonstration.$url(), signal }, onProgress),
     readNote: async (study, signal) => {

@@ -13,7 +13,7 @@ export interface HingeProps {
 export function Hinge({ verdict, ruler, readout }: HingeProps) {
   return (
     <section class="hinge" aria-label="Hinge: the pair, the position, the selected region">
-      <Verdict key={verdict.verdict} {...verdict} />
+      <Verdict {...verdict} />
       {ruler === undefined ? <div class="ruler" /> : <TwinRuler {...ruler} />}
       <PairedReadout {...readout} />
     </section>

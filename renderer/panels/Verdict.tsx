@@ -3,19 +3,22 @@ import type { Evidence } from '../../core/note/index.js';
 import { StateSign } from './parts/StateSign.js';
 
 export interface VerdictProps {
-  /** 'single' when one stack alone is read; 'none' before anything is chosen. */
-  readonly verdict: 'pair' | 'reservations' | 'refused' | 'single' | 'none';
-  /** One or two lines under the title: what was compared and measured. */
+  /** 'single' when one stack alone is read; 'measuring' until the measure is there; 'none' before anything is chosen. */
+  readonly verdict: 'pair' | 'reservations' | 'refused' | 'measuring' | 'single' | 'none';
+  /** A few lines under the title, reservations first: what was compared and measured. */
   readonly lines: readonly string[];
   readonly evidence: readonly Evidence[];
   /** The evidence is shown from the start. */
   readonly open?: boolean;
+  /** What can be done about it. */
+  readonly actions?: readonly { readonly label: string; readonly onClick: () => void }[];
 }
 
 const TITLES: Readonly<Record<VerdictProps['verdict'], string>> = {
   pair: 'One acquisition',
   reservations: 'One acquisition, with reservations',
   refused: 'Not one acquisition',
+  measuring: 'Being measured…',
   single: 'One reconstruction',
   none: 'No pair chosen',
 };
@@ -41,6 +44,15 @@ export function Verdict(props: VerdictProps) {
           {line}
         </p>
       ))}
+      {(props.actions?.length ?? 0) > 0 && (
+        <div class="actions">
+          {props.actions?.map(({ label, onClick }) => (
+            <button key={label} type="button" class="button outlined" onClick={onClick}>
+              {label}
+            </button>
+          ))}
+        </div>
+      )}
       {props.evidence.length > 0 && (
         <button
           type="button"
@@ -76,12 +88,14 @@ export function Verdict(props: VerdictProps) {
   );
 }
 
-/** Two leaves joined, joined with a break, or apart. */
-function VerdictSign({ verdict }: { readonly verdict: VerdictProps['verdict'] }) {
+/** Two leaves joined, joined with a break, or apart; one still in dashes while it is being measured. */
+export function VerdictSign({ verdict }: { readonly verdict: VerdictProps['verdict'] }) {
   const path = {
     pair: 'M1.5 2.5H5.5V11.5H1.5ZM7.5 2.5H11.5V11.5H7.5ZM5.5 7H7.5',
     reservations: 'M1.5 2.5H5.5V11.5H1.5ZM7.5 2.5H11.5V11.5H7.5Z',
     refused: 'M2 2.5 11 11.5M11 2.5 2 11.5',
+    measuring:
+      'M1.5 2.5H5.5V11.5H1.5ZM7.5 2.5h1.2m1.6 0h1.2v1.3m0 2v2m0 2v1.7h-1.2m-1.6 0h-1.2v-1.7m0-2v-2m0-2v-1.3',
     single: 'M3.5 2.5H9.5V11.5H3.5Z',
     none: 'M2.5 7H10.5',
   }[verdict];

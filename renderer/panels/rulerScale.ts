@@ -52,7 +52,7 @@ export function rulerScale(
 /** Ticks at least 3 px apart, by leaving out slices; gaps are kept whatever is left out. Positions ascend. */
 export function rulerTicks(positionsMm: readonly number[], scale: RulerScale): RulerTicks {
   const steps = positionsMm.slice(1).map((mm, i) => mm - (positionsMm[i] ?? mm));
-  const usual = steps.toSorted((a, b) => a - b)[Math.floor(steps.length / 2)] ?? 0;
+  const usual = steps.toSorted((a, b) => a - b)[(steps.length - 1) >> 1] ?? 0;
   const usualPx = Math.abs(scale.toPx(0) - scale.toPx(usual));
   const stride = [1, 2, 5, 10, 20, 50, 100].find((n) => n * usualPx >= LEAST_TICK_PX) ?? 200;
   const at = (index: number) => scale.toPx(positionsMm[index] ?? 0);

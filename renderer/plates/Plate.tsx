@@ -1,26 +1,36 @@
-import { useCallback, useEffect, useId, useRef } from 'preact/hooks';
+import { useEffect, useId, useMemo, useRef } from 'preact/hooks';
 import type { Kernel } from '../../core/note/index.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { selectRegion } from '../state/changes/regions.js';
 import { scrollBy } from '../state/changes/view.js';
+import {
+  isInterpolated,
+  kernelAt,
+  kernelOfFace,
+  type PlateFace,
+} from '../state/compareSelectors.js';
 import { stackOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import type { ToolPointer } from '../tools/tool.js';
 import type { ToolMachine } from '../tools/toolMachine.js';
 import { zoomBy } from '../tools/zoomTool.js';
-import type { StoredSlice } from '../volumes/volume.js';
+import { AlternateSwitch } from './AlternateSwitch.js';
+import { DifferenceScale } from './DifferenceScale.js';
+import { FoldEdge } from './FoldEdge.js';
+import { layersOf, type Stored } from './layers.js';
+import { NoiseAreas } from './NoiseAreas.js';
 import { PlateCanvas } from './PlateCanvas.js';
 import { PlateLabels } from './PlateLabels.js';
 import { PlateOverlay } from './PlateOverlay.js';
-import { plateContent } from './plateContent.js';
 import { plateDescription, plateName } from './plateDescription.js';
 import type { PlatePoint } from './platePoint.js';
 
 export interface PlateProps {
-  readonly kernel: Kernel;
+  /** One kernel, or both in one of the ways to compare. */
+  readonly face: PlateFace;
   readonly store: Store;
   readonly machine: ToolMachine;
-  readonly stored: (kernel: Kernel, index: number) => StoredSlice | undefined;
+  readonly stored: Stored;
   /** A key went down on the plate; true when it was used. */
   readonly onKey: (kernel: Kernel, event: KeyboardEvent) => boolean;
 }
@@ -31,44 +41,52 @@ const PIXELS_PER_SLICE = 60;
 const PIXELS_PER_E = 500;
 const PIXELS_PER_LINE = 20;
 
-/** One of the two images, with its marks, its words, its pointer tools and its keys. */
-export function Plate({ kernel, store, machine, stored, onKey }: PlateProps) {
+/** One of the two images, or both in one place, with its marks, its words, its pointer tools and its keys. */
+export function Plate({ face, store, machine, stored, onKey }: PlateProps) {
   const surface = useRef<HTMLDivElement>(null);
   const describedBy = useId();
-  const storedHere = useCallback((index: number) => stored(kernel, index), [kernel, stored]);
-  useWheel(surface, kernel, store);
+  const layers = useMemo(() => layersOf(face, stored), [face, stored]);
+  useWheel(surface, face, store);
 
-  const pointerOf = (event: PointerEvent): ToolPointer => ({
-    kernel,
-    point: placeOf(event),
-    shift: event.shiftKey,
-    alt: event.altKey,
-  });
+  const pointerOf = (event: PointerEvent): ToolPointer => {
+    const point = placeOf(event);
+    return {
+      kernel: kernelAt(store.now(), face, point.x),
+      point,
+      shift: event.shiftKey,
+      alt: event.altKey,
+    };
+  };
   const hover = (point: PlatePoint | undefined): void => {
-    store.change('Hover', (now) => ({ ...now, hover: point && { kernel, point } }));
+    store.change('Hover', (now) => ({
+      ...now,
+      hover: point && { kernel: kernelAt(now, face, point.x), point },
+    }));
   };
   const state = store.state.value;
-  const content = plateContent(state, kernel, storedHere, 1);
+  const kernel = kernelOfFace(state, face);
   const regions = state.note?.regions ?? [];
   return (
     // biome-ignore lint/a11y/noStaticElementInteractions: keys bubble up from the image and from its list of regions
     <div
       class="plate"
       onKeyDown={(event) => {
-        if (onKey(kernel, event)) {
+        if (onKey(kernelOfFace(store.now(), face), event)) {
           event.preventDefault();
           event.stopPropagation();
         }
       }}
-      onFocusIn={() => store.change('Plate chosen', (now) => ({ ...now, active: kernel }))}
+      onFocusIn={() =>
+        store.change('Plate chosen', (now) => ({ ...now, active: kernelOfFace(now, face) }))
+      }
     >
       <div
         class="plate-surface"
         ref={surface}
-        data-plate={kernel}
+        data-plate={face}
         data-tool={state.tool}
         role="application"
-        aria-label={plateName(state, kernel)}
+        aria-label={plateName(state, face)}
         aria-describedby={describedBy}
         // biome-ignore lint/a11y/noNoninteractiveTabindex: the arrow keys work on the image
         tabIndex={0}
@@ -89,18 +107,57 @@ export function Plate({ kernel, store, machine, stored, onKey }: PlateProps) {
         onLostPointerCapture={() => machine.interrupt()}
         onPointerLeave={() => hover(undefined)}
       >
-        <PlateCanvas kernel={kernel} store={store} stored={storedHere} />
+        {layers.map((layer) => (
+          <PlateCanvas
+            key={layer.name}
+            layer={layer}
+            store={store}
+            cut={face === 'fold' && layer.name === 'sharp' ? state.compare.foldAt : 0}
+            hidden={face === 'alternate' && layer.name !== kernel}
+          />
+        ))}
+        {state.noiseAreas && <NoiseAreas kernel={kernel} store={store} />}
         <PlateOverlay kernel={kernel} store={store} />
-        <PlateLabels kernel={kernel} store={store} />
-        {content.kind === 'words' && content.text !== '' && (
-          <p class="plate-words">{content.text}</p>
+        <PlateLabels face={face} store={store} />
+        {layers.map((layer) => {
+          const content = layer.contentOf(state, 1);
+          if (content.kind === 'slice' || content.text === '') return null;
+          if (face === 'alternate' && layer.name !== kernel) return null;
+          return (
+            <p key={layer.name} class="plate-words" data-face={face} data-layer={layer.name}>
+              {content.text}
+            </p>
+          );
+        })}
+        {face === 'fold' && <FoldEdge at={state.compare.foldAt} store={store} />}
+        {face === 'alternate' && (
+          <AlternateSwitch
+            shown={kernel}
+            resting={state.compare.resting}
+            letterKeys={state.settings.letterKeys}
+            store={store}
+          />
+        )}
+        {face === 'difference' && (
+          <DifferenceScale
+            rangeHu={state.compare.rangeHu}
+            interpolated={isInterpolated(state)}
+            store={store}
+          />
         )}
       </div>
       <p id={describedBy} class="visually-hidden">
-        {plateDescription(state, kernel)}
+        {plateDescription(state, face)}
       </p>
       {stackOf(state, kernel) !== undefined && regions.length > 0 && (
-        <ul class="visually-hidden" aria-label={`Regions on the ${kernel} plate`}>
+        <ul
+          class="visually-hidden"
+          aria-label={
+            face === 'soft' || face === 'sharp'
+              ? `Regions on the ${face} plate`
+              : 'Regions on the plate'
+          }
+        >
           {regions.map(({ id, label, place }) => (
             <li key={id}>
               <button
@@ -131,7 +188,7 @@ function placeOf(event: MouseEvent): PlatePoint {
 /** The wheel goes through the slices, with Ctrl it zooms. It must not be passive: the page would zoom with it. */
 function useWheel(
   surface: { readonly current: HTMLDivElement | null },
-  kernel: Kernel,
+  face: PlateFace,
   store: Store,
 ): void {
   useEffect(() => {
@@ -140,6 +197,7 @@ function useWheel(
     let turnedPx = 0;
     const onWheel = (event: WheelEvent): void => {
       event.preventDefault();
+      const kernel = kernelOfFace(store.now(), face);
       const isLines = event.deltaMode === WheelEvent.DOM_DELTA_LINE;
       const deltaPx = event.deltaY * (isLines ? PIXELS_PER_LINE : 1);
       if (event.ctrlKey || event.metaKey) {
@@ -159,5 +217,5 @@ function useWheel(
     };
     element.addEventListener('wheel', onWheel, { passive: false });
     return () => element.removeEventListener('wheel', onWheel);
-  }, [surface, kernel, store]);
+  }, [surface, face, store]);
 }

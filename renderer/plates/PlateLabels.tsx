@@ -1,8 +1,10 @@
 import type { Kernel } from '../../core/note/index.js';
-import { plateScale, shownSlice, stackOf } from '../state/selectors.js';
+import type { AppState } from '../state/appState.js';
+import { kernelOfFace, type PlateFace } from '../state/compareSelectors.js';
+import { otherKernel, plateScale, shownSlice, stackOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import { orientationLetters } from './orientationLetters.js';
-import { PlateLegend } from './PlateLegend.js';
+import { type FoldedSlice, PlateLegend } from './PlateLegend.js';
 import { positionText } from './positionText.js';
 import { scaleBar } from './scaleBar.js';
 
@@ -11,8 +13,9 @@ const BAR_SHARE = 0.22;
 const BAR_PX = 140;
 
 /** The words over a plate, from the state; none where there is no slice. */
-export function PlateLabels({ kernel, store }: { readonly kernel: Kernel; readonly store: Store }) {
+export function PlateLabels({ face, store }: { readonly face: PlateFace; readonly store: Store }) {
   const state = store.state.value;
+  const kernel = kernelOfFace(state, face);
   const stack = stackOf(state, kernel);
   const shown = shownSlice(state, kernel);
   if (stack === undefined || shown === undefined) return null;
@@ -24,6 +27,8 @@ export function PlateLabels({ kernel, store }: { readonly kernel: Kernel; readon
       kernel={kernel}
       image={image}
       window={window}
+      folded={face === 'fold' ? foldedSlice(state, otherKernel(kernel)) : undefined}
+      difference={face === 'difference'}
       position={positionText(image.grid, alongMm)}
       sliceIndex={shown.index}
       slices={stack.slices.length}
@@ -35,4 +40,10 @@ export function PlateLabels({ kernel, store }: { readonly kernel: Kernel; readon
       }
     />
   );
+}
+
+function foldedSlice(state: AppState, kernel: Kernel): FoldedSlice | undefined {
+  const shown = shownSlice(state, kernel);
+  if (shown === undefined) return undefined;
+  return { kernel, image: shown.slice.image, window: state.plates[kernel].window };
 }

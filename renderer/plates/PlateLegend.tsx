@@ -9,6 +9,10 @@ export interface PlateLegendProps {
   /** The slice on the plate. */
   readonly image: CtImage;
   readonly window: { readonly centre: number; readonly width: number };
+  /** What lies to the right on a folded plate. */
+  readonly folded?: FoldedSlice | undefined;
+  /** The plate shows sharp − soft: it has no window, and a scale of its own. */
+  readonly difference?: boolean;
   /** Position along the stack, with the letter of its axis where it is one of the patient's: 'z 10.0 mm'. */
   readonly position: string;
   /** From 0. */
@@ -18,16 +22,29 @@ export interface PlateLegendProps {
   readonly bar: ScaleBar | undefined;
 }
 
+/** The other kernel's slice on a folded plate. */
+export interface FoldedSlice {
+  readonly kernel: Kernel;
+  readonly image: CtImage;
+  readonly window: { readonly centre: number; readonly width: number };
+}
+
 /** The words over a plate: what it is, its window, where it is, which way is which. Labels stand as the file has them. */
 export function PlateLegend(props: PlateLegendProps) {
-  const { image, letters, bar } = props;
+  const { image, letters, bar, folded, difference = false } = props;
   return (
     <div class="plate-legend" aria-hidden="true">
       <div class="corner top-left">
-        <b>{props.kernel === 'soft' ? 'Soft' : 'Sharp'}</b>
-        {seriesText(image)}
+        <b>{difference ? 'Sharp − soft' : kernelName(props.kernel)}</b>
+        {!difference && seriesText(image)}
         <br />
         {spacingText(image)}
+        {folded !== undefined && !isSameWindow(props.window, folded.window) && (
+          <>
+            <br />
+            {windowText(props.window)}
+          </>
+        )}
         {image.synthetic && (
           <>
             <br />
@@ -35,9 +52,19 @@ export function PlateLegend(props: PlateLegendProps) {
           </>
         )}
       </div>
-      <div class="corner top-right">
-        C {formatFixed(props.window.centre, 0)} W {formatFixed(props.window.width, 0)}
-      </div>
+      {folded === undefined && !difference && (
+        <div class="corner top-right">{windowText(props.window)}</div>
+      )}
+      {folded !== undefined && (
+        <div class="corner top-right">
+          <b>{kernelName(folded.kernel)}</b>
+          {seriesText(folded.image)}
+          <br />
+          {spacingText(folded.image)}
+          <br />
+          {windowText(folded.window)}
+        </div>
+      )}
       <div class="corner bottom-left">
         {props.position} · slice {props.sliceIndex + 1} of {props.slices}
       </div>
@@ -53,6 +80,18 @@ export function PlateLegend(props: PlateLegendProps) {
       <span class="side bottom">{letters.bottom}</span>
     </div>
   );
+}
+
+function kernelName(kernel: Kernel): string {
+  return kernel === 'soft' ? 'Soft' : 'Sharp';
+}
+
+function windowText({ centre, width }: PlateLegendProps['window']): string {
+  return `C ${formatFixed(centre, 0)} W ${formatFixed(width, 0)}`;
+}
+
+function isSameWindow(a: PlateLegendProps['window'], b: PlateLegendProps['window']): boolean {
+  return a.centre === b.centre && a.width === b.width;
 }
 
 function seriesText({ acquisition }: CtImage): string {

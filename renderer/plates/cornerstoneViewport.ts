@@ -1,15 +1,12 @@
 import * as cornerstone from 'cornerstone-core';
-import type { PixelEncoding, VoiWindow } from '../../core/dicom/index.js';
-import { greyTable, mapGreys } from './greyTables.js';
+import { isSamePicture, type Picture, paint } from './picture.js';
 import type { PlateTransform } from './plateTransform.js';
 
 /** What a viewport is to show. */
 export interface ViewportContent {
   /** Names the slice and its pixels: another id means other pixels. */
   readonly id: string;
-  readonly stored: Int16Array | Uint16Array;
-  readonly pixels: PixelEncoding;
-  readonly window: VoiWindow;
+  readonly picture: Picture;
   readonly transform: PlateTransform;
   readonly smooth: boolean;
   /** Device pixels to the CSS pixel, for the canvas's own size. */
@@ -73,12 +70,13 @@ function createSurface(): Surface {
   let data: ImageData | undefined;
   let words: Uint32Array | undefined;
   let drawnId: string | undefined;
-  let drawnTable: Uint32Array | undefined;
+  let drawn: Picture | undefined;
   return {
-    drawn: ({ id, stored, pixels, window, transform: { grid } }) => {
-      const table = greyTable(pixels, window);
-      if (drawnId === id && drawnTable === table) return canvas;
-      const context = canvas.getContext('2d', { alpha: false, willReadFrequently: true });
+    drawn: ({ id, picture, transform: { grid } }) => {
+      if (drawnId === id && drawn !== undefined && isSamePicture(drawn, picture)) return canvas;
+      // A slice covers all of it; a difference leaves holes where there is no data. An element shows one kind only.
+      const alpha = picture.kind === 'difference';
+      const context = canvas.getContext('2d', { alpha, willReadFrequently: true });
       if (context === null) throw new Error('invalid canvas: it has no 2d context');
       if (data?.width !== grid.columns || data.height !== grid.rows) {
         canvas.width = grid.columns;
@@ -87,10 +85,10 @@ function createSurface(): Surface {
         words = undefined;
       }
       words ??= new Uint32Array(data.data.buffer);
-      mapGreys(stored, table, words);
+      paint(picture, words);
       context.putImageData(data, 0, 0);
       drawnId = id;
-      drawnTable = table;
+      drawn = picture;
       return canvas;
     },
   };
@@ -129,6 +127,9 @@ function viewportOf(transform: PlateTransform, devicePixelRatio: number): corner
   return viewport as unknown as cornerstone.Viewport;
 }
 
+/** The library never sees pixels: the drawing is ours, and it asks for none before it. */
+const NO_PIXELS = new Int16Array(0);
+
 function imageOf(
   content: ViewportContent,
   surface: Surface,
@@ -145,14 +146,14 @@ function imageOf(
     columnPixelSpacing: grid.pixelSpacingMm[1],
     slope: 1,
     intercept: 0,
-    windowCenter: content.window.centre,
-    windowWidth: content.window.width,
+    windowCenter: 0,
+    windowWidth: 1,
     minPixelValue: 0,
     maxPixelValue: 65535,
     color: false,
     invert: false,
-    sizeInBytes: content.stored.byteLength,
-    getPixelData: () => content.stored,
+    sizeInBytes: 2 * grid.rows * grid.columns,
+    getPixelData: () => NO_PIXELS,
     render: () => drawSlice(content, surface, enabled),
   };
   return image as unknown as cornerstone.Image;

@@ -3,6 +3,7 @@ import type { AppState } from '../state/appState.js';
 import { shownSlice, stackOf, transformOf } from '../state/selectors.js';
 import type { StoredSlice } from '../volumes/volume.js';
 import type { ViewportContent } from './cornerstoneViewport.js';
+import { isSamePicture } from './picture.js';
 
 /** What a plate has to show: a slice, or words that say why there is none. */
 export type PlateContent =
@@ -31,10 +32,13 @@ export function plateContent(
   return {
     kind: 'slice',
     content: {
-      id: shown.slice.image.sopInstanceUid,
-      stored: values,
-      pixels: shown.slice.image.pixels,
-      window: state.plates[kernel].window,
+      id: `${shown.slice.image.sopInstanceUid}#${shown.slice.image.frame ?? ''}`,
+      picture: {
+        kind: 'greys',
+        stored: values,
+        pixels: shown.slice.image.pixels,
+        window: state.plates[kernel].window,
+      },
       transform,
       smooth: state.smooth,
       devicePixelRatio,
@@ -47,9 +51,7 @@ export function isSameContent(a: PlateContent, b: PlateContent): boolean {
   if (a.kind === 'words' || b.kind === 'words') return a.kind === b.kind;
   const [x, y] = [a.content, b.content];
   return (
-    x.stored === y.stored &&
-    x.pixels === y.pixels &&
-    x.window === y.window &&
+    isSamePicture(x.picture, y.picture) &&
     x.smooth === y.smooth &&
     x.devicePixelRatio === y.devicePixelRatio &&
     x.transform.grid === y.transform.grid &&

@@ -23,24 +23,18 @@ export function Histogram(props: HistogramProps) {
     [props.soft, props.sharp],
   );
   return (
-    <section class="plot" aria-label="Histogram">
-      <div class="plot-head">
-        <h2>{props.label ?? 'Histogram'}</h2>
-        {props.label !== undefined && <span class="about">Histogram</span>}
-      </div>
-      <div class="plot-area" ref={ref}>
-        {histogram === undefined && (
-          <p class="empty">
-            {props.label === undefined
-              ? 'Select a region to see how its pixel values spread on both kernels.'
-              : 'This region holds no pixels that can be measured.'}
-          </p>
-        )}
-        {histogram !== undefined && size !== undefined && size.heightPx > 60 && (
-          <Picture {...props} histogram={histogram} {...size} />
-        )}
-      </div>
-    </section>
+    <div class="plot-area" ref={ref}>
+      {histogram === undefined && (
+        <p class="empty">
+          {props.label === undefined
+            ? 'Select a region to see how its pixel values spread on both kernels.'
+            : 'This region holds no pixels that can be measured.'}
+        </p>
+      )}
+      {histogram !== undefined && size !== undefined && size.heightPx > 60 && (
+        <Picture {...props} histogram={histogram} {...size} />
+      )}
+    </div>
   );
 }
 

@@ -34,7 +34,11 @@ export function beginNote(kept: Note | undefined, setting: NoteSetting): Note {
       ...described,
     });
   }
-  if (isSamePair(kept, pair)) return kept;
+  if (isSamePair(kept, pair)) {
+    const isAnsweredAlike = JSON.stringify(kept.pair.overrides) === JSON.stringify(pair.overrides);
+    if (isAnsweredAlike || kept.verification === 'VERIFIED') return kept;
+    return { ...kept, changedAt: now, pair: { ...kept.pair, overrides: [...pair.overrides] } };
+  }
   // Values of another stack would be wrong under this one's name: they go, and are measured anew.
   return {
     ...kept,
@@ -46,6 +50,8 @@ export function beginNote(kept: Note | undefined, setting: NoteSetting): Note {
   };
 }
 
-function isSamePair({ pair: kept }: Note, { soft, sharp }: PairState): boolean {
-  return kept.soft.key === soft.key && (kept.sharp?.key ?? undefined) === sharp?.key;
+/** The same stacks, linked alike: what is linked by number alone is not measured on the sharp stack. */
+function isSamePair({ pair: kept }: Note, { soft, sharp, link }: PairState): boolean {
+  const isSameSharp = (kept.sharp?.key ?? undefined) === sharp?.key;
+  return kept.soft.key === soft.key && isSameSharp && kept.link === link;
 }

@@ -1,32 +1,31 @@
 import type { OpenFolder } from '../../app/host/contract.js';
 import { defaultWindow } from '../../core/intensity/index.js';
-import type { Kernel, NoteRegion, RegionValues } from '../../core/note/index.js';
-import { headerEvidence } from '../../core/pairing/index.js';
-import { FLAGS, notMeasured, type Shape } from '../../core/region/index.js';
+import type { Kernel, PairOverride, RegionValues } from '../../core/note/index.js';
+import type { Shape } from '../../core/region/index.js';
 import type { Result } from '../../core/result.js';
 import type { Stack } from '../../core/stack/index.js';
 import type { HostClient, KeptNote } from '../host/client.js';
+import { type MeasuredPair, swappedPair } from '../pairing/measuredPair.js';
 import type { PairState } from '../state/appState.js';
-import { remeasured } from '../state/changes/remeasure.js';
+import { KEEP_MEASURED, swapPlates } from '../state/changes/assessment.js';
 import { showPair } from '../state/changes/view.js';
 import { NOTHING_LOADED, NOTHING_MARKED } from '../state/initialState.js';
 import type { Store } from '../state/store.js';
 import type { PairVolumes } from '../volumes/loadPair.js';
-import { createMeasureShape } from '../volumes/measureShape.js';
 import type { StoredSlice } from '../volumes/volume.js';
+import { areShown } from './areShown.js';
+import { createAssessment } from './assessment.js';
+import { createAssessor } from './assessor.js';
 import { type Autosave, createAutosave } from './autosave.js';
 import { beginNote } from './beginNote.js';
-import { changedValuesText } from './changedValuesText.js';
-import {
-  type Candidate,
-  candidateByOrder,
-  candidateOfNote,
-  studiesOf,
-  studyOf,
-} from './choosePair.js';
+import { type Candidate, studyOf } from './choosePair.js';
 import { createJobs } from './jobs.js';
 import { loadVolumes } from './loadVolumes.js';
+import { createMeasuring } from './measuring.js';
+import { createOpenFolder } from './openFolder.js';
 import { pairMessage } from './pairMessage.js';
+import { pairOf } from './pairOf.js';
+import { createFindPairs } from './proposals.js';
 
 export interface BenchOptions {
   readonly store: Store;
@@ -42,8 +41,20 @@ export interface BenchOptions {
 export interface Bench {
   openFolder(folder: OpenFolder): Promise<void>;
   openDemonstration(): Promise<void>;
-  /** Shows two stacks, or one alone, as the reader chose them. */
-  choosePair(soft: Stack, sharp: Stack | undefined): Promise<void>;
+  /** Shows two stacks, or one alone, as the reader chose them, with the reasons for what the files differ in. */
+  choosePair(
+    soft: Stack,
+    sharp: Stack | undefined,
+    overrides?: readonly PairOverride[],
+  ): Promise<void>;
+  /** Puts soft and sharp in each other's place, as the reader asked. */
+  swapPair(): Promise<void>;
+  /** Looks for pairs among the stacks of the folder, for the dialog. */
+  proposePairs(signal?: AbortSignal): Promise<void>;
+  /** Gives up the measuring of the pair. */
+  cancelAssessment(): void;
+  /** Measures the pair again. */
+  assessAgain(): void;
   /** Gives up the long work that is running. */
   cancelJob(): void;
   /** Stored values of a slice; undefined until it was read. */
@@ -72,50 +83,40 @@ export function createBench(options: BenchOptions): Bench {
     timeOfDay: options.timeOfDay,
     signal,
   });
-  store.watch((_name, after, before) => {
-    if (after.note !== before.note && after.note !== undefined) autosave.save(after.note);
+  store.watch((name, after, before) => {
+    if (after.note === before.note || after.note === undefined) return;
+    // Looking at a pair alone makes no note: its evidence is kept with the first mark, or where a note is kept already.
+    if (name === KEEP_MEASURED && after.save.kind === 'none') return;
+    autosave.save(after.note);
   });
 
-  const measureShape = createMeasureShape((volume, index) => {
-    const { pair, loading } = store.now();
-    const kernel = volume.stack === pair?.soft ? 'soft' : 'sharp';
-    return loading[kernel].gaps.has(index);
-  });
-  const measure = (shape: Shape): RegionValues => {
-    if (volumes === undefined) return { soft: null, sharp: null };
-    if (store.now().pair?.link !== 'index') return measureShape(shape, volumes);
-    const { soft } = measureShape(shape, { soft: volumes.soft, sharp: undefined });
-    const sharp = volumes.sharp && notMeasured(shape, FLAGS.positionsNotComparable);
-    return { soft, sharp: sharp ?? null };
-  };
-
-  const remeasure = (): void => {
-    const { note } = store.now();
-    if (note === undefined || note.verification === 'VERIFIED') return;
-    const result = remeasured(note, ({ shape }: NoteRegion) => measure(shape), now());
-    if (result.note === note) return;
-    const text = changedValuesText(result.changed);
-    store.change('Measure', (state) => ({
-      ...state,
-      note: result.note,
-      message: text === undefined ? state.message : { tone: 'warning', text },
-    }));
-  };
+  const { measure, remeasure } = createMeasuring(store, () => volumes, now);
 
   const warn = (text: string): void =>
     store.change('Warn', (state) => ({ ...state, message: { tone: 'warning', text } }));
 
   const jobs = createJobs(store, autosave, signal);
+  const assessor = createAssessor(client);
+  const findPairs = createFindPairs({ store, assessor, jobs });
+  const assessment = createAssessment({
+    store,
+    assessor,
+    now,
+    onWrongOrder: () => {
+      void swap('measure');
+    },
+  });
 
   const usePair = async (
     candidate: Candidate,
     chosenBy: PairState['chosenBy'],
-    found: Result<KeptNote | undefined> | undefined,
+    found?: Result<KeptNote | undefined>,
+    known?: MeasuredPair,
   ): Promise<void> => {
     const { soft, sharp } = candidate;
-    const header = sharp === undefined ? undefined : headerEvidence(soft, sharp);
-    if (header?.refusal !== undefined) {
-      const text = `${header.refusal}. Choose another pair.`;
+    const made = pairOf(candidate, chosenBy);
+    if (!made.ok) {
+      const { text } = made.refusal;
       store.change('Pair refused', (state) => ({
         ...state,
         dialog: 'choosePair',
@@ -123,19 +124,13 @@ export function createBench(options: BenchOptions): Bench {
       }));
       return;
     }
+    const pair = known === undefined ? made.value : { ...made.value, evidence: known.evidence };
     const grant = store.now().folder?.grant;
     if (grant === undefined) return;
     reading.abort();
     const mine = new AbortController();
     reading = mine;
     volumes = undefined;
-    const pair: PairState = {
-      soft,
-      sharp,
-      link: header?.link ?? 'position',
-      evidence: header?.evidence ?? [],
-      chosenBy,
-    };
     const { settings, version } = store.now();
     const asked = found ?? (await client.readNote(studyOf(soft), signal));
     // While the note was on its way another pair may have been chosen.
@@ -155,6 +150,8 @@ export function createBench(options: BenchOptions): Bench {
       ...NOTHING_MARKED,
       pair,
       note,
+      assessment: known === undefined ? { kind: 'none' } : { kind: 'done', measured: known },
+      compare: { ...state.compare, way: 'open', held: false },
       loading: { soft: NOTHING_LOADED, sharp: NOTHING_LOADED },
       dialog: undefined,
       message: pairMessage(pair),
@@ -162,56 +159,48 @@ export function createBench(options: BenchOptions): Bench {
     const window = defaultWindow(soft.slices[0].image);
     const sharpWindow = sharp === undefined ? window : defaultWindow(sharp.slices[0].image);
     store.change('Show the middle', showPair({ soft: window, sharp: sharpWindow }));
+    const life = AbortSignal.any([mine.signal, signal]);
+    let isAssessed = known !== undefined;
     const loaded = loadVolumes({
       store,
       client,
       grant,
       pair,
-      onSlices: remeasure,
-      signal: AbortSignal.any([mine.signal, signal]),
+      onSlices: () => {
+        remeasure();
+        // The first images come before anything is measured on others.
+        if (isAssessed || !areShown(store.now(), volumes)) return;
+        isAssessed = true;
+        assessment.begin(pair, grant, life);
+      },
+      signal: life,
     });
     if (loaded.ok) volumes = loaded.value;
     else warn(loaded.refusal.text);
   };
 
-  const openFolder = async (folder: OpenFolder): Promise<void> => {
-    const running = await jobs.begin('Looking through the folder');
-    if (running === undefined) return;
-    reading.abort();
-    volumes = undefined;
-    store.change('Open folder', (state) => ({
-      ...state,
-      ...NOTHING_MARKED,
-      folder,
-      index: undefined,
-      pair: undefined,
-      note: undefined,
-      dialog: undefined,
-      message: undefined,
-    }));
-    const found = await client.index(folder.grant, jobs.progress(running), running);
-    if (running.aborted) return;
-    jobs.end();
-    if (!found.ok) return warn(found.refusal.text);
-    const index = found.value;
-    store.change('Folder read', (state) => ({ ...state, index }));
-    const [study, ...others] = studiesOf(index.stacks);
-    if (study === undefined) {
-      store.change('Nothing to show', (state) => ({
-        ...state,
-        dialog: 'contents',
-        message: { tone: 'warning', text: 'This folder holds no CT images that can be shown.' },
-      }));
-      return;
-    }
-    const kept = others.length === 0 ? await client.readNote(study, running) : undefined;
-    if (running.aborted) return;
-    const note = kept?.ok ? kept.value?.note : undefined;
-    const ofNote = note === undefined ? undefined : candidateOfNote(note, index.stacks);
-    if (ofNote !== undefined) return usePair(ofNote, 'note', kept);
-    const byOrder = candidateByOrder(index.stacks);
-    if (byOrder !== undefined) return usePair(byOrder, 'order', kept);
-    store.change('Choose a pair', (state) => ({ ...state, dialog: 'choosePair' }));
+  const openFolder = createOpenFolder({
+    store,
+    client,
+    jobs,
+    findPairs,
+    usePair,
+    onClose: () => {
+      reading.abort();
+      volumes = undefined;
+    },
+  });
+
+  /** Soft and sharp change places; the plates stay where they are. */
+  const swap = async (chosenBy: 'measure' | 'reader'): Promise<void> => {
+    const { pair, plates, compare, assessment } = store.now();
+    if (pair?.sharp === undefined) return;
+    const known = assessment.kind === 'done' ? swappedPair(assessment.measured) : undefined;
+    const { soft, sharp, overrides } = pair;
+    await autosave.settled();
+    if (store.now().pair?.soft !== soft) return;
+    await usePair({ soft: sharp, sharp: soft, overrides }, chosenBy, undefined, known);
+    store.change('Places as before', (state) => ({ ...swapPlates(plates)(state), compare }));
   };
 
   return {
@@ -226,9 +215,21 @@ export function createBench(options: BenchOptions): Bench {
       if (made.ok) await openFolder(made.value);
       else warn(made.refusal.text);
     },
-    choosePair: async (soft, sharp) => {
+    choosePair: async (soft, sharp, overrides = []) => {
       await autosave.settled();
-      await usePair({ soft, sharp }, 'reader', undefined);
+      await usePair({ soft, sharp, overrides }, 'reader');
+    },
+    swapPair: () => swap('reader'),
+    proposePairs: async (given) => {
+      const { index, folder } = store.now();
+      if (index === undefined || folder === undefined) return;
+      await findPairs(index.stacks, folder.grant, given);
+    },
+    cancelAssessment: assessment.cancel,
+    assessAgain: () => {
+      const { pair, folder } = store.now();
+      if (pair === undefined || folder === undefined) return;
+      assessment.begin(pair, folder.grant, AbortSignal.any([reading.signal, signal]));
     },
     cancelJob: jobs.cancel,
     stored: (kernel, index) => volumes?.[kernel]?.slice(index),

@@ -1,11 +1,14 @@
-import type { Note } from '../../core/note/index.js';
+import type { Note, PairOverride } from '../../core/note/index.js';
 import { selectStack } from '../../core/note/index.js';
 import type { Stack } from '../../core/stack/index.js';
+import type { Proposal } from '../pairing/proposal.js';
 
 /** Two stacks, or one alone, that could be shown. */
 export interface Candidate {
   readonly soft: Stack;
   readonly sharp: Stack | undefined;
+  /** What the reader answers for although the files differ in it. */
+  readonly overrides?: readonly PairOverride[];
 }
 
 /** Study Instance UIDs of the stacks, each once, in the order of the stacks. */
@@ -42,5 +45,21 @@ export function candidateOfNote(note: Note, stacks: readonly Stack[]): Candidate
   if (!soft.ok) return undefined;
   if (note.pair.sharp === null) return { soft: soft.value, sharp: undefined };
   const sharp = selectStack(note.pair.sharp, stacks);
-  return sharp.ok ? { soft: soft.value, sharp: sharp.value } : undefined;
+  if (!sharp.ok) return undefined;
+  const { overrides } = note.pair;
+  return {
+    soft: soft.value,
+    sharp: sharp.value,
+    ...(overrides.length > 0 && { overrides }),
+  };
+}
+
+/** The stacks of a proposal; undefined when the folder does not have them. */
+export function candidateOfProposal(
+  { softKey, sharpKey }: Proposal,
+  stacks: readonly Stack[],
+): Candidate | undefined {
+  const soft = stacks.find(({ key }) => key === softKey);
+  const sharp = stacks.find(({ key }) => key === sharpKey);
+  return soft && sharp && { soft, sharp };
 }

@@ -78,6 +78,9 @@ function isReported(after: AppState, before: AppState): boolean {
     'role',
     'links',
     'smooth',
+    'compare',
+    'assessment',
+    'noiseAreas',
   ] as const satisfies readonly (keyof AppState)[];
   return keys.some((key) => after[key] !== before[key]);
 }

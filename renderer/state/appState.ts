@@ -7,9 +7,11 @@ import type {
 } from '../../app/host/contract.js';
 import type { VoiWindow } from '../../core/dicom/index.js';
 import type { Vec3 } from '../../core/geometry/index.js';
-import type { Evidence, Kernel, Link, Note } from '../../core/note/index.js';
+import type { Evidence, Kernel, Link, Note, PairOverride } from '../../core/note/index.js';
 import type { Role, Shape } from '../../core/region/index.js';
 import type { Stack } from '../../core/stack/index.js';
+import type { MeasuredPair } from '../pairing/measuredPair.js';
+import type { Proposal } from '../pairing/proposal.js';
 import type { PlatePoint } from '../plates/platePoint.js';
 
 export type ToolId = 'window' | 'move' | 'zoom' | 'ellipse' | 'outline';
@@ -30,9 +32,36 @@ export interface PairState {
   readonly sharp: Stack | undefined;
   readonly link: Link;
   readonly evidence: readonly Evidence[];
-  /** 'order' was chosen by series order and waits for the reader's look. */
-  readonly chosenBy: 'order' | 'reader' | 'note';
+  /** What the reader answers for although the files differ in it. */
+  readonly overrides: readonly PairOverride[];
+  /** 'order' was chosen by series order and waits for the measure or the reader's look; 'measure' was put in order by it. */
+  readonly chosenBy: 'order' | 'measure' | 'reader' | 'note';
 }
+
+/** How far the measuring of the pair is. Its evidence goes into the note when it is done. */
+export type Assessment =
+  | { readonly kind: 'none' }
+  | { readonly kind: 'running'; readonly progress: Progress }
+  | { readonly kind: 'done'; readonly measured: MeasuredPair }
+  | { readonly kind: 'failed'; readonly text: string };
+
+/** The four ways to compare; all but 'open' take one plate over the width of both. */
+export type CompareWay = 'open' | 'fold' | 'alternate' | 'difference';
+
+/** How the plates are compared. */
+export interface CompareState {
+  readonly way: CompareWay;
+  /** Where the edge of the fold stands, part of the plate's width; soft lies left of it. */
+  readonly foldAt: number;
+  /** The kernel that Alternate shows while no key is held. */
+  readonly resting: Kernel;
+  /** The key is held: the other kernel is shown. */
+  readonly held: boolean;
+  /** The difference's scale goes from −range to +range, HU. */
+  readonly rangeHu: number;
+}
+
+export type PlotId = 'histogram' | 'noise';
 
 export interface PlateSize {
   readonly widthPx: number;
@@ -123,6 +152,13 @@ export interface AppState {
   /** Long work of the host that is running. */
   readonly job: Progress | undefined;
   readonly pair: PairState | undefined;
+  /** Pairs that were found in the folder, best first; undefined until they were looked for. */
+  readonly proposals: readonly Proposal[] | undefined;
+  readonly assessment: Assessment;
+  readonly compare: CompareState;
+  /** The areas in which noise was measured are outlined on the plates. */
+  readonly noiseAreas: boolean;
+  readonly plot: PlotId;
   readonly plates: { readonly [K in Kernel]: PlateState };
   readonly active: Kernel;
   readonly loading: { readonly [K in Kernel]: LoadingState };

@@ -11,6 +11,11 @@ export function otherKernel(kernel: Kernel): Kernel {
   return kernel === 'soft' ? 'sharp' : 'soft';
 }
 
+/** What moves together. One plate that shows both kernels shows the same place of both, whatever is linked otherwise. */
+export function linksOf({ links, compare }: AppState): AppState['links'] {
+  return compare.way === 'open' ? links : { ...links, scroll: true, view: true };
+}
+
 /** The stack on a plate; undefined on an empty plate. */
 export function stackOf(state: AppState, kernel: Kernel): Stack | undefined {
   return kernel === 'soft' ? state.pair?.soft : state.pair?.sharp;
@@ -49,7 +54,7 @@ export function plateGrid(state: AppState, kernel: Kernel): SliceGrid | undefine
 export function plateScale(state: AppState, kernel: Kernel): number | undefined {
   const plate = state.plates[kernel];
   if (plate.scalePxPerMm !== 'fit') return plate.scalePxPerMm;
-  const kernels = state.links.view ? KERNELS : [kernel];
+  const kernels = linksOf(state).view ? KERNELS : [kernel];
   const scales = kernels.flatMap((each) => {
     const grid = plateGrid(state, each);
     const scale = grid === undefined ? undefined : fitScale(grid, state.plates[each].size);

@@ -1,7 +1,9 @@
 import type { VoiWindow } from '../../core/dicom/index.js';
+import type { AppState } from '../state/appState.js';
+import { setRange } from '../state/changes/compare.js';
 import { setWindow } from '../state/changes/view.js';
 import { clickSetsCaret } from './setCaret.js';
-import type { Tool } from './tool.js';
+import type { Gesture, Tool, ToolPointer, ToolPort } from './tool.js';
 
 /** A drag over this many CSS pixels doubles nothing and halves nothing: it moves by one width of the window. */
 const PIXELS_PER_WIDTH = 400;
@@ -19,6 +21,19 @@ export function draggedWindow(window: VoiWindow, rightPx: number, downPx: number
   };
 }
 
+/** On a difference the drag sets its scale: to the right wider. Its centre is zero and stays there. */
+function rangeGesture(port: ToolPort, start: ToolPointer, before: AppState): Gesture {
+  const { rangeHu } = before.compare;
+  return {
+    move: ({ point }) => {
+      const right = (point.x - start.point.x) / PIXELS_PER_WIDTH;
+      port.change('Scale of the difference', setRange(rangeHu * Math.exp(2 * right)));
+    },
+    complete: () => {},
+    cancel: () => port.change('Scale as before', setRange(rangeHu)),
+  };
+}
+
 export const windowTool: Tool = {
   id: 'window',
   click: clickSetsCaret,
@@ -26,6 +41,7 @@ export const windowTool: Tool = {
     const before = port.now();
     const { kernel } = start;
     const window = before.plates[kernel].window;
+    if (before.compare.way === 'difference') return rangeGesture(port, start, before);
     return {
       move: ({ point }) => {
         const right = point.x - start.point.x;

@@ -23,6 +23,10 @@ export function App({ engine }: { readonly engine: Engine }) {
 
 function Page() {
   const isSingle = useSelected(({ pair }) => pair !== undefined && pair.sharp === undefined);
+  const way = useSelected(({ pair, compare }) =>
+    pair?.sharp === undefined ? 'open' : compare.way,
+  );
+  const face = way === 'open' ? 'soft' : way;
   const theme = useSelected((state) => state.settings.theme);
   useEffect(() => {
     document.documentElement.dataset.theme = theme;
@@ -32,13 +36,13 @@ function Page() {
       <AppFrame
         header={<HeaderView />}
         tools={<ToolBarView />}
-        soft={<PlateView kernel="soft" />}
+        soft={<PlateView key={face} face={face} />}
         hinge={<HingeView />}
-        sharp={<PlateView kernel="sharp" />}
+        sharp={<PlateView face="sharp" />}
         ledger={<LedgerView />}
         plot={<PlotView />}
         status={<StatusView />}
-        plates={isSingle ? 'one' : 'two'}
+        plates={isSingle || way !== 'open' ? 'one' : 'two'}
       />
       <LiveRegion />
       <DialogsView />

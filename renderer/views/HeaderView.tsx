@@ -1,5 +1,5 @@
 import { COMMANDS, type Command, type CommandId } from '../../core/commands/index.js';
-import { enabledCommands } from '../commands/commandState.js';
+import { checkedCommands, enabledCommands } from '../commands/commandState.js';
 import { useEngine } from '../engine.js';
 import { Header, type SaveState as ShownSaveState } from '../panels/Header.js';
 import { identityText } from '../panels/identityText.js';
@@ -15,6 +15,7 @@ const EXPORTS = COMMANDS.filter(({ id }) => id.startsWith('export.'));
 const MORE: readonly CommandId[] = [
   'folder.contents',
   'folder.demonstration',
+  'pair.swap',
   'edit.undo',
   'edit.redo',
   'edit.copyTable',
@@ -22,6 +23,7 @@ const MORE: readonly CommandId[] = [
   'slice.region',
   'view.fit',
   'view.smooth',
+  'view.noiseAreas',
   'note.save',
   'edit.settings',
   'help.keys',
@@ -36,7 +38,7 @@ export function HeaderView() {
   const save = useSelected((state) => state.save);
   const leftOut = useSelected((state) => state.index?.leftOut.length);
   const enabled = useSelected((state) => enabledCommands(state).join(' '));
-  const smooth = useSelected((state) => state.smooth);
+  const checked = useSelected((state) => checkedCommands(state).join(' '));
   const canPair = useSelected((state) => (state.index?.stacks.length ?? 0) > 0);
   return (
     <Header
@@ -47,7 +49,7 @@ export function HeaderView() {
       exports={EXPORTS}
       canExport={note !== undefined}
       leftOut={leftOut}
-      more={moreItems(new Set(enabled.split(' ')), smooth)}
+      more={moreItems(new Set(enabled.split(' ')), new Set(checked.split(' ')))}
       keyNames={keyNames()}
       onOpenFolder={() => run('folder.open')}
       onChoosePair={() => run('pair.choose')}
@@ -59,13 +61,16 @@ export function HeaderView() {
   );
 }
 
-function moreItems(enabled: ReadonlySet<string>, smooth: boolean): readonly MenuItem[] {
+function moreItems(
+  enabled: ReadonlySet<string>,
+  checked: ReadonlySet<string>,
+): readonly MenuItem[] {
   return COMMANDS.filter(({ id }) => MORE.includes(id)).map((command: Command) => ({
     id: command.id,
     title: command.title,
     keyText: commandKeyText(command, keyNames(), true),
     disabled: !enabled.has(command.id),
-    ...(command.id === 'view.smooth' && { checked: smooth }),
+    ...(command.toggle === true && { checked: checked.has(command.id) }),
   }));
 }
 

@@ -10,6 +10,7 @@ import { goToRegion } from '../state/changes/goToRegion.js';
 import { selectRegion } from '../state/changes/regions.js';
 import { scrollTo } from '../state/changes/view.js';
 import { selectedRegion, sliceOf } from '../state/regionSelectors.js';
+import { linksOf } from '../state/selectors.js';
 import type { Change, Store } from '../state/store.js';
 import { useSelected } from './useSelected.js';
 import { verdictOf } from './verdict.js';
@@ -18,6 +19,7 @@ import { verdictOf } from './verdict.js';
 export function HingeView() {
   const { store, bench } = useEngine();
   const pair = useSelected((state) => state.pair);
+  const assessment = useSelected((state) => state.assessment);
   const note = useSelected((state) => state.note);
   const selected = useSelected((state) => state.selected);
   const draft = useSelected((state) => state.draft);
@@ -27,7 +29,11 @@ export function HingeView() {
   const state = { pair, note, selected, draft };
   return (
     <Hinge
-      verdict={verdictOf(pair)}
+      verdict={verdictOf(pair, assessment, {
+        onSwap: () => void bench.swapPair(),
+        onCancel: bench.cancelAssessment,
+        onMeasure: bench.assessAgain,
+      })}
       ruler={rulerOf(store, state, place)}
       readout={{ region: readoutOf(state, bench), unit: pair?.soft.unit ?? 'HU' }}
     />
@@ -57,8 +63,8 @@ function rulerOf(
 }
 
 /** Whether the ruler moves the sharp plate: it is active, not linked, and its positions can be stated on the ruler. */
-function movesSharp({ links, active, pair }: AppState): boolean {
-  return !links.scroll && active === 'sharp' && pair?.link === 'position';
+function movesSharp(state: AppState): boolean {
+  return !linksOf(state).scroll && state.active === 'sharp' && state.pair?.link === 'position';
 }
 
 /** Where the ruler's handle stands, mm along the soft stack; undefined beyond both stacks. */

@@ -33,7 +33,8 @@ export function LiveRegion() {
 function spoken(state: AppState): string {
   if (state.pair === undefined) return '';
   const region = selectedRegion(state);
-  const plate = plateName(state, state.active);
+  const { way } = state.compare;
+  const plate = plateName(state, way === 'open' ? state.active : way);
   if (region === undefined) return plate;
   const mean = (hu: number | null | undefined): string =>
     hu === null || hu === undefined ? 'no value' : `${hu.toFixed(1)}`;

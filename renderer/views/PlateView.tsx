@@ -3,17 +3,18 @@ import { ProgressLine } from '../dialogs/ProgressLine.js';
 import { useEngine } from '../engine.js';
 import { Welcome } from '../panels/Welcome.js';
 import { Plate } from '../plates/Plate.js';
+import type { PlateFace } from '../state/compareSelectors.js';
 import { giveUp, plateKey } from '../tools/plateKeys.js';
 import { useSelected } from './useSelected.js';
 
 /** One plate with its keys; before anything is open, the soft plate's place holds the welcome. */
-export function PlateView({ kernel }: { readonly kernel: Kernel }) {
+export function PlateView({ face }: { readonly face: PlateFace }) {
   const { store, machine, bench, port, run, folderDialog } = useEngine();
   const hasPair = useSelected((state) => state.pair !== undefined);
   const job = useSelected((state) => state.job);
   const recent = useSelected((state) => state.recent);
   if (!hasPair) {
-    if (kernel !== 'soft') return null;
+    if (face === 'sharp') return null;
     if (job !== undefined) {
       return (
         <div class="plate-job">
@@ -38,7 +39,5 @@ export function PlateView({ kernel }: { readonly kernel: Kernel }) {
     const { letterKeys } = store.now().settings;
     return plateKey(port, on, { key: event.key, shift: event.shiftKey, letterKeys });
   };
-  return (
-    <Plate kernel={kernel} store={store} machine={machine} stored={bench.stored} onKey={onKey} />
-  );
+  return <Plate face={face} store={store} machine={machine} stored={bench.stored} onKey={onKey} />;
 }

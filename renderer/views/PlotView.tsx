@@ -3,6 +3,8 @@ import type { Kernel } from '../../core/note/index.js';
 import { regionValues, type Shape } from '../../core/region/index.js';
 import { useEngine } from '../engine.js';
 import { Histogram } from '../plots/Histogram.js';
+import { NoisePlot } from '../plots/NoisePlot.js';
+import { PlotFrame } from '../plots/PlotFrame.js';
 import type { Bench } from '../services/bench.js';
 import type { AppState } from '../state/appState.js';
 import { selectedRegion, sliceOf, takesMarks } from '../state/regionSelectors.js';
@@ -11,8 +13,53 @@ import { useSelected } from './useSelected.js';
 
 const NONE = new Float64Array(0);
 
-/** The histogram of the selected region on both kernels; it stands still while a region is dragged. */
+/** The plots beside the ledger, one at a time. */
 export function PlotView() {
+  const { store } = useEngine();
+  const plot = useSelected((state) => state.plot);
+  const label = useSelected((state) => selectedRegion(state)?.label);
+  return (
+    <PlotFrame
+      title={plot === 'histogram' ? (label ?? 'Histogram') : 'Noise in uniform areas'}
+      plot={plot}
+      onPlot={(id) => store.change('Choose plot', (state) => ({ ...state, plot: id }))}
+    >
+      {plot === 'histogram' ? <HistogramView /> : <NoiseView />}
+    </PlotFrame>
+  );
+}
+
+/** The noise power spectra that were measured with the pair. */
+function NoiseView() {
+  const assessment = useSelected((state) => state.assessment);
+  const pair = useSelected((state) => state.pair);
+  return <NoisePlot {...noiseOf(pair, assessment)} />;
+}
+
+function noiseOf(
+  pair: AppState['pair'],
+  assessment: AppState['assessment'],
+): Parameters<typeof NoisePlot>[0] {
+  if (pair?.sharp === undefined) {
+    return { spectra: undefined, about: 'Choose a pair to compare the noise of its two kernels.' };
+  }
+  if (assessment.kind === 'failed') return { spectra: undefined, about: assessment.text };
+  if (assessment.kind !== 'done') {
+    return { spectra: undefined, about: 'The noise of both kernels is being measured…' };
+  }
+  const { spectra, areas } = assessment.measured;
+  const [soft, sharp] = [spectra[pair.soft.key], spectra[pair.sharp.key]];
+  if (soft === undefined || sharp === undefined) {
+    return {
+      spectra: undefined,
+      about: 'Too few uniform areas were found in both stacks to measure their noise.',
+    };
+  }
+  return { spectra: { soft, sharp }, about: `${areas.length} areas` };
+}
+
+/** The histogram of the selected region on both kernels; it stands still while a region is dragged. */
+function HistogramView() {
   const { store, bench } = useEngine();
   const region = useSelected(selectedRegion);
   const pair = useSelected((state) => state.pair);

@@ -1,11 +1,12 @@
+import type { CtImage } from '../../core/dicom/index.js';
 import type { FrameRequest } from '../host/client.js';
 
 /** What a worker needs to read one slice: where its bytes are, what must come out, and where to put it. */
 export interface DecodeRequest {
+  /** Of the whole file, or of the encoded frame alone where the slice is not read whole. */
   readonly frame: FrameRequest;
-  readonly sopInstanceUid: string;
-  readonly rows: number;
-  readonly columns: number;
+  /** The slice as the index has it. */
+  readonly image: CtImage;
   /** The volume's buffer, where it is shared; else the worker hands its own buffer over. */
   readonly target: { readonly buffer: SharedArrayBuffer; readonly offsetBytes: number } | undefined;
 }

@@ -3,7 +3,10 @@ import { findSlice, measureRegion, type RegionValue, type Shape } from '../../co
 import type { PairVolumes } from './loadPair.js';
 import type { StoredSlice, Volume } from './volume.js';
 
-/** Measures shapes on both stacks; what was measured once is remembered with the shape. */
+/**
+ * Measures shapes on both stacks; what was measured once is remembered with the shape, also when its slice
+ * was dropped since to make room for others.
+ */
 export type MeasureShape = (shape: Shape, volumes: PairVolumes) => RegionValues;
 
 interface Remembered {
@@ -25,9 +28,13 @@ export function createMeasureShape(
     const found = findSlice(shape, volume.stack);
     const index = found.ok ? found.value.sliceIndex : undefined;
     const stored = index === undefined ? undefined : volume.slice(index);
-    // A slice that is still to come has no value yet; a gap has one that says why there is none.
-    if (index !== undefined && stored === undefined && !isGap(volume, index)) return null;
     const known = memory.get(shape) ?? [];
+    // A slice that is still to come has no value yet; a gap has one that says why there is none.
+    if (index !== undefined && stored === undefined && !isGap(volume, index)) {
+      const before = known.find((entry) => entry.volume === volume && entry.stored !== undefined);
+      if (before === undefined) volume.ask(index);
+      return before?.value ?? null;
+    }
     const same = known.find((entry) => entry.volume === volume && entry.stored === stored);
     if (same !== undefined) return same.value;
     const value = measureRegion(shape, volume.stack, (slice) => volume.slice(slice));

@@ -1,7 +1,10 @@
 import { type Row, rowInWords } from './row.js';
 import { backProjection } from './rows/backProjection.js';
+import { decode } from './rows/decode.js';
+import { firstImage } from './rows/firstImage.js';
 import { folderIndex } from './rows/folderIndex.js';
 import { linkedScroll } from './rows/linkedScroll.js';
+import { memory } from './rows/memory.js';
 import { regionStatistics } from './rows/regionStatistics.js';
 import { windowMapping } from './rows/windowMapping.js';
 
@@ -10,6 +13,9 @@ const BENCHMARKS: readonly (() => Promise<Row | readonly Row[]>)[] = [
   regionStatistics,
   backProjection,
   folderIndex,
+  firstImage,
+  memory,
+  decode,
   linkedScroll,
 ];
 

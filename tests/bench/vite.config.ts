@@ -10,7 +10,11 @@ export default defineConfig({
     target: 'node20',
     minify: false,
     rolldownOptions: {
-      input: { bench: 'tests/bench/bench.ts' },
+      input: {
+        bench: 'tests/bench/bench.ts',
+        evidence: 'tests/bench/evidence.ts',
+        'decodeBench.worker': 'tests/bench/decodeBench.worker.ts',
+      },
       output: { entryFileNames: '[name].js' },
     },
   },

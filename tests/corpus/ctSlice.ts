@@ -28,7 +28,7 @@ export function ctSlice(options: CtSliceOptions = {}): Uint8Array {
 }
 
 /** The elements of {@link ctSlice}, ascending by tag. */
-export function ctElements(options: CtSliceOptions): readonly WriteElement[] {
+export function ctElements(options: CtSliceOptions = {}): readonly WriteElement[] {
   const { rows = 4, columns = 5, signed = true, z = 0, number = 1 } = options;
   const { series = `${CORPUS_ROOT}.2.1`, study = `${CORPUS_ROOT}.1` } = options;
   const stored =

@@ -65,6 +65,13 @@ export function GalleryDialog({ name }: { readonly name: string }) {
           choice={choice}
           preview={{ verdict: 'pair', lines: ['shift 0.02 mm'], evidence }}
           allowed
+          proposals={[]}
+          needsReason={[]}
+          reasons={{}}
+          onReason={nothing}
+          progress={undefined}
+          onCancel={nothing}
+          onPropose={nothing}
           onChange={setChoice}
           onConfirm={close}
           onClose={close}

@@ -17,6 +17,7 @@ export function value(meanHu: number, sdHu: number, n: number, areaMm2: number):
     sliceIndex: 20,
     sliceOffsetMm: 0,
     sopInstanceUid: '1.2.3',
+    frameNumber: null,
     standardErrorHu: null,
     placementHu: 4.1,
     flags: [],

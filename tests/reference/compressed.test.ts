@@ -34,6 +34,15 @@ describe.skipIf(!hasTools)('compressed frames (skipped without dcmtk, gdcm and p
     ['JPEG lossless SV1 by dcmtk', '1.2.840.10008.1.2.4.70', 'dcmcjpeg', ['+e1']],
     ['JPEG lossless SV1 by gdcm', '1.2.840.10008.1.2.4.70', 'gdcmconv', ['--jpeg']],
     ['JPEG lossless process 14 by dcmtk', '1.2.840.10008.1.2.4.57', 'dcmcjpeg', ['+el']],
+    ...[1, 2, 3, 4, 5, 7].map(
+      (predictor) =>
+        [
+          `JPEG lossless predictor ${predictor} by dcmtk`,
+          '1.2.840.10008.1.2.4.57',
+          'dcmcjpeg',
+          ['+el', '+sv', String(predictor)],
+        ] as const,
+    ),
     ['JPEG-LS by dcmtk', '1.2.840.10008.1.2.4.80', 'dcmcjpls', ['+el']],
     ['JPEG-LS by gdcm', '1.2.840.10008.1.2.4.80', 'gdcmconv', ['--jpegls']],
     ['JPEG 2000 lossless by gdcm', '1.2.840.10008.1.2.4.90', 'gdcmconv', ['--j2k']],
@@ -79,6 +88,13 @@ describe.skipIf(!hasTools)('compressed frames (skipped without dcmtk, gdcm and p
       expect(largestDifference(got.stored, (await decode(native)).stored)).toBeLessThanOrEqual(1);
     },
   );
+
+  it('refuses JPEG lossless with a point transform, which its decoder would read wrongly', async () => {
+    const file = join(folder, 'point transform.dcm');
+    execFileSync('/usr/bin/dcmcjpeg', ['+el', '+pt', '2', CT_SMALL, file], { stdio: 'ignore' });
+    const decoded = await decodeImage(new Uint8Array(readFileSync(file)), { codecs: nodeCodecs });
+    expect(!decoded.ok && decoded.refusal.code).toBe('unsupported-transfer-syntax');
+  });
 
   it('has the sign of the header where an unsigned JPEG 2000 stream carries signed words', async () => {
     // J2K_pixelrep_mismatch.dcm: pydicom gives −2000 … 1896.

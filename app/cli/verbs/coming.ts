@@ -1,9 +1,6 @@
 import { refuse } from '../../../core/result.js';
 import type { Verb } from '../verb.js';
 
-/** `pairs DIR`: not in this version. */
-export const pairsVerb = coming('pairs', 'Propose which stacks of a folder are a pair', ['DIR']);
-
 /** `recheck NOTE --in DIR`: not in this version. */
 export const recheckVerb = coming('recheck', 'Measure a note again', ['NOTE']);
 

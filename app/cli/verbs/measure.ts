@@ -8,7 +8,7 @@ import {
   selectStack,
   slicesNeeded,
 } from '../../../core/note/index.js';
-import { headerEvidence, reasonNotToMeasure } from '../../../core/pairing/index.js';
+import { headerEvidence, reasonNotToMeasure, speaksAgainst } from '../../../core/pairing/index.js';
 import { success } from '../../../core/result.js';
 import type { Stack } from '../../../core/stack/index.js';
 import { indexFolder } from '../../host/library/indexFolder.js';
@@ -82,7 +82,7 @@ function sayDoubts(soft: Stack, sharp: Stack, { say }: VerbContext): void {
     say('Soft and sharp are the same stack: the plan names one series twice.');
     return;
   }
-  for (const { state, text, check } of headerEvidence(soft, sharp).evidence) {
-    if (state === 'differs' && check !== 'kernel label') say(`The pair: ${visibleText(text)}.`);
+  for (const one of headerEvidence(soft, sharp).evidence) {
+    if (one.state === 'differs' && speaksAgainst(one)) say(`The pair: ${visibleText(one.text)}.`);
   }
 }

@@ -4,6 +4,7 @@ const STATUS = {
   'folder-not-opened': 404,
   'no-such-folder': 404,
   'no-such-file': 404,
+  'no-such-frame': 404,
   'unreadable-file': 403,
   'outside-folder': 403,
   vanished: 404,

@@ -2,20 +2,25 @@ import { availableParallelism } from 'node:os';
 import { setImmediate } from 'node:timers/promises';
 import { Piscina } from 'piscina';
 import { workerFile } from '../workerFile.js';
-import { type FileReading, readFileHeader } from './readFileHeader.js';
+import { readBatch } from './readBatch.js';
+import type { FileReading } from './readFileHeader.js';
 
 /** Reads headers of files by the batch. Rejects with an AbortError when its signal is aborted. */
 export interface HeaderReader {
+  /** Batches that keep it busy: more of them at once only wait. */
+  readonly lanes: number;
   read(paths: readonly string[], signal?: AbortSignal): Promise<readonly FileReading[]>;
+  /** Starts its threads, so that the first folder does not wait for them. */
+  warm(): Promise<void>;
   close(): Promise<void>;
 }
 
 /** A thread that has had nothing to read for so long ends, ms; until then the next folder finds it warm. */
 const IDLE_MS = 30_000;
 
-/** One thread less than there are processors, so that the host and the page keep theirs; four at most, one at least. */
+/** As many threads as there are processors, four at most: while headers are read the host and the page only wait. */
 export function usualThreads(): number {
-  return Math.max(1, Math.min(4, availableParallelism() - 1));
+  return Math.min(4, availableParallelism());
 }
 
 /** A reader with so many worker threads; with none it reads in this thread, and lets others in between batches. */
@@ -31,19 +36,27 @@ function threadedReader(threads: number): HeaderReader {
     idleTimeout: IDLE_MS,
   });
   return {
+    // One is read while the next one is on its way.
+    lanes: 2 * threads,
     read: (paths, signal) =>
       pool.run(paths, { name: 'readBatch', ...(signal === undefined ? {} : { signal }) }),
+    async warm() {
+      const empty = Array.from({ length: threads }, () => pool.run([], { name: 'readBatch' }));
+      await Promise.all(empty);
+    },
     close: () => pool.destroy(),
   };
 }
 
 function ownReader(): HeaderReader {
   return {
+    lanes: 1,
     async read(paths, signal) {
       await setImmediate();
       signal?.throwIfAborted();
-      return paths.map(readFileHeader);
+      return readBatch(paths);
     },
+    async warm() {},
     async close() {},
   };
 }

@@ -1,6 +1,2 @@
-import { type FileReading, readFileHeader } from './readFileHeader.js';
-
-/** Reads the headers of a batch of files, given by their paths, in a worker thread; the answers keep their order. */
-export function readBatch(paths: readonly string[]): readonly FileReading[] {
-  return paths.map(readFileHeader);
-}
+// The worker thread that reads the headers of a folder.
+export { readBatch } from './readBatch.js';

@@ -2,20 +2,32 @@ import { type Result, refuse, success } from '../../../core/result.js';
 import type { FolderIndex } from '../../../core/stack/index.js';
 import type { Grants } from '../folders/grants.js';
 import type { JobOptions } from '../services.js';
+import type { HeaderCache } from './headerCache.js';
 import { createHeaderReader, type HeaderReader, usualThreads } from './headerReader.js';
 import { type IndexedFolder, indexFolder } from './indexFolder.js';
 import { type OpenFrame, openFrame } from './openFrame.js';
 
 /** What the opened folders hold. */
 export interface Library {
+  /** Says that a folder is about to be read: the threads start while the page is still loading. */
+  warm(): Promise<void>;
   /** Reads a granted folder anew. Its files can be asked for from then on; numbers given before stay. */
   index(grant: string, options?: JobOptions): Promise<Result<FolderIndex>>;
   /** Opens a file by its number in the folder's index. Whoever gets it closes it. */
   open(grant: string, fileId: number): Promise<Result<OpenFrame>>;
 }
 
-/** A library over the granted folders. Its threads begin with the first index and end themselves when idle. */
-export function createLibrary(grants: Grants, threads = usualThreads()): Library {
+/** How a library reads: its worker threads, 0 for none, and what it keeps of folders that it has read. */
+export interface LibraryOptions {
+  readonly threads?: number | undefined;
+  readonly cache?: Pick<HeaderCache, 'read' | 'write'>;
+}
+
+/** A library over the granted folders. Its threads begin when they are needed first and end themselves when idle. */
+export function createLibrary(
+  grants: Grants,
+  { threads = usualThreads(), cache }: LibraryOptions = {},
+): Library {
   let kept: HeaderReader | undefined;
   const reader = (): HeaderReader => {
     kept ??= createHeaderReader(threads);
@@ -23,6 +35,7 @@ export function createLibrary(grants: Grants, threads = usualThreads()): Library
   };
   const indexes = new Map<string, Pick<IndexedFolder, 'root' | 'paths' | 'stamps'>>();
   return {
+    warm: () => reader().warm(),
     async index(grant, options = {}) {
       const folder = grants.find(grant);
       if (folder === undefined) return refuse('no-such-folder', NOT_OPEN);
@@ -31,6 +44,7 @@ export function createLibrary(grants: Grants, threads = usualThreads()): Library
         ...options,
         known,
         reader: reader(),
+        ...(cache !== undefined && { cache }),
       });
       if (!found.ok) return found;
       const { root, paths, stamps, ...index } = found.value;

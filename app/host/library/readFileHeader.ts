@@ -8,14 +8,23 @@ export interface FileStamp {
   readonly mtimeMs: number;
 }
 
-/** What the beginning of one file tells. The stamp is absent when the file could not be opened. */
+/** What tells a file from an earlier state of it, and from another file that took its name. */
+export interface FileState extends FileStamp {
+  /** Time of the last change of the file or of its attributes; no program sets it at will. */
+  readonly ctimeMs: number;
+  /** The file's number in its file system. */
+  readonly ino: number;
+}
+
+/** What the beginning of one file tells. */
 export interface FileReading {
   readonly reading: Exclude<HeaderReading, { kind: 'needMore' }>;
-  readonly stamp?: FileStamp;
+  /** Absent when the file could not be read: the reading then tells nothing of what it holds. */
+  readonly stamp?: FileState;
 }
 
 /** How much of a file is read, bytes: most headers end in the first 8 KiB. The last step is the whole file. */
-const STEPS = [8 << 10, 64 << 10, 1 << 20] as const;
+const STEPS = [8 << 10, 64 << 10, 1 << 20, 16 << 20] as const;
 
 /** A header that does not end in this many bytes is none (and a deflated file of this size is refused). */
 const MOST_BYTES = 512 << 20;
@@ -23,6 +32,9 @@ const MOST_BYTES = 512 << 20;
 /** Not through a link, and without waiting for the other end of a pipe. Both are 0 where the system has neither. */
 export const OPEN_FLAGS =
   constants.O_RDONLY | (constants.O_NOFOLLOW ?? 0) | (constants.O_NONBLOCK ?? 0);
+
+/** Where the beginnings of files are read, one after the other: nothing of it outlives a reading. */
+const SCRATCH = new Uint8Array(64 << 10);
 
 /** Reads the header of one file, with as few bytes as will do. Blocks: call it in a worker thread. */
 export function readFileHeader(path: string): FileReading {
@@ -33,14 +45,19 @@ export function readFileHeader(path: string): FileReading {
     return { reading: unreadable(error) };
   }
   try {
-    const { size, mtimeMs } = fstatSync(descriptor);
-    return { reading: readSteps(descriptor, size), stamp: { size, mtimeMs } };
+    const { size, mtimeMs, ctimeMs, ino } = fstatSync(descriptor);
+    const reading = readSteps(descriptor, size);
+    const failed = reading.kind === 'leftOut' && FAILED.has(reading.code);
+    return failed ? { reading } : { reading, stamp: { size, mtimeMs, ctimeMs, ino } };
   } catch (error) {
     return { reading: unreadable(error) };
   } finally {
     closeSync(descriptor);
   }
 }
+
+/** Reasons to leave a file out that lie in the moment, not in what the file holds. */
+const FAILED: ReadonlySet<string> = new Set(['file-shrank', 'reader-failed']);
 
 function readSteps(descriptor: number, size: number): FileReading['reading'] {
   if (size === 0) return leaveOut('empty-file', 'Empty file: it holds no bytes.');
@@ -65,7 +82,7 @@ function readChecked(bytes: Uint8Array, size: number): HeaderReading {
 }
 
 function readStart(descriptor: number, length: number): Uint8Array {
-  const bytes = new Uint8Array(length);
+  const bytes = length <= SCRATCH.length ? SCRATCH.subarray(0, length) : new Uint8Array(length);
   let filled = 0;
   while (filled < length) {
     const count = readSync(descriptor, bytes, filled, length - filled, filled);

@@ -64,12 +64,19 @@ export interface LosslessDecoder {
     readonly precision: number;
     readonly numComp: number;
   };
+  /** Predictions of the next sample of a component: from its left, from above, and number 7 of ITU-T T.81 table H.1. */
+  getPreviousX(component?: number): number;
+  getPreviousY(component?: number): number;
+  select7(component?: number): number;
 }
 
 /** A frame decoder of the JPEG lossless decoder, which is plain JavaScript. */
 export function losslessFrameDecoder(create: () => LosslessDecoder): FrameDecoder {
   return (codeStream): CodedImage => {
     const decoder = create();
+    // Its own keeps the half of an odd sum, which makes samples that wrap around wrong by one.
+    decoder.select7 = (component = 0) =>
+      (decoder.getPreviousX(component) + decoder.getPreviousY(component)) >> 1;
     const { buffer, byteOffset, length } = codeStream;
     const decoded = decoder.decode(buffer, byteOffset, length, 2);
     const { dimX, dimY, precision, numComp } = decoder.frame;

@@ -8,6 +8,8 @@ export interface CodeStreamHeader {
   readonly components: number;
   /** True when the coding itself loses information: the 9-7 wavelet, a near-lossless bound above 0, a DCT. */
   readonly lossy: boolean;
+  /** Low bits that JPEG lossless dropped before coding (ITU-T T.81 H.1.2.1); 0 for most. */
+  readonly pointTransform?: number;
 }
 
 const SOF_MARKERS = new Set([0xc0, 0xc1, 0xc2, 0xc3, 0xf7]);
@@ -92,8 +94,14 @@ function readJpeg(bytes: Uint8Array): CodeStreamHeader | undefined {
     if (marker === 0xda) {
       if (frame === undefined) return undefined;
       // NEAR stands behind the component selectors of a JPEG-LS scan.
-      const near = kind === SOF_JPEG_LS ? view.getUint8(at + 5 + 2 * view.getUint8(at + 4)) : 0;
-      return { ...frame, lossy: kind === SOF_JPEG_LS ? near > 0 : kind !== SOF_LOSSLESS };
+      const selectors = view.getUint8(at + 4);
+      const low = kind === SOF_LOSSLESS ? view.getUint8(at + 7 + 2 * selectors) & 0x0f : 0;
+      const near = kind === SOF_JPEG_LS ? view.getUint8(at + 5 + 2 * selectors) : 0;
+      return {
+        ...frame,
+        lossy: kind === SOF_JPEG_LS ? near > 0 : kind !== SOF_LOSSLESS || low > 0,
+        ...(low > 0 && { pointTransform: low }),
+      };
     }
     at += 2 + length;
   }

@@ -3,7 +3,7 @@ import type { PixelEncoding } from '../ctImage.js';
 import { extractStoredBits, type StoredValues } from '../storedValues.js';
 import { transferSyntaxInWords } from '../uids.js';
 import type { Codecs, CodedImage, FrameDecoder } from './codecs.js';
-import { codeStreamOf } from './codeStreamHeader.js';
+import { codeStreamOf, readCodeStreamHeader } from './codeStreamHeader.js';
 import { endsImage } from './fragments.js';
 import { decodeRle } from './rle.js';
 
@@ -57,17 +57,36 @@ export async function decodeFrame(
   if (!endsImage(stream)) {
     return refuse('cut-pixels', 'The compressed pixels are cut: their end mark is missing.');
   }
+  const head = readCodeStreamHeader(stream);
+  if (head !== undefined && (head.width !== size.columns || head.height !== size.rows)) {
+    return refuseSize(head.width, head.height, size);
+  }
+  if (head?.pointTransform !== undefined) {
+    return refuse(
+      'unsupported-transfer-syntax',
+      'JPEG lossless with dropped low bits (a point transform) can’t be read.',
+    );
+  }
   const coded = await tryDecode(await load(codecs), stream);
   if (!coded.ok) return coded;
   const { width, height, samples } = coded.value;
   if (width !== size.columns || height !== size.rows || samples.length !== count) {
-    return refuse(
-      'code-stream-damaged',
-      `The compressed pixels are ${width} × ${height}; the header says ${size.columns} × ${size.rows}.`,
-    );
+    return refuseSize(width, height, size);
   }
   const words = new Uint16Array(samples.buffer, samples.byteOffset, samples.length);
   return success(extractStoredBits(words, pixels));
+}
+
+/** Said before decoding where the stream's head tells: a decoder makes room for whatever size it is told. */
+function refuseSize(
+  width: number,
+  height: number,
+  size: { readonly rows: number; readonly columns: number },
+): Result<never> {
+  return refuse(
+    'code-stream-damaged',
+    `The compressed pixels are ${width} × ${height}; the header says ${size.columns} × ${size.rows}.`,
+  );
 }
 
 /** Decoders throw numbers, strings and errors for damage of the file; that is what they are for. */

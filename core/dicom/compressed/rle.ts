@@ -11,6 +11,10 @@ export function decodeRle(frame: Uint8Array, pixels: number): Result<Uint16Array
   if (frame.length < 64 || view.getUint32(0, true) !== 2) {
     return refuse('rle-damaged', 'RLE pixels can’t be read: two segments are expected.');
   }
+  // Two bytes give 128 at most: a frame that can't reach the pixels is told before room is made for them.
+  if (frame.length * 64 < pixels) {
+    return refuse('cut-pixels', `RLE pixels are cut: ${frame.length} bytes can't hold ${pixels}.`);
+  }
   const starts = [view.getUint32(4, true), view.getUint32(8, true)] as const;
   const words = new Uint16Array(pixels);
   const high = unpack(frame, starts[0], starts[1], pixels, (at, byte) => {

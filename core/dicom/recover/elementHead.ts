@@ -5,6 +5,7 @@ export const UNDEFINED_LENGTH = 0xffffffff;
 /** Head of a data element: where its value begins and how long it says to be. */
 export interface ElementHead {
   readonly tag: number;
+  /** As the file states it; the dictionary's, or UN, where the file states none or nonsense. */
   readonly vr: string;
   readonly at: number;
   readonly valueAt: number;
@@ -19,7 +20,7 @@ export interface Layout {
   readonly littleEndian: boolean;
 }
 
-/** Reads the head at an offset; undefined when the bytes end in it or its VR can't be told. */
+/** Reads the head at an offset; undefined when the bytes end in it or its length can't be told. */
 export function readHead(view: DataView, at: number, layout: Layout): ElementHead | undefined {
   if (at + 8 > view.byteLength) return undefined;
   const tag = readTag(view, at, layout);
@@ -29,7 +30,7 @@ export function readHead(view: DataView, at: number, layout: Layout): ElementHea
     const length = view.getUint32(at + 4, layout.littleEndian);
     return { tag, vr, at, valueAt: at + 8, length, guessed: false };
   }
-  const vr = String.fromCharCode(view.getUint8(at + 4), view.getUint8(at + 5));
+  const vr = vrLetters(view, at);
   if (isShortVr(vr)) {
     const length = view.getUint16(at + 6, layout.littleEndian);
     return { tag, vr, at, valueAt: at + 8, length, guessed: false };
@@ -62,17 +63,30 @@ function guessHead(
     if (next === view.byteLength) return true;
     if (next + 8 > view.byteLength) return false;
     const following = readTag(view, next, layout);
-    return following > tag && followsPlausibly(view, next);
+    if (following >>> 16 === 0xfffe) return true;
+    // Writers that know no VR repeat the same nonsense.
+    const letters = vrLetters(view, next);
+    return following > tag && (isKnownVr(letters) || letters === vrLetters(view, at));
   });
   if (form === undefined) return undefined;
   return { tag, vr: dictionaryVr(tag) ?? 'UN', at, ...form, guessed: true };
 }
 
-function followsPlausibly(view: DataView, at: number): boolean {
-  const vr = String.fromCharCode(view.getUint8(at + 4), view.getUint8(at + 5));
-  return isKnownVr(vr);
+/** The two letters where an explicit VR stands. */
+export function vrLetters(view: DataView, at: number): string {
+  return String.fromCharCode(view.getUint8(at + 4), view.getUint8(at + 5));
 }
 
 export function readTag(view: DataView, at: number, { littleEndian }: Layout): number {
   return view.getUint16(at, littleEndian) * 0x10000 + view.getUint16(at + 2, littleEndian);
+}
+
+/** Tag 0x00280010 as 'x00280010'. */
+export function tagKey(tag: number): string {
+  return `x${tag.toString(16).padStart(8, '0')}`;
+}
+
+/** True for the odd groups that belong to makers (PS3.5 7.8). */
+export function isPrivate(tag: number): boolean {
+  return ((tag >>> 16) & 1) === 1;
 }

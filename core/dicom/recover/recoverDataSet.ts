@@ -1,134 +1,77 @@
-import { type Finding, type Result, refuse, success } from '../../result.js';
-import {
-  type ElementHead,
-  type Layout,
-  readHead,
-  readTag,
-  UNDEFINED_LENGTH,
-} from './elementHead.js';
+import { type Result, success } from '../../result.js';
+import type { DataSet, ElementPlace } from '../dataSet.js';
+import { type ElementHead, type Layout, tagKey, UNDEFINED_LENGTH } from './elementHead.js';
 import { findLayout } from './findLayout.js';
-import { skipSequence } from './skipSequence.js';
+import { type Irregularities, noteIrregularities } from './irregularities.js';
+import { readItems } from './readItems.js';
+import { agreesWithDictionary, dictionaryVr } from './vr.js';
+import { walkElements } from './walkElements.js';
 
 const PIXEL_DATA = 0x7fe00010;
 
-/** One element of the top level, as it stands in the bytes. */
-export interface RecoveredElement {
-  readonly tag: number;
-  readonly vr: string;
-  readonly valueAt: number;
-  readonly length: number;
-}
-
-/** A data set that the ordinary parser does not read, walked element by element up to its Pixel Data. */
-export interface RecoveredDataSet {
-  readonly bytes: Uint8Array;
+/** A data set that the ordinary parser does not read. Its transfer syntax is as the file says, right or wrong. */
+export interface RecoveredDataSet extends DataSet {
   readonly layout: Layout;
-  readonly statedSyntax?: string;
-  readonly elements: readonly RecoveredElement[];
-  /** Head of Pixel Data; undefined when the data set ends without it. Length may be undefined (0xffffffff). */
-  readonly pixelData?: RecoveredElement;
-  readonly findings: readonly Finding[];
 }
 
 /**
- * Reads what others wrote wrongly but readably: no preamble, no or wrong transfer syntax, unknown VR, broken
- * private sequences. Only the top level; sequences are stepped over. Lengths are checked before anything is made.
+ * Reads what others wrote wrongly but readably: no preamble, no or wrong transfer syntax, unknown or wrong VR, odd
+ * lengths, broken private sequences. Lengths are checked before anything is made, and nothing recurs.
  */
 export function recoverDataSet(file: Uint8Array, hasPreamble: boolean): Result<RecoveredDataSet> {
-  const found = findLayout(file, hasPreamble);
+  const irregular = noteIrregularities();
+  const found = findLayout(file, hasPreamble, irregular);
   if (!found.ok) return found;
-  const { bytes, layout, start } = found.value;
+  const { bytes, layout, start, meta } = found.value;
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.length);
-  const elements: RecoveredElement[] = [];
-  let guessed = 0;
-  let at = start;
-  let pixelData: RecoveredElement | undefined;
-  while (at < bytes.length && pixelData === undefined) {
-    const head = readHead(view, at, layout);
-    if (head === undefined) return refuseHead(view, at, layout);
-    if (head.guessed) guessed++;
-    if (head.tag === PIXEL_DATA) {
-      pixelData = head;
-      break;
-    }
-    const end = endOf(view, head, layout);
-    if (!end.ok) return end;
-    if (head.length !== UNDEFINED_LENGTH) elements.push(head);
-    at = end.value;
-  }
-  const vrFinding: Finding = {
-    code: 'vr-guessed',
-    text: `${guessed} attribute(s) have no valid value representation; the dictionary was used.`,
-  };
-  return success({
-    bytes,
-    layout,
-    elements,
-    ...(found.value.statedSyntax !== undefined && { statedSyntax: found.value.statedSyntax }),
-    ...(pixelData && { pixelData }),
-    findings: guessed > 0 ? [...found.value.findings, vrFinding] : found.value.findings,
-  });
+  const walked = walkElements(view, start, layout, irregular, PIXEL_DATA);
+  if (!walked.ok) return walked;
+  const { elements } = walked.value;
+  const top = dataSetOf(bytes, elements, layout, irregular, meta.transferSyntaxUid);
+  const metaPlaces = new Map(meta.elements.map((head) => [tagKey(head.tag), placeOf(head)]));
+  return success({ ...top, find: (tag) => top.find(tag) ?? metaPlaces.get(tag), layout });
 }
 
-function endOf(view: DataView, head: ElementHead, layout: Layout): Result<number> {
-  const tag = tagWords(head.tag);
-  if (head.length !== UNDEFINED_LENGTH) {
-    if (head.length > view.byteLength - head.valueAt) {
-      return refuse('cut-header', `The file ends at byte ${view.byteLength}, inside ${tag}.`, {
-        tag,
-        offset: head.valueAt,
-      });
-    }
-    return success(head.valueAt + head.length);
-  }
-  if (head.vr !== 'SQ' && head.vr !== 'UN' && layout.explicitVr) {
-    return refuse('undefined-length', `${tag} has no length, which only sequences may lack.`, {
-      tag,
-      offset: head.at,
-    });
-  }
-  const end = skipSequence(view, head, layout);
-  const isPrivate = ((head.tag >>> 16) & 1) === 1;
-  if (end.ok || !isPrivate || end.refusal.code === 'nested-too-deep') return end;
-  return skipToDelimiter(view, head, layout) ?? end;
-}
-
-/** Past a private sequence that breaks the rules: to a delimiter behind which the data set goes on. */
-function skipToDelimiter(
-  view: DataView,
-  head: ElementHead,
+function dataSetOf(
+  bytes: Uint8Array,
+  elements: readonly ElementHead[],
   layout: Layout,
-): Result<number> | undefined {
-  for (let at = head.valueAt; at + 8 <= view.byteLength; at += 2) {
-    if (readTag(view, at, layout) !== 0xfffee0dd) continue;
-    const next = readHead(view, at + 8, layout);
-    if (next !== undefined && next.tag > head.tag && !next.guessed) return success(at + 8);
-  }
-  return undefined;
-}
-
-function refuseHead(view: DataView, at: number, layout: Layout): Result<never> {
-  if (view.byteLength - at < 12) {
-    return refuse(
-      'cut-header',
-      `The file ends at byte ${view.byteLength}, in the head of an element.`,
-      {
-        offset: at,
-      },
-    );
-  }
-  const tag = tagWords(readTag(view, at, layout));
-  return refuse(
-    'bad-vr',
-    `${tag} at byte ${at} can't be read: its value representation and length make no sense.`,
-    {
-      tag,
-      offset: at,
+  irregular: Irregularities,
+  transferSyntaxUid: string | undefined,
+): DataSet {
+  const heads = new Map(elements.map((head) => [tagKey(head.tag), head]));
+  const pixelData = heads.get(tagKey(PIXEL_DATA));
+  return {
+    bytes,
+    littleEndian: layout.littleEndian,
+    ...(transferSyntaxUid !== undefined && { transferSyntaxUid }),
+    find: (tag) => {
+      const head = heads.get(tag);
+      return head && placeOf(head);
     },
-  );
+    items: (tag) => {
+      const head = heads.get(tag);
+      return (
+        head &&
+        readItems(bytes, head, layout)?.map((item) =>
+          dataSetOf(bytes, item.elements, item.layout, irregular, transferSyntaxUid),
+        )
+      );
+    },
+    ...(pixelData && {
+      pixelData: {
+        offset: pixelData.valueAt,
+        length: pixelData.length,
+        inFragments: pixelData.length === UNDEFINED_LENGTH,
+      },
+    }),
+    findings: irregular.findings(),
+  };
 }
 
-function tagWords(tag: number): string {
-  const hex = tag.toString(16).padStart(8, '0');
-  return `(${hex.slice(0, 4)},${hex.slice(4)})`;
+/** With the file's VR where it is another than the dictionary's. UN says nothing: the dictionary's holds. */
+function placeOf({ tag, vr, valueAt, length, guessed }: ElementHead): ElementPlace {
+  const place = { offset: valueAt, length };
+  const says = !guessed && vr !== 'UN' && !agreesWithDictionary(vr, dictionaryVr(tag));
+  return says ? { ...place, fileVr: vr } : place;
 }

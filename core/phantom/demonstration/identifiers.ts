@@ -1,4 +1,4 @@
-import { hash128, stableUid } from '../stableUid.js';
+import { hash128, stableUid } from '../../stableUid.js';
 import { DEMONSTRATION_VERSION, type DemonstrationOptions, type Side } from './acquisition.js';
 
 /** UIDs and file names of a demonstration. All come from what the demonstration is made of. */

@@ -6,7 +6,7 @@ import { followCentre } from '../../link/followView.js';
 import { nearestSlice } from '../../link/slicePosition.js';
 import { gridCentre } from '../../plates/plateTransform.js';
 import type { AppState, PlateSize, PlateState } from '../appState.js';
-import { KERNELS, otherKernel, plateGrid, stackOf } from '../selectors.js';
+import { KERNELS, linksOf, otherKernel, plateGrid, stackOf } from '../selectors.js';
 import type { Change } from '../store.js';
 
 /** Bounds of the scale, CSS pixels per mm: from a tenth of a pixel to a hand's breadth for a millimetre. */
@@ -26,7 +26,12 @@ export function scrollTo(kernel: Kernel, alongMm: number): Change {
     const from = stackOf(state, kernel);
     const other = otherKernel(kernel);
     const to = stackOf(state, other);
-    if (!state.links.scroll || state.pair === undefined || from === undefined || to === undefined) {
+    if (
+      !linksOf(state).scroll ||
+      state.pair === undefined ||
+      from === undefined ||
+      to === undefined
+    ) {
       return moved;
     }
     const followed = followPosition(state.pair.link, from, alongMm, to);
@@ -74,7 +79,12 @@ export function setView(
     const other = otherKernel(kernel);
     const from = plateGrid(state, kernel);
     const to = plateGrid(state, other);
-    if (!state.links.view || state.pair === undefined || from === undefined || to === undefined) {
+    if (
+      !linksOf(state).view ||
+      state.pair === undefined ||
+      from === undefined ||
+      to === undefined
+    ) {
       return set;
     }
     return withPlate(set, other, {

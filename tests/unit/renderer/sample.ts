@@ -106,6 +106,7 @@ export function sampleState(
     sharp,
     link: options.link ?? 'position',
     evidence: [],
+    overrides: [],
     chosenBy: 'reader',
   };
   const plate = {

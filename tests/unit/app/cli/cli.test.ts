@@ -253,7 +253,6 @@ describe('the command line', () => {
       'measure: --in is given twice. See: diptych measure --help\n',
     ],
     [['index', 'a', '--json=1'], 'index: --json takes no value. See: diptych index --help\n'],
-    [['pairs', 'a'], 'pairs is not in this version of Diptych; a later one has it.\n'],
     [
       ['recheck', 'a', '--in', 'b'],
       'recheck is not in this version of Diptych; a later one has it.\n',

@@ -43,6 +43,7 @@ export function sampleNote(
       },
       sharp: null,
       link: 'position',
+      overrides: [],
       evidence: [],
     },
     conditions: {

@@ -144,7 +144,7 @@ describe('readHeader', () => {
 
   it.each([
     ['JPEG extended, 12 bit (1.2.840.10008.1.2.4.51)', '1.2.840.10008.1.2.4.51'],
-    ['1.2.840.10008.1.2.4.100', '1.2.840.10008.1.2.4.100'],
+    ['MPEG-2 video (1.2.840.10008.1.2.4.100)', '1.2.840.10008.1.2.4.100'],
   ])('refuses an encoding without a decoder by name: %s', (name, transferSyntaxUid) => {
     expect(readHeader(ctSlice({ transferSyntaxUid }), 1e6)).toEqual({
       kind: 'leftOut',

@@ -33,6 +33,7 @@ function value(meanHu: number, sdHu: number): RegionValue {
     sliceIndex: 1,
     sliceOffsetMm: 0,
     sopInstanceUid: '1.2.3',
+    frameNumber: null,
     standardErrorHu: null,
     placementHu: null,
     flags: [],

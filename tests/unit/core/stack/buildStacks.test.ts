@@ -87,7 +87,14 @@ describe('buildStacks', () => {
   });
 
   it('leaves out a second copy of an image and names the first', () => {
-    const { stacks, leftOut } = stacksOf([{ number: 1 }, { number: 1 }]);
+    const { stacks, leftOut } = buildStacks(
+      ['f0', 'f1'].map((file, fileId) => ({
+        fileId,
+        file,
+        image: image({ number: 1 }),
+        pixelDigest: 'equal',
+      })),
+    );
     expect(stacks[0]?.slices).toHaveLength(1);
     expect(leftOut).toEqual([
       { file: 'f1', code: 'duplicate', text: 'The same image as f0: left out.' },

@@ -31,6 +31,7 @@ describe('What is on', () => {
     expect(checkedCommands(sampleState())).toEqual([
       'tool.window',
       'view.smooth',
+      'compare.open',
       'link.scroll',
       'link.window',
       'link.view',

@@ -15,6 +15,7 @@ const soft: RegionValue = {
   sliceIndex: 20,
   sliceOffsetMm: 0,
   sopInstanceUid: '1.2',
+  frameNumber: null,
   standardErrorHu: null,
   placementHu: 4,
   flags: [],

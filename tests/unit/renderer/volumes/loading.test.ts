@@ -17,7 +17,7 @@ function volumeOf(series: string): Volume {
 function standInPool(asked: string[], size = 1) {
   return {
     size,
-    decode: async ({ sopInstanceUid, frame }: DecodeRequest) => {
+    decode: async ({ image: { sopInstanceUid }, frame }: DecodeRequest) => {
       asked.push(sopInstanceUid);
       const fileId = Number(frame.url);
       if (fileId === 3) return { ok: false, text: 'The file ends too early.' } as const;
@@ -78,7 +78,7 @@ describe('Reading a pair', () => {
       onSlice: (kernel, index) => read.push(`${kernel} ${index}`),
       onGap: (kernel, index, text) => gaps.push(`${kernel} ${index}: ${text}`),
       signal: new AbortController().signal,
-    });
+    }).done;
     expect(read).toHaveLength(8);
     expect(gaps.sort()).toEqual([
       'sharp 3: The file ends too early.',
@@ -102,7 +102,7 @@ describe('Reading a pair', () => {
       },
       onGap: () => {},
       signal: new AbortController().signal,
-    });
+    }).done;
     expect(asked).toEqual(['2.25.1.5', '2.25.1.1', '2.25.1.2', '2.25.1.3', '2.25.1.4']);
   });
 
@@ -117,7 +117,7 @@ describe('Reading a pair', () => {
       onSlice: () => abort.abort(),
       onGap: () => {},
       signal: abort.signal,
-    });
+    }).done;
     expect(asked).toHaveLength(1);
   });
 });
@@ -138,28 +138,26 @@ describe('Measuring a shape', () => {
       [-11, -19, 1],
     ],
   } as const;
-  const filled = (series: string, value: number): Volume => {
-    const volume = volumeOf(series);
-    new Int16Array(volume.buffer).fill(value);
-    return volume;
+  const receive = (volume: Volume, index: number, value: number): void => {
+    volume.receive(index, Int16Array.from({ length: 4 }, () => value).buffer);
   };
 
   it('has no value on a stack whose slice is still to come, and one when it has come', () => {
-    const soft = filled('2.25.1', 100);
-    const sharp = filled('2.25.2', 300);
+    const soft = volumeOf('2.25.1');
+    const sharp = volumeOf('2.25.2');
     const measure = createMeasureShape(() => false);
-    soft.markRead(1);
+    receive(soft, 1, 100);
     expect(measure(shape, { soft, sharp })).toMatchObject({
       soft: { n: 4, meanHu: 100, sliceIndex: 1 },
       sharp: null,
     });
-    sharp.markRead(1);
+    receive(sharp, 1, 300);
     expect(measure(shape, { soft, sharp }).sharp).toMatchObject({ n: 4, meanHu: 300 });
   });
 
   it('gives the same value without measuring again', () => {
-    const soft = filled('2.25.1', 100);
-    soft.markRead(1);
+    const soft = volumeOf('2.25.1');
+    receive(soft, 1, 100);
     const measure = createMeasureShape(() => false);
     const pair = { soft, sharp: undefined };
     expect(measure(shape, pair).soft).toBe(measure(shape, pair).soft);

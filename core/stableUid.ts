@@ -1,4 +1,4 @@
-import { utf8 } from '../dicom/write/utf8.js';
+import { utf8 } from './dicom/write/utf8.js';
 
 const OFFSET = 0x6c62272e07bb014262b821756295c58dn;
 const PRIME = 0x0000000001000000000000000000013bn;

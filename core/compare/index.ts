@@ -1,0 +1,2 @@
+export * from './latticeMap.js';
+export * from './sliceDifference.js';

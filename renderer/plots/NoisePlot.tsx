@@ -1,0 +1,103 @@
+import { formatFixed } from '../../core/format/index.js';
+import type { NoiseSpectrum } from '../pairing/measuredPair.js';
+import { useSize } from '../panels/parts/useSize.js';
+import { NOISE_MARGIN_PX, noiseDrawing, noiseSummary, powerText } from './noiseDrawing.js';
+
+export interface NoisePlotProps {
+  /** Undefined until the pair was measured, or where there are too few uniform areas. */
+  readonly spectra: { readonly soft: NoiseSpectrum; readonly sharp: NoiseSpectrum } | undefined;
+  /** Why there is no picture, or how many areas it rests on. */
+  readonly about: string;
+}
+
+/** Noise power spectra of both kernels, measured in the same uniform areas: soft solid, sharp dashed. */
+export function NoisePlot({ spectra, about }: NoisePlotProps) {
+  const [ref, size] = useSize<HTMLDivElement>();
+  return (
+    <div class="plot-area" ref={ref}>
+      {spectra === undefined && <p class="empty">{about}</p>}
+      {spectra !== undefined && size !== undefined && size.heightPx > 60 && (
+        <Picture {...spectra} {...size} about={about} />
+      )}
+    </div>
+  );
+}
+
+interface PictureProps {
+  readonly soft: NoiseSpectrum;
+  readonly sharp: NoiseSpectrum;
+  readonly about: string;
+  readonly widthPx: number;
+  readonly heightPx: number;
+}
+
+function Picture({ soft, sharp, about, widthPx, heightPx }: PictureProps) {
+  const { x, y, isLog, powers, softLine, sharpLine } = noiseDrawing(soft, sharp, widthPx, heightPx);
+  const bottom = heightPx - NOISE_MARGIN_PX.bottom;
+  const right = widthPx - NOISE_MARGIN_PX.right;
+  return (
+    <svg
+      width={widthPx}
+      height={heightPx}
+      role="img"
+      aria-label={`${noiseSummary(soft, sharp)} ${about}`}
+    >
+      {powers.map((power) => (
+        <g key={power}>
+          <path
+            class={y(power) === bottom ? 'axis' : 'grid'}
+            d={`M${NOISE_MARGIN_PX.left} ${y(power)}H${right}`}
+          />
+          <text x={NOISE_MARGIN_PX.left - 6} y={y(power) + 4} text-anchor="end">
+            {powerText(power)}
+          </text>
+        </g>
+      ))}
+      {x.ticks(Math.max(2, Math.floor(widthPx / 70))).map((perMm) => (
+        <g key={perMm}>
+          <path class="axis" d={`M${x(perMm)} ${bottom}v4`} />
+          <text x={x(perMm)} y={bottom + 16} text-anchor="middle">
+            {formatFixed(perMm, 1)}
+          </text>
+        </g>
+      ))}
+      <text x={right} y={heightPx - 2} text-anchor="end">
+        per mm
+      </text>
+      <text x={NOISE_MARGIN_PX.left} y={heightPx - 2}>
+        {about}
+      </text>
+      <text x={2} y={13}>
+        HU² mm²{isLog ? ', logarithmic' : ''}
+      </text>
+      <path class="series soft" d={softLine} />
+      <path class="series sharp" d={sharpLine} />
+      <Mean side="soft" px={x(soft.meanPerMm)} bottomPx={bottom} />
+      <Mean side="sharp" px={x(sharp.meanPerMm)} bottomPx={bottom} />
+      <path class="series soft" d={`M${right - 118} 9h18`} />
+      <text class="soft" x={right - 95} y={13}>
+        soft
+      </text>
+      <path class="series sharp" d={`M${right - 58} 9h18`} />
+      <text class="sharp" x={right} y={13} text-anchor="end">
+        sharp
+      </text>
+    </svg>
+  );
+}
+
+interface MeanProps {
+  readonly side: 'soft' | 'sharp';
+  readonly px: number;
+  readonly bottomPx: number;
+}
+
+/** The mean frequency: a line up from the axis with a small triangle under it. */
+function Mean({ side, px, bottomPx }: MeanProps) {
+  return (
+    <g>
+      <path class={`mean ${side}`} d={`M${px} ${NOISE_MARGIN_PX.top}V${bottomPx}`} />
+      <path class={`mean-mark ${side}`} d={`M${px} ${bottomPx}l-4 6h8Z`} />
+    </g>
+  );
+}
