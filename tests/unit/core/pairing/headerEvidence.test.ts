@@ -17,7 +17,7 @@ function stackAt(from: number, options: CtSliceOptions = {}): Stack {
 }
 
 const phase = (percent: number) => ({
-  0x00209241: { tag: 0x00209241, vr: 'FL', value: percent } as const,
+  2134593: { tag: 0x00209241, vr: 'FL', value: percent } as const,
 });
 const soft = stackAt(0, { change: phase(75) });
 const stateOf = (sharp: Stack, check: string): string | undefined =>
@@ -46,7 +46,9 @@ describe('headerEvidence', () => {
       'lossy compression agrees',
       'kernel label agrees',
     ]);
-    expect(got.evidence[6]?.text).toBe('1.0 mm of slices in common');
+    expect(got.evidence[6]?.text).toBe(
+      '1.0 mm of slices in common: along the normal 0.0 to 2.0 mm and 1.0 to 3.0 mm',
+    );
   });
 
   it('refuses another phase, with both values', () => {
@@ -56,12 +58,12 @@ describe('headerEvidence', () => {
   });
 
   it('refuses another patient', () => {
-    const other = stackAt(0, { change: { 0x00100020: { tag: 0x00100020, vr: 'LO', value: 'C-2' } } });
+    const other = stackAt(0, { change: { 1048608: { tag: 0x00100020, vr: 'LO', value: 'C-2' } } });
     expect(headerEvidence(soft, other).refusal).toMatch(/another patient/);
   });
 
   it('links by index where the frame of reference is another, or no slices are in common', () => {
-    const frame = { 0x00200052: { tag: 0x00200052, vr: 'UI', value: '2.25.5' } as const };
+    const frame = { 2097234: { tag: 0x00200052, vr: 'UI', value: '2.25.5' } as const };
     expect(headerEvidence(soft, stackAt(0, { change: { ...phase(75), ...frame } })).link).toBe(
       'index',
     );
@@ -71,7 +73,7 @@ describe('headerEvidence', () => {
   });
 
   it('links by position where neither stack states a frame of reference, which stays unknown', () => {
-    const none = { 0x00200052: undefined };
+    const none = { 2097234: undefined };
     const got = headerEvidence(stackAt(0, { change: none }), stackAt(0, { change: none }));
     const frame = got.evidence.find(({ check }) => check === 'frame of reference');
     expect([got.link, frame?.state]).toEqual(['position', 'unknown']);
@@ -80,7 +82,7 @@ describe('headerEvidence', () => {
 
 describe('reasonNotToMeasure', () => {
   it('names another phase and positions that can’t be compared, and is silent on a pair', () => {
-    const frame = { 0x00200052: { tag: 0x00200052, vr: 'UI', value: '2.25.5' } as const };
+    const frame = { 2097234: { tag: 0x00200052, vr: 'UI', value: '2.25.5' } as const };
     const code = (sharp: Stack) => reasonNotToMeasure(headerEvidence(soft, sharp))?.code;
     expect(code(stackAt(0, { change: phase(40) }))).toBe('not-one-acquisition');
     expect(code(stackAt(0, { change: { ...phase(75), ...frame } }))).toBe(
