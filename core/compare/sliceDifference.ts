@@ -39,6 +39,7 @@ export function sliceDifference(
   const map = latticeMap(fine.grid, other.grid);
   if (map === undefined) return undefined;
   const sign = isSoftFiner ? 1 : -1;
+  if (isSameLattice(map)) return { hu: pixelByPixel(fine, other, map, sign), interpolated: false };
   const { rows, columns } = fine.grid;
   const hu = new Float32Array(rows * columns);
   const ownHu = huOf(fine);
@@ -68,6 +69,46 @@ export function sliceDifference(
   return { hu, interpolated: !isWhole(map) };
 }
 
+function isSameLattice(map: LatticeMap): boolean {
+  return isWhole(map) && map.columnStep === 1 && map.rowStep === 1;
+}
+
+/** Pixels that fall together are subtracted as they are: this is the usual case, and scrolling waits for it. */
+function pixelByPixel(
+  fine: ComparedSlice,
+  other: ComparedSlice,
+  { columnOffset, rowOffset }: LatticeMap,
+  sign: number,
+): Float32Array {
+  const { rows, columns } = fine.grid;
+  const hu = new Float32Array(rows * columns).fill(Number.NaN);
+  const a = conversionOf(fine);
+  const b = conversionOf(other);
+  const [firstRow, lastRow] = [
+    Math.max(0, -rowOffset),
+    Math.min(rows, other.grid.rows - rowOffset),
+  ];
+  const firstColumn = Math.max(0, -columnOffset);
+  const lastColumn = Math.min(columns, other.grid.columns - columnOffset);
+  for (let row = firstRow; row < lastRow; row++) {
+    const shift = (row + rowOffset) * other.grid.columns + columnOffset - row * columns;
+    for (let at = row * columns + firstColumn; at < row * columns + lastColumn; at++) {
+      const own = fine.stored[at] as number;
+      const its = other.stored[at + shift] as number;
+      if ((own >= a.low && own <= a.high) || (its >= b.low && its <= b.high)) continue;
+      hu[at] = sign * (its * b.slope + b.intercept - (own * a.slope + a.intercept));
+    }
+  }
+  return hu;
+}
+
+/** Rescale and padding of a slice; without padding a range that holds nothing (PS3.3 C.11.1, C.7.5.1.1.2). */
+function conversionOf({ pixels }: ComparedSlice) {
+  const { slope, intercept } = pixels.rescale ?? { slope: 1, intercept: 0 };
+  const { low, high } = pixels.padding ?? { low: Infinity, high: -Infinity };
+  return { slope, intercept, low, high };
+}
+
 /** A neighbour of no weight is not asked: it may be padding, or lie outside. */
 function mixed(a: number, b: number, part: number): number {
   return part === 0 ? a : a + (b - a) * part;
@@ -89,10 +130,10 @@ function placesOf(step: number, offset: number, count: number, limit: number) {
   return { first, second, part };
 }
 
-/** HU of every pixel; NaN for padding (PS3.3 C.7.5.1.1.2). */
-function huOf({ stored, pixels }: ComparedSlice): Float32Array {
-  const { slope, intercept } = pixels.rescale ?? { slope: 1, intercept: 0 };
-  const { low, high } = pixels.padding ?? { low: Infinity, high: -Infinity };
+/** HU of every pixel; NaN for padding. */
+function huOf(slice: ComparedSlice): Float32Array {
+  const { slope, intercept, low, high } = conversionOf(slice);
+  const { stored } = slice;
   const hu = new Float32Array(stored.length);
   for (let index = 0; index < stored.length; index++) {
     const value = stored[index] as number;

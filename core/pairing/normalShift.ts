@@ -64,13 +64,13 @@ export async function normalShift(
   });
   if (sums.length < LEAST_SQUARES) return not('too little structure that both show');
   const best = bestIndex(places, sums);
-  if (best === 0 || best === places.length - 1) {
-    return not('the slice most like it may lie beyond those that were looked at');
-  }
-  const rivals = new Set([NEIGHBOURS, best - 1, best + 1].filter((index) => index !== best));
-  return [...rivals].every((rival) => isMoreLike(best, rival, sums))
-    ? { shiftMm: bestPlace(places, sums, best) }
-    : not('neighbouring slices are too much alike');
+  const isAtEnd = best === 0 || best === places.length - 1;
+  const rivals = [NEIGHBOURS, ...(isAtEnd ? [] : [best - 1, best + 1])];
+  const isClear = rivals.every((rival) => rival === best || isMoreLike(best, rival, sums));
+  if (!isClear) return not('neighbouring slices are too much alike');
+  return isAtEnd
+    ? not('the slice most like it may lie beyond those that were looked at')
+    : { shiftMm: bestPlace(places, sums, best) };
 }
 
 /** Whether one slice is more like the first stack's than another is, in each square. */

@@ -141,13 +141,29 @@ function sliceNear(first: Stack, second: Stack, alongMm: number): number {
   return best.index;
 }
 
-/** Median of each coordinate. */
-export function medianShift(places: readonly { readonly shiftMm: Vec3 }[]): Vec3 {
+/** What a place may be wrong by beyond its standard error, mm: it keeps one place from deciding alone. */
+const FLOOR_MM = 0.02;
+
+/** Median of each coordinate, places weighted by how certain they are. */
+export function medianShift(
+  places: readonly Pick<PlaceShift, 'shiftMm' | 'standardErrorMm'>[],
+): Vec3 {
   const median = (axis: 0 | 1 | 2): number => {
-    const sorted = places.map(({ shiftMm }) => shiftMm[axis]).sort((a, b) => a - b);
-    const low = sorted[Math.floor((sorted.length - 1) / 2)] ?? 0;
-    const high = sorted[Math.floor(sorted.length / 2)] ?? 0;
-    return (low + high) / 2;
+    const sorted = places
+      .map(({ shiftMm, standardErrorMm }) => ({
+        value: shiftMm[axis],
+        weight: 1 / (standardErrorMm ** 2 + FLOOR_MM ** 2),
+      }))
+      .sort((a, b) => a.value - b.value);
+    const half = sorted.reduce((sum, { weight }) => sum + weight, 0) / 2;
+    let below = 0;
+    for (const [index, { value, weight }] of sorted.entries()) {
+      below += weight;
+      // Exactly half below: the median lies between this value and the next.
+      if (below === half) return (value + (sorted[index + 1]?.value ?? value)) / 2;
+      if (below > half) return value;
+    }
+    return 0;
   };
   return [median(0), median(1), median(2)];
 }

@@ -146,7 +146,10 @@ export function undecided(reason: string): SharpnessDecision {
   return equal('undecided', `can’t tell: ${reason}`);
 }
 
-function reasonFor({ lossy, noise, rise }: SharpnessEvidence, votes: Votes): string {
+function reasonFor(
+  { lossy, noise, frequency, frequencyTellsDirection, rise }: SharpnessEvidence,
+  votes: Votes,
+): string {
   if (lossy) return 'after lossy compression, noise and edges don’t agree clearly enough';
   if (!noise && !rise) return 'no uniform area and no clear edge in common';
   if (!noise) return 'no uniform area in common';
@@ -154,7 +157,8 @@ function reasonFor({ lossy, noise, rise }: SharpnessEvidence, votes: Votes): str
   const clear = [votes.frequency, votes.noise, votes.rise].flatMap((vote) =>
     vote === undefined || Math.abs(vote) < SUPPORT ? [] : [Math.sign(vote)],
   );
-  return new Set(clear).size > 1
-    ? 'noise and edges contradict each other'
+  if (new Set(clear).size > 1) return 'noise and edges contradict each other';
+  return frequency && !frequencyTellsDirection
+    ? 'the noise is finer than the pixels can carry, and the rest is not clear enough'
     : 'the differences are too small for their uncertainty';
 }

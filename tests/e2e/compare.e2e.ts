@@ -1,4 +1,5 @@
 import { expect, type Locator, type Page, test } from '@playwright/test';
+import axe from 'axe-core';
 import { MATRIX, noisyStack, PATCH_PX, PATCHES } from '../corpus/noisyPair.js';
 import { acceptCautions, dragOn, regionRow, waitForPair, watchPage } from './support/bench.js';
 import { type RunningShell, startShell, temporaryHome } from './support/shell.js';
@@ -196,6 +197,20 @@ test('Alternate shows the other kernel while a key is held, and switches for tho
   await page.getByRole('group', { name: 'Kernel on the plate' }).getByText('Soft').click();
   await expect(soft).toBeVisible();
   await expect(plate('alternate').locator('.region')).toHaveCount(1);
+});
+
+test('no rule of accessibility is broken in any way of comparing', async () => {
+  for (const way of ['2', '3', '4', '1']) {
+    await page.locator('.plate-surface').first().focus();
+    await page.keyboard.press(way);
+    await page.evaluate(axe.source);
+    const { violations } = await page.evaluate(() =>
+      (globalThis as unknown as { axe: typeof axe }).axe.run(document, {
+        runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa'],
+      }),
+    );
+    expect(violations.map(({ id, nodes }) => `${way} ${id} ${nodes[0]?.html}`)).toEqual([]);
+  }
 });
 
 test('the noise plot and the areas that it rests on are shown on demand', async () => {

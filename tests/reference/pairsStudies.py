@@ -10,6 +10,7 @@ for each folder under FOLDER the pairs as [soft series, sharp series, phase].
 import json
 import os
 import sys
+from functools import lru_cache
 
 import numpy as np
 from pydicom.dataset import FileDataset, FileMetaDataset
@@ -51,12 +52,16 @@ def body(z, patient, phase):
     return image
 
 
-def reconstruct(z, patient, phase, kernel, sigma=900):
+@lru_cache(maxsize=64)
+def acquired(z, patient, phase):
+    """What both kernels share: the body's spectrum with that of the noise, its power rising with frequency."""
     seed = [patient, phase, int(round(z * 1000)) + 100000]
-    white = np.random.default_rng(seed).normal(0, sigma, (SIZE, SIZE))
-    w = apodisation(kernel)
-    spectrum = np.fft.fft2(body(z, patient, phase)) * w + np.fft.fft2(white) * w * np.sqrt(FREQUENCY) * 0.12
-    return np.real(np.fft.ifft2(spectrum))
+    white = np.random.default_rng(seed).normal(0, 108, (SIZE, SIZE))
+    return np.fft.fft2(body(z, patient, phase)) + np.fft.fft2(white) * np.sqrt(FREQUENCY)
+
+
+def reconstruct(z, patient, phase, kernel):
+    return np.real(np.fft.ifft2(acquired(z, patient, phase) * apodisation(kernel)))
 
 
 class Stack:

@@ -63,7 +63,11 @@ describe('decideSharpness', () => {
     const folded = { frequencyTellsDirection: false };
     expect(said(folded)[1]).toBe('first');
     expect(said({ ...folded, rise: estimate(-0.05) })[0]).toBe('undecided');
-    expect(said({ ...folded, thickness: 'differs' })[0]).toBe('undecided');
+    expect(said({ ...folded, thickness: 'differs' })).toEqual([
+      'undecided',
+      undefined,
+      'can’t tell: the noise is finer than the pixels can carry, and the rest is not clear enough',
+    ]);
   });
 
   it('asks for all three after lossy compression, and finds no sameness then', () => {
