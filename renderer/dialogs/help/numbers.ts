@@ -66,7 +66,7 @@ export const NUMBERS: readonly NumberHelp[] = [
   {
     title: 'One acquisition',
     text: [
-      'The two series are compared in what their headers state: patient, study, frame of reference, acquisition, phase, overlap, tilt, thickness, tube voltage. Their pixels are not compared: look at both plates. Each line of evidence agrees, differs, or is unknown because a file is silent. Kernel labels are shown as the files have them and never interpreted.',
+      'The two series are compared in what their headers state: patient, study, frame of reference, acquisition, phase, overlap, tilt, thickness, tube voltage. Then a few slices are compared: the shift between them in several places, and noise, texture and edges in the same places of both, which tell the softer from the sharper. Each line of evidence agrees, differs, or is unknown because a file is silent. Kernel labels are shown as the files have them and never interpreted.',
       'The same frame of reference means shared coordinates; it does not prove that nothing moved between two phases.',
     ],
     source: 'DICOM PS3.3 C.7.4.1, C.7.6.2; weighing of the evidence: Diptych’s own rule.',
