@@ -35,7 +35,15 @@ export function mapGreys(
   // Read unsigned, a stored value is its own index: one lookup a pixel and no masking.
   const indices = new Uint16Array(stored.buffer, stored.byteOffset, stored.length);
   const { length } = target;
-  for (let index = 0; index < length; index++) {
+  const even = length - (length % 4);
+  // Four a turn: measured at little more than half the time of one a turn.
+  for (let index = 0; index < even; index += 4) {
+    target[index] = table[indices[index] as number] as number;
+    target[index + 1] = table[indices[index + 1] as number] as number;
+    target[index + 2] = table[indices[index + 2] as number] as number;
+    target[index + 3] = table[indices[index + 3] as number] as number;
+  }
+  for (let index = even; index < length; index++) {
     target[index] = table[indices[index] as number] as number;
   }
 }
