@@ -62,7 +62,16 @@ async function scrollRow(folder: string, matrix: number): Promise<Row> {
 async function scrollFrames(page: Page): Promise<number> {
   await page.getByRole('button', { name: 'I have read this and accept it' }).click();
   await page.locator('[data-plate=sharp][aria-label*="slice"]').waitFor();
-  await page.waitForTimeout(4000);
+  // Scrolling is measured when all is read and compared: both take processors of their own for a while.
+  await page.waitForTimeout(1500);
+  await page.waitForFunction(
+    () =>
+      !/measur/i.test(document.querySelector('[data-panel=hinge] .verdict')?.textContent ?? '') &&
+      !/\d+ of \d+/.test(document.querySelector('[data-panel=status]')?.textContent ?? ''),
+    undefined,
+    { timeout: 60_000 },
+  );
+  await page.waitForTimeout(1000);
   return page.evaluate(
     (slices) =>
       new Promise<number>((done) => {
