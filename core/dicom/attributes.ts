@@ -19,6 +19,8 @@ export interface Attributes {
   unsignedShort(tag: string): number | undefined;
   signedShort(tag: string): number | undefined;
   unsignedLong(tag: string): number | undefined;
+  /** All 16-bit words of a value, unsigned; undefined when there are none. */
+  shorts(tag: string): readonly number[] | undefined;
   float(tag: string): number | undefined;
   double(tag: string): number | undefined;
   /** Items of a sequence, in the character set of the data set around them unless they have their own. */
@@ -120,6 +122,14 @@ export function attributesOf(dataSet: DataSet, around?: Surroundings): Attribute
     integer,
     unsignedShort: (tag) => whole(tag, 2, 0, (at) => view.getUint16(at, littleEndian)),
     signedShort: (tag) => whole(tag, 2, -0x8000, (at) => view.getInt16(at, littleEndian)),
+    shorts: (tag) => {
+      const place = dataSet.find(tag);
+      const value = valueBytes(tag);
+      if (place === undefined || value === undefined || value.length < 2) return undefined;
+      return Array.from({ length: value.length >> 1 }, (_, index) =>
+        view.getUint16(place.offset + index * 2, littleEndian),
+      );
+    },
     unsignedLong: (tag) => whole(tag, 4, 0, (at) => view.getUint32(at, littleEndian)),
     float: (tag) => binary(tag, 4, (at) => view.getFloat32(at, littleEndian)),
     double: (tag) => binary(tag, 8, (at) => view.getFloat64(at, littleEndian)),

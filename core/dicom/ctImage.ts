@@ -11,6 +11,12 @@ export interface VoiWindow {
 
 export type VoiFunction = 'LINEAR' | 'LINEAR_EXACT' | 'SIGMOID';
 
+/** Table of a Modality LUT (PS3.3 C.11.1.1): the first value is for a stored value and all below it, the last for all above. */
+export interface ModalityLut {
+  readonly firstStored: number;
+  readonly values: readonly number[];
+}
+
 /** How stored bytes become stored values, and stored values HU (PS3.3 C.7.6.3, C.11.1, C.7.5.1.1.2). */
 export interface PixelEncoding {
   readonly bitsAllocated: number;
@@ -20,6 +26,8 @@ export interface PixelEncoding {
   readonly photometric: 'MONOCHROME1' | 'MONOCHROME2';
   /** Absent when the file has none: then there are no HU. */
   readonly rescale?: { readonly slope: number; readonly intercept: number };
+  /** A table in place of a rescale: the image is shown through it, and there are no HU. */
+  readonly modalityLut?: ModalityLut;
   /** Unit of the rescaled value: HU, or what Rescale Type (0028,1054) says, or 'stored' without a rescale. */
   readonly unit: string;
   /** Inclusive range of STORED values that are not image. */

@@ -12,6 +12,7 @@ export function layeredAttributes(layers: readonly Attributes[]): Attributes {
     integer: (tag) => owner(tag)?.integer(tag),
     unsignedShort: (tag) => owner(tag)?.unsignedShort(tag),
     signedShort: (tag) => owner(tag)?.signedShort(tag),
+    shorts: (tag) => owner(tag)?.shorts(tag),
     unsignedLong: (tag) => owner(tag)?.unsignedLong(tag),
     float: (tag) => owner(tag)?.float(tag),
     double: (tag) => owner(tag)?.double(tag),

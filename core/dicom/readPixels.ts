@@ -1,6 +1,7 @@
 import { type Finding, type Result, refuse, success } from '../result.js';
 import type { Attributes } from './attributes.js';
 import type { PixelEncoding } from './ctImage.js';
+import { readModalityLut } from './readModalityLut.js';
 
 /** How pixels are stored and what they mean, with what is odd about it. */
 export interface PixelsReading {
@@ -45,7 +46,7 @@ export function readPixels(attributes: Attributes): Result<PixelsReading> {
     );
   }
   const signed = representation === 1;
-  const meaning = readRescale(attributes);
+  const meaning = readRescale(attributes, signed);
   const padding = readPadding(attributes, signed);
   return success({
     pixels: {
@@ -66,8 +67,11 @@ function isGrey(photometric: string): photometric is PixelEncoding['photometric'
 }
 
 /** Rescale Slope and Intercept. An absent Rescale Type on a CT image means HU (PS3.3 C.8.2.1). */
-function readRescale(attributes: Attributes): {
-  encoding: Pick<PixelEncoding, 'rescale' | 'unit'>;
+function readRescale(
+  attributes: Attributes,
+  signed: boolean,
+): {
+  encoding: Pick<PixelEncoding, 'rescale' | 'modalityLut' | 'unit'>;
   findings: readonly Finding[];
 } {
   const stored = (code: string, text: string) => ({
@@ -75,7 +79,13 @@ function readRescale(attributes: Attributes): {
     findings: [{ code, text }],
   });
   if (attributes.has('x00283000')) {
-    return stored('modality-lut', 'A Modality LUT stands in place of slope and intercept: no HU.');
+    const modalityLut = readModalityLut(attributes, signed);
+    const shown = modalityLut === undefined ? 'it can’t be read' : 'the image is shown through it';
+    const text = `A Modality LUT stands in place of slope and intercept; ${shown}: no HU.`;
+    return {
+      encoding: { unit: 'stored', ...(modalityLut && { modalityLut }) },
+      findings: [{ code: 'modality-lut', text }],
+    };
   }
   const slope = attributes.decimal('x00281053');
   const intercept = attributes.decimal('x00281052');

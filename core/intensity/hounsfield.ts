@@ -5,9 +5,16 @@ export function isPadding(stored: number, { padding }: PixelEncoding): boolean {
   return padding !== undefined && stored >= padding.low && stored <= padding.high;
 }
 
-/** Output of the Modality LUT: slope · stored + intercept (PS3.3 C.11.1); the stored value itself without a rescale. */
-export function rescaled(stored: number, { rescale }: PixelEncoding): number {
-  return rescale === undefined ? stored : stored * rescale.slope + rescale.intercept;
+/**
+ * Output of the Modality LUT: slope · stored + intercept, or the table's value (PS3.3 C.11.1); the stored value itself
+ * where the file has neither.
+ */
+export function rescaled(stored: number, { rescale, modalityLut }: PixelEncoding): number {
+  if (rescale !== undefined) return stored * rescale.slope + rescale.intercept;
+  if (modalityLut === undefined) return stored;
+  const { firstStored, values } = modalityLut;
+  const entry = Math.min(values.length - 1, Math.max(0, Math.round(stored) - firstStored));
+  return values[entry] ?? stored;
 }
 
 /** HU of a stored value; undefined for padding and where the file gives no HU. */

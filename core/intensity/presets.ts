@@ -1,4 +1,5 @@
-import type { CtImage, VoiWindow } from '../dicom/index.js';
+import type { CtImage, PixelEncoding, VoiWindow } from '../dicom/index.js';
+import { rescaled } from './hounsfield.js';
 
 /** A window of our own naming, in HU. */
 export interface Preset {
@@ -28,14 +29,26 @@ export function defaultWindow({ windows, pixels }: CtImage): VoiWindow {
   const [first] = windows;
   if (first !== undefined) return first;
   if (pixels.unit === 'HU') return VESSEL;
-  const slope = pixels.rescale?.slope ?? 1;
-  const intercept = pixels.rescale?.intercept ?? 0;
-  const lowest = pixels.signed ? -(2 ** (pixels.bitsStored - 1)) : 0;
-  const levels = 2 ** pixels.bitsStored;
+  const [low, high] = fullRange(pixels);
+  // The window that takes x1 to black and x2 to white (PS3.3 C.11.2.1.2.1, notes).
   return {
-    centre: (lowest + levels / 2) * slope + intercept,
-    width: Math.max(1, levels * Math.abs(slope)),
+    centre: (low + high + 1) / 2,
+    width: Math.max(1, high - low + 1),
     function: 'LINEAR',
     explanation: 'Full range',
   };
+}
+
+/** Least and largest output of the Modality LUT: of its table, or of the rescaled ends of the stored range. */
+function fullRange(pixels: PixelEncoding): readonly [number, number] {
+  const { modalityLut, signed, bitsStored } = pixels;
+  const lowest = signed ? -(2 ** (bitsStored - 1)) : 0;
+  const ends = modalityLut?.values ?? [
+    rescaled(lowest, pixels),
+    rescaled(lowest + 2 ** bitsStored - 1, pixels),
+  ];
+  return ends.reduce<readonly [number, number]>(
+    ([low, high], value) => [Math.min(low, value), Math.max(high, value)],
+    [Infinity, -Infinity],
+  );
 }

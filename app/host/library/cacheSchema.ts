@@ -60,6 +60,9 @@ const PixelsSchema = z.strictObject({
   signed: z.boolean(),
   photometric: z.enum(['MONOCHROME1', 'MONOCHROME2']),
   rescale: z.strictObject({ slope: z.number(), intercept: z.number() }).exactOptional(),
+  modalityLut: z
+    .strictObject({ firstStored: z.number(), values: z.array(z.number()) })
+    .exactOptional(),
   unit: text,
   padding: z.strictObject({ low: z.number(), high: z.number() }).exactOptional(),
 } satisfies Shape<PixelEncoding>);

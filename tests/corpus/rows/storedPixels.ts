@@ -251,7 +251,7 @@ export const STORED_PIXELS: readonly CorpusRow[] = [
     row: 61,
     section: 'D',
     title: 'Modality LUT Sequence in place of a rescale',
-    outcome: 'Shown as stored values; nothing is measured.',
+    outcome: 'Shown through its table; nothing is measured in HU.',
     cases: [
       {
         name: 'with a table',
@@ -273,7 +273,7 @@ export const STORED_PIXELS: readonly CorpusRow[] = [
             }),
           },
         }),
-        image: { pixels: { unit: 'stored' } },
+        image: { pixels: { unit: 'stored', modalityLut: { firstStored: 0, values: [0, 1] } } },
       },
       {
         name: 'with an empty descriptor',

@@ -1,6 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import type { PixelEncoding } from '../../../../core/dicom/index.js';
-import { displayTable, NO_DATA_GREY, storedToHu } from '../../../../core/intensity/index.js';
+import {
+  displayTable,
+  NO_DATA_GREY,
+  rescaled,
+  storedToHu,
+} from '../../../../core/intensity/index.js';
 
 const PIXELS: PixelEncoding = {
   bitsAllocated: 16,
@@ -49,5 +54,27 @@ describe('storedToHu', () => {
 
   it('has no HU in another unit', () => {
     expect(storedToHu(5, { ...PIXELS, unit: 'stored' })).toBeUndefined();
+  });
+});
+
+describe('a Modality LUT in place of a rescale (PS3.3 C.11.1.1)', () => {
+  const { rescale: _none, padding: _no, ...rest } = PIXELS;
+  const pixels: PixelEncoding = {
+    ...rest,
+    unit: 'stored',
+    modalityLut: { firstStored: -1, values: [10, 20, 30] },
+  };
+
+  it('gives the first value to all below its table and the last to all above', () => {
+    expect([-500, -1, 0, 1, 2, 900].map((stored) => rescaled(stored, pixels))).toEqual([
+      10, 10, 20, 30, 30, 30,
+    ]);
+  });
+
+  it('is what the image is shown through, and gives no HU', () => {
+    const full = { centre: 20.5, width: 21, function: 'LINEAR' } as const;
+    const table = displayTable(pixels, full);
+    expect([table[-1 & 0xffff], table[0], table[1]]).toEqual([0, 128, 255]);
+    expect(storedToHu(0, pixels)).toBeUndefined();
   });
 });
