@@ -5,6 +5,7 @@ import type { AppState, PairState } from '../state/appState.js';
 import { KEEP_MEASURED, keepMeasured } from '../state/changes/assessment.js';
 import type { Store } from '../state/store.js';
 import { type Assessor, wasGivenUp } from './assessor.js';
+import { pairMessage } from './pairMessage.js';
 
 export interface AssessmentOptions {
   readonly store: Store;
@@ -33,6 +34,12 @@ export function createAssessment(options: AssessmentOptions): AssessmentWork {
     const { pair, note } = store.now();
     if (pair !== undefined && isWrongOrder(pair, measured) && mayReorder(pair, note)) {
       options.onWrongOrder();
+    }
+    if (pair !== undefined && isOrderConfirmed(pair, measured)) {
+      const asked = pairMessage(pair)?.text;
+      store.change('Order confirmed', (state) =>
+        state.message?.text === asked ? { ...state, message: undefined } : state,
+      );
     }
   };
 
@@ -75,6 +82,14 @@ export function isWrongOrder(
   { measuredSharpKey }: Pick<MeasuredPair, 'measuredSharpKey'>,
 ): boolean {
   return measuredSharpKey === soft.key;
+}
+
+/** The order was taken from the series numbers, which asks the reader to check; measured the same, it needs no checking. */
+function isOrderConfirmed(
+  { chosenBy, link, sharp }: PairState,
+  { measuredSharpKey }: Pick<MeasuredPair, 'measuredSharpKey'>,
+): boolean {
+  return chosenBy === 'order' && link === 'position' && measuredSharpKey === sharp?.key;
 }
 
 /** Once the reader chose, or something is marked, nothing is swapped silently. */
