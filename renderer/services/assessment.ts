@@ -30,13 +30,14 @@ export function createAssessment(options: AssessmentOptions): AssessmentWork {
     store.change('Measure the pair', (state) => ({ ...state, assessment }));
 
   const finish = (measured: MeasuredPair): void => {
+    const before = store.now().pair;
     store.change(KEEP_MEASURED, keepMeasured(measured, options.now()));
     const { pair, note } = store.now();
     if (pair !== undefined && isWrongOrder(pair, measured) && mayReorder(pair, note)) {
       options.onWrongOrder();
     }
-    if (pair !== undefined && isOrderConfirmed(pair, measured)) {
-      const asked = pairMessage(pair)?.text;
+    if (before !== undefined && isOrderConfirmed(before, measured)) {
+      const asked = pairMessage(before)?.text;
       store.change('Order confirmed', (state) =>
         state.message?.text === asked ? { ...state, message: undefined } : state,
       );

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { success } from '../../../../core/result.js';
 import type { MeasuredPair } from '../../../../renderer/pairing/measuredPair.js';
 import { createAssessment } from '../../../../renderer/services/assessment.js';
+import { pairMessage } from '../../../../renderer/services/pairMessage.js';
 import type { PairState } from '../../../../renderer/state/appState.js';
 import { createStore } from '../../../../renderer/state/store.js';
 import { sampleState } from '../sample.js';
@@ -13,7 +14,8 @@ async function assess(chosenBy: PairState['chosenBy'], sharper: 'soft' | 'sharp'
   const start = sampleState();
   if (start.pair?.sharp === undefined) throw new Error('invalid sample');
   const pair = { ...start.pair, chosenBy };
-  const store = createStore({ ...start, pair });
+  const message = pairMessage(pair);
+  const store = createStore({ ...start, pair, message });
   const measured = {
     softKey: pair.soft.key,
     sharpKey: pair.sharp?.key,
@@ -48,6 +50,11 @@ describe('The measure of the pair', () => {
     expect((await assess('order', 'soft')).swaps).toBe(1);
     expect((await assess('order', 'sharp')).swaps).toBe(0);
     expect((await assess('order', 'sharp')).state.pair?.chosenBy).toBe('measure');
+  });
+
+  it('takes the request to check the order back once it is measured', async () => {
+    expect((await assess('order', 'sharp')).state.message).toBeUndefined();
+    expect((await assess('order', 'soft')).state.message?.text).toContain('Please check');
   });
 
   it('never swaps what the reader chose, or what the note remembers', async () => {
