@@ -5,7 +5,9 @@ import { createCommands, type RunCommand } from './commands/handlers.js';
 import type { HostClient } from './host/client.js';
 import { type Shell, shellOf } from './host/shell.js';
 import { type Bench, createBench } from './services/bench.js';
+import { keepDensities } from './services/densities.js';
 import { createFolderDialog, type FolderDialog } from './services/folderDialog.js';
+import { createNoteLife, type NoteLife } from './services/noteLife.js';
 import { createStore, type Store } from './state/store.js';
 import type { ToolPort } from './tools/tool.js';
 import { toolAt } from './tools/toolAt.js';
@@ -18,6 +20,8 @@ export interface Engine {
   readonly client: HostClient;
   readonly shell: Shell;
   readonly bench: Bench;
+  /** The life of the note: verified, amended, measured again. */
+  readonly life: NoteLife;
   readonly folderDialog: FolderDialog;
   readonly port: ToolPort;
   readonly machine: ToolMachine;
@@ -41,10 +45,12 @@ export function createEngine(client: HostClient, host: Window, signal: AbortSign
     timeOfDay: () => new Date().toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' }),
     newId: () => crypto.randomUUID(),
   });
+  const life = createNoteLife({ store, client, bench, now, signal });
+  keepDensities(store, bench, now, signal);
   const port = createToolPort(store, bench, now);
   const machine = createToolMachine(port, (pointer) => toolAt(store.now(), pointer));
   const run = createCommands({ store, bench, shell, now });
-  return { store, client, shell, bench, folderDialog, port, machine, run, now, signal };
+  return { store, client, shell, bench, life, folderDialog, port, machine, run, now, signal };
 }
 
 export const EngineContext = createContext<Engine | undefined>(undefined);

@@ -17,7 +17,8 @@ export interface StackEntry {
   readonly rows: number;
   readonly columns: number;
   /** [between rows, between columns]. */
-  readonly pixelSpacingMm: readonly [number, number];
+  /** Null where the files have none. */
+  readonly pixelSpacingMm: readonly [number, number] | null;
   readonly sliceSpacingMm: number | null;
   readonly thicknessMm: number | null;
   readonly transferSyntaxUid: string;
@@ -58,7 +59,7 @@ function stackEntry(stack: Stack): StackEntry {
     slices: stack.slices.length,
     rows: grid.rows,
     columns: grid.columns,
-    pixelSpacingMm: grid.pixelSpacingMm,
+    pixelSpacingMm: grid.unscaled ? null : grid.pixelSpacingMm,
     sliceSpacingMm: stack.sliceSpacingMm ?? null,
     thicknessMm: acquisition.thicknessMm ?? null,
     transferSyntaxUid,

@@ -1,10 +1,17 @@
 import { formatCount, formatQuantity, visibleText } from '../../core/format/index.js';
 import type { MeasuredPlan } from '../../core/note/index.js';
 import { isQuiet, type RegionValue } from '../../core/region/index.js';
+import { edgesText } from './edgesText.js';
 import { textTable } from './textTable.js';
 
 /** A measured plan for people: tables of regions and contrasts, then every flag and reason. */
-export function measuredText({ regions, contrasts, profiles, stents }: MeasuredPlan): string {
+export function measuredText({
+  regions,
+  contrasts,
+  profiles,
+  stents,
+  edges = [],
+}: MeasuredPlan): string {
   const values = regions.flatMap(({ id, role, soft, sharp }) => [
     { id, role, kernel: 'soft', value: soft },
     ...(sharp === null ? [] : [{ id, role, kernel: 'sharp', value: sharp }]),
@@ -18,7 +25,9 @@ export function measuredText({ regions, contrasts, profiles, stents }: MeasuredP
           'Role',
           'Kernel',
           'Mean',
+          'SE',
           'SD',
+          'Placement',
           'Median',
           'Min',
           'Max',
@@ -44,6 +53,7 @@ export function measuredText({ regions, contrasts, profiles, stents }: MeasuredP
       ),
     );
   }
+  if (edges.length > 0) parts.push(edgesText(edges));
   const remarks = [
     ...values.flatMap(({ id, kernel, value }) =>
       value.flags.filter((flag) => !isQuiet(flag)).map(({ text }) => `${id}, ${kernel}: ${text}`),
@@ -60,7 +70,9 @@ export function measuredText({ regions, contrasts, profiles, stents }: MeasuredP
 function cellsOf(value: RegionValue): readonly string[] {
   return [
     formatQuantity(value.meanHu, 'hu'),
+    formatQuantity(value.standardErrorHu, 'hu'),
     formatQuantity(value.sdHu, 'hu'),
+    formatQuantity(value.placementHu, 'hu'),
     formatQuantity(value.medianHu, 'hu'),
     formatQuantity(value.minHu, 'pixelHu'),
     formatQuantity(value.maxHu, 'pixelHu'),

@@ -9,12 +9,13 @@ import { nearest } from './nearest.js';
 import { progressLine } from './progressLine.js';
 import { readArguments } from './readArguments.js';
 import type { Verb, VerbOutcome } from './verb.js';
-import { recheckVerb } from './verbs/coming.js';
+
 import { exportVerb } from './verbs/export.js';
 import { indexVerb } from './verbs/index.js';
 import { measureVerb } from './verbs/measure.js';
 import { pairsVerb } from './verbs/pairs.js';
 import { phantomVerb } from './verbs/phantom.js';
+import { recheckVerb } from './verbs/recheck.js';
 
 export const VERBS: readonly Verb[] = [
   indexVerb,

@@ -87,7 +87,7 @@ function recentMenu(setup: MenuSetup): Item {
     id: 'recent',
     label: 'Open recent',
     enabled: folders.length > 0,
-    submenu: [...folders, LINE, { label: 'Clear this list', click: setup.onClearRecent }],
+    submenu: [...folders, LINE, { label: 'Clear recent', click: setup.onClearRecent }],
   };
 }
 

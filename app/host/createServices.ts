@@ -73,7 +73,9 @@ export function createServices(options: ServiceOptions): Services {
       library.warm().catch(report);
       const root = grants.find(opened.value.grant)?.root;
       try {
-        if (root !== undefined) await recents.add(root);
+        const gone = root === undefined ? [] : await recents.add(root);
+        // What is no longer listed could not be forgotten one by one.
+        for (const path of gone) await cache.forget(path);
       } catch (error) {
         // The folder is open all the same; only the list of recent folders lacks it.
         if (fileErrorReason(error) === undefined) throw error;

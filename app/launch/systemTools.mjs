@@ -15,6 +15,7 @@ const BROWSERS = [
 const REFERENCE_TOOLS = [
   { package: 'dcmtk', there: () => isInstalled('dcmdump') },
   { package: 'libgdcm-tools', there: () => isInstalled('gdcmconv') },
+  { package: 'poppler-utils', there: () => isInstalled('pdftotext') },
   { package: 'dicom3tools', there: () => isInstalled('dciodvfy') },
   { package: 'poppler-utils', there: () => isInstalled('pdftotext') },
   { package: 'python3-pydicom', there: () => pythonHas('pydicom') },

@@ -33,6 +33,7 @@ export const COMMANDS = [
   command('folder.demonstration', 'Open the synthetic demonstration study', 'File'),
   command('pair.choose', 'Choose pair…', 'File', { key: 'Mod+P', separated: true }),
   command('pair.swap', 'Swap soft and sharp', 'File'),
+  command('pair.mask', 'Leave unmarked padding out', 'File', { toggle: true }),
   command('folder.contents', 'Folder contents and files left out…', 'File'),
   command('export.csv', 'Export table as CSV…', 'File', { key: 'Mod+E', separated: true }),
   command('export.html', 'Export page as HTML…', 'File', { key: 'Mod+Shift+E' }),
@@ -65,6 +66,8 @@ export const COMMANDS = [
     toggle: true,
     separated: true,
   }),
+  command('plot.bands', 'Plaque density by bands', 'View'),
+  command('plot.visible', 'What could be seen', 'View', { letter: 'y' }),
   command('window.file', 'Window from the file', 'View', { letter: 'i', separated: true }),
   command('window.vessel', 'Window for vessel', 'View', { letter: 'v' }),
   command('window.stent', 'Window for stent and calcium', 'View', { letter: 'c' }),
@@ -76,6 +79,7 @@ export const COMMANDS = [
 
   command('tool.ellipse', 'Ellipse', 'Mark', { letter: 'e', group: 'tool' }),
   command('tool.outline', 'Outline', 'Mark', { letter: 'o', group: 'tool' }),
+  command('tool.edge', 'Edge line', 'Mark', { letter: 'l', group: 'tool' }),
   command('role.lumen', 'Mark as lumen', 'Mark', { group: 'role', separated: true }),
   command('role.wall', 'Mark as wall', 'Mark', { group: 'role' }),
   command('role.plaque', 'Mark as plaque', 'Mark', { group: 'role' }),
@@ -85,6 +89,9 @@ export const COMMANDS = [
   command('region.previous', 'Previous region', 'Mark', { letter: 'b' }),
 
   command('note.save', 'Save note now', 'Note', { key: 'Mod+S' }),
+  command('region.keyImage', 'Key image of the region…', 'Note', { letter: 'j' }),
+  command('note.open', 'Reading note…', 'Note', { key: 'Mod+I' }),
+  command('note.recheck', 'Measure the note again…', 'Note'),
   command('contrast.new', 'New contrast…', 'Note', { letter: 'k' }),
 
   command('help.keys', 'Keys', 'Help', { letter: '?' }),

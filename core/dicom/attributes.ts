@@ -29,18 +29,21 @@ export interface Attributes {
   findings(): readonly Finding[];
 }
 
-/** What a data set takes from the one around it. */
+/** What a data set takes from the one around it, or from the reader. */
 interface Surroundings {
-  readonly characterSet: CharacterSet;
-  readonly findings: TextFindings;
+  readonly characterSet?: CharacterSet;
+  readonly findings?: TextFindings;
+  /** Read in whatever the file states. */
+  readonly chosen?: CharacterSet | undefined;
 }
 
-/** @param around of an item: the data set that holds its sequence */
+/** @param around of an item: the data set that holds its sequence; else what the reader chose */
 export function attributesOf(dataSet: DataSet, around?: Surroundings): Attributes {
   const { bytes, littleEndian } = dataSet;
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.length);
   const findings = around?.findings ?? collectTextFindings();
-  const characterSet = ownCharacterSet() ?? around?.characterSet ?? characterSetOf('');
+  const chosen = around?.chosen;
+  const characterSet = chosen ?? ownCharacterSet() ?? around?.characterSet ?? characterSetOf('');
 
   function valueBytes(tag: string): Uint8Array | undefined {
     const place = dataSet.find(tag);
@@ -134,7 +137,7 @@ export function attributesOf(dataSet: DataSet, around?: Surroundings): Attribute
     float: (tag) => binary(tag, 4, (at) => view.getFloat32(at, littleEndian)),
     double: (tag) => binary(tag, 8, (at) => view.getFloat64(at, littleEndian)),
     items: (tag) =>
-      dataSet.items(tag)?.map((item) => attributesOf(item, { characterSet, findings })),
+      dataSet.items(tag)?.map((item) => attributesOf(item, { characterSet, findings, chosen })),
     findings: findings.list,
   };
 }

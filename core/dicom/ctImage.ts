@@ -7,7 +7,15 @@ export interface VoiWindow {
   readonly width: number;
   readonly function: VoiFunction;
   readonly explanation?: string;
+  /** In place of centre and width, which then only say what range it covers. */
+  readonly table?: VoiTable;
 }
+
+/**
+ * A VOI LUT (PS3.3 C.11.2.1.1) as grey levels 0 … 255: each step's level holds from its input (a Modality LUT output)
+ * to the next step's. The first level also holds for all below it, the last for all above.
+ */
+export type VoiTable = readonly (readonly [input: number, level: number])[];
 
 export type VoiFunction = 'LINEAR' | 'LINEAR_EXACT' | 'SIGMOID';
 

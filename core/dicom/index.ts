@@ -1,3 +1,4 @@
+export * from './characterSetChoices.js';
 export type { Codecs, CodedImage, FrameDecoder } from './compressed/codecs.js';
 export type { ByteWalk } from './compressed/fragments.js';
 export type { FramePlaces } from './compressed/framesOfFragments.js';
@@ -8,5 +9,6 @@ export { frameWalkOf } from './frameWalkOf.js';
 export { isReadWhole, isSameInstance } from './isReadWhole.js';
 export type { FrameWalk } from './locateFrames.js';
 export * from './readHeader.js';
+export type { ReadOptions } from './readImage.js';
 export type { StoredValues } from './storedValues.js';
 export { SOP_CLASS, sopClassInWords, TRANSFER_SYNTAX, transferSyntaxInWords } from './uids.js';

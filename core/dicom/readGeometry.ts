@@ -19,8 +19,9 @@ export interface GeometryReading {
 
 /**
  * The pixel grid of a slice from Image Position, Image Orientation and Pixel Spacing (PS3.3 C.7.6.2).
- * Nothing is invented: a missing or impossible value refuses the slice. Directions that are off by less
- * than 1e-3 are made unit and orthogonal.
+ * Nothing is invented: a missing or impossible position or orientation refuses the slice; without a pixel spacing it is
+ * unscaled, and no other spacing of the file stands in for it. Directions that are off by less than 1e-3 are made unit
+ * and orthogonal.
  */
 export function readGeometry(attributes: Attributes): Result<GeometryReading> {
   const rows = attributes.unsignedShort('x00280010');
@@ -39,9 +40,7 @@ export function readGeometry(attributes: Attributes): Result<GeometryReading> {
   const orientation = numbers(attributes, 'x00200037', 6);
   if (!orientation) return refuseMissing('Image Orientation (Patient)', '(0020,0037)');
   const spacing = numbers(attributes, 'x00280030', 2);
-  if (!spacing?.every((value) => value > 0)) {
-    return refuseMissing('Pixel Spacing', '(0028,0030)');
-  }
+  const isScaled = spacing?.every((value) => value > 0) ?? false;
 
   const directions = orthonormal(triple(orientation, 0), triple(orientation, 3));
   if (directions === undefined) {
@@ -56,20 +55,24 @@ export function readGeometry(attributes: Attributes): Result<GeometryReading> {
       positionMm: triple(position, 0),
       rowDirection: directions.row,
       columnDirection: directions.column,
-      pixelSpacingMm: [at(spacing, 0), at(spacing, 1)],
+      pixelSpacingMm: spacing && isScaled ? [at(spacing, 0), at(spacing, 1)] : [1, 1],
       rows,
       columns,
+      ...(!isScaled && { unscaled: true as const }),
     },
-    findings: directions.mended
-      ? [
-          {
-            code: 'orientation-mended',
-            text: 'The direction cosines were not quite unit vectors at a right angle and were put right.',
-          },
-        ]
-      : [],
+    findings: [...(directions.mended ? [MENDED] : []), ...(isScaled ? [] : [NO_SPACING])],
   });
 }
+
+const MENDED: Finding = {
+  code: 'orientation-mended',
+  text: 'The direction cosines were not quite unit vectors at a right angle and were put right.',
+};
+
+const NO_SPACING: Finding = {
+  code: 'no-pixel-spacing',
+  text: 'The file has no pixel spacing: it is shown pixel by pixel, nothing is measured on it, and it is part of no pair.',
+};
 
 function refuseMissing(name: string, tag: string): Result<never> {
   return refuse('no-geometry', `No geometry: ${name} is missing or is no number.`, { tag });

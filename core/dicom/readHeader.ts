@@ -4,7 +4,7 @@ import type { DataSet } from './dataSet.js';
 import { frameRemarks } from './frameRemarks.js';
 import { isDeflated } from './locateFrames.js';
 import { hasPreamble, isFinalRefusal, NOT_DICOM, openDataSet } from './openDataSet.js';
-import { type ImageFile, readImages } from './readImage.js';
+import { type ImageFile, type ReadOptions, readImages } from './readImage.js';
 
 /** What the beginning of a file tells: its CT slices, no slice and why, or that more of the file is needed. */
 export type HeaderReading =
@@ -26,7 +26,11 @@ const CODE_STREAM_HEAD = 512;
  * @param bytes the beginning of the file; 8 KiB is enough for most
  * @param fileSize the size of the whole file, bytes
  */
-export function readHeader(bytes: Uint8Array, fileSize: number): HeaderReading {
+export function readHeader(
+  bytes: Uint8Array,
+  fileSize: number,
+  options: ReadOptions = {},
+): HeaderReading {
   const whole = bytes.length >= fileSize;
   const leftOut = ({ code, text }: Refusal): HeaderReading => ({ kind: 'leftOut', code, text });
   if (fileSize === 0) {
@@ -40,7 +44,7 @@ export function readHeader(bytes: Uint8Array, fileSize: number): HeaderReading {
     return leftOut(hasPreamble(bytes) ? dataSet.refusal : NOT_DICOM.refusal);
   }
   const { pixelData } = dataSet.value;
-  const file = readImages(dataSet.value);
+  const file = readImages(dataSet.value, options);
   if (!file.ok) {
     const saysAnotherKind = file.refusal.code === 'not-a-ct-image';
     const mayGoOn = !whole && !saysAnotherKind && pixelData === undefined;

@@ -1,5 +1,6 @@
 import { type Finding, type Result, refuse, success } from '../result.js';
 import { type Attributes, attributesOf } from './attributes.js';
+import { characterSetOf } from './characterSet.js';
 import { type CheckedPixels, checkPixelData } from './checkPixelData.js';
 import { correctEncoding } from './correctEncoding.js';
 import type { CtImage } from './ctImage.js';
@@ -25,9 +26,21 @@ export interface ImageFile {
   readonly leftOut: readonly Finding[];
 }
 
+/** How a file is to be read, where the reader decided against what it says. */
+export interface ReadOptions {
+  /** Values of Specific Character Set to read all texts in; see {@link CHARACTER_SET_CHOICES}. */
+  readonly characterSet?: string | undefined;
+}
+
 /** The CT slices of a data set, or why the file has none that the bench can use. Pixels are not touched. */
-export function readImages(dataSet: DataSet): Result<ImageFile> {
-  const attributes = attributesOf(dataSet);
+export function readImages(
+  dataSet: DataSet,
+  { characterSet }: ReadOptions = {},
+): Result<ImageFile> {
+  const chosen = characterSet === undefined ? undefined : characterSetOf(characterSet);
+  const attributes = attributesOf(dataSet, { chosen });
+  const choice =
+    characterSet === undefined ? [] : [chosenSet(characterSet, attributes.text('x00080005'))];
   const kind = readKind(attributes, dataSet);
   if (!kind.ok) return kind;
   const frames = readFrameList(dataSet, attributes, kind.value);
@@ -62,7 +75,7 @@ export function readImages(dataSet: DataSet): Result<ImageFile> {
       remarks.add(index, { code: 'frame-missing', text: 'Pixel Data ends before it.' });
       continue;
     }
-    const shared = [...dataSet.findings, ...frames.value.findings];
+    const shared = [...dataSet.findings, ...frames.value.findings, ...choice];
     const image = imageOf(frame, slice.value, kind.value, checked, shared);
     images.push(kind.value.enhanced ? { ...image, frame: index } : image);
   }
@@ -101,8 +114,9 @@ function imageOf(
 ): CtImage {
   const { codeStream } = checked;
   const corrected = codeStream && correctEncoding(encoding.pixels, codeStream);
+  const pixels = corrected?.pixels ?? encoding.pixels;
   const uids = readUids(attributes);
-  const windows = readWindows(attributes);
+  const windows = readWindows(attributes, pixels);
   const stated = readAcquisition(attributes, uids.series);
   const lossy = stated.lossy || checked.lossy;
   const instanceNumber = attributes.integer('x00200013');
@@ -116,7 +130,7 @@ function imageOf(
     identity: readIdentity(attributes, uids.study),
     acquisition: { ...stated, lossy },
     grid: geometry.grid,
-    pixels: corrected?.pixels ?? encoding.pixels,
+    pixels,
     windows: windows.windows,
     findings: [
       ...shared,
@@ -128,6 +142,14 @@ function imageOf(
       ...(lossy ? [LOSSY] : []),
       ...attributes.findings(),
     ],
+  };
+}
+
+function chosenSet(chosen: string, stated: string | undefined): Finding {
+  const says = stated === undefined ? 'none' : `“${stated}”`;
+  return {
+    code: 'character-set-chosen',
+    text: `Texts were read in the character set “${chosen}”, as the reader chose; the file states ${says}.`,
   };
 }
 

@@ -1,14 +1,19 @@
 import type { Finding } from '../result.js';
 import type { Attributes } from './attributes.js';
-import type { VoiFunction, VoiWindow } from './ctImage.js';
+import type { PixelEncoding, VoiFunction, VoiWindow } from './ctImage.js';
+import { readVoiTables } from './readVoiTables.js';
 
 const FUNCTIONS: readonly VoiFunction[] = ['LINEAR', 'LINEAR_EXACT', 'SIGMOID'];
 
 /**
- * The windows of a file, first one first (PS3.3 C.11.2.1.2). A window that its function does not allow
- * (LINEAR needs a width of at least 1, the others one above 0) is left out with a finding.
+ * The windows of a file, first one first (PS3.3 C.11.2.1.2), then its lookup tables (C.11.2.1.1); the standard leaves
+ * the choice to the reader. A window that its function does not allow (LINEAR needs a width of at least 1, the others
+ * one above 0) is left out with a finding.
  */
-export function readWindows(attributes: Attributes): {
+export function readWindows(
+  attributes: Attributes,
+  pixels: PixelEncoding,
+): {
   windows: readonly VoiWindow[];
   findings: readonly Finding[];
 } {
@@ -44,11 +49,28 @@ export function readWindows(attributes: Attributes): {
       ...(explanation && { explanation }),
     });
   }
-  if (windows.length === 0 && attributes.has('x00283010')) {
-    findings.push({
-      code: 'voi-lut',
-      text: 'The file has a lookup table for display in place of a window; a window is used.',
-    });
-  }
-  return { windows, findings };
+  const tables = readVoiTables(attributes, hasSignedOutput(pixels));
+  return {
+    windows: [...windows, ...tables.windows],
+    findings: [...findings, ...tables.findings],
+  };
+}
+
+/**
+ * Whether what enters a table can be negative (PS3.3 C.11.2.1.1): HU always can; a rescale where an end of the stored
+ * range comes out so; a Modality LUT never; without either, signed pixels.
+ */
+function hasSignedOutput({
+  unit,
+  rescale,
+  modalityLut,
+  signed,
+  bitsStored,
+}: PixelEncoding): boolean {
+  if (unit === 'HU') return true;
+  if (rescale === undefined) return modalityLut === undefined && signed;
+  const low = signed ? -(2 ** (bitsStored - 1)) : 0;
+  return [low, low + 2 ** bitsStored - 1].some(
+    (stored) => stored * rescale.slope + rescale.intercept < 0,
+  );
 }

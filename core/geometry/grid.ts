@@ -12,6 +12,12 @@ export interface SliceGrid {
   readonly pixelSpacingMm: readonly [number, number];
   readonly rows: number;
   readonly columns: number;
+  /**
+   * Set where the file has no pixel spacing. `pixelSpacingMm` is then [1, 1], which lays the pixels out on the screen and
+   * is no length: nothing in the plane of the slice may be measured, compared or told in mm (AWKWARD row 88). The
+   * position and the directions are the file's.
+   */
+  readonly unscaled?: true;
 }
 
 /** A place in a slice's pixel indices: 0 is the centre of the first column or row. Fractions are places between. */

@@ -1,4 +1,5 @@
-import type { CtImage, PixelEncoding, VoiWindow } from '../dicom/index.js';
+import type { CtImage, PixelEncoding, VoiTable, VoiWindow } from '../dicom/index.js';
+import { formatFixed } from '../format/index.js';
 import { rescaled } from './hounsfield.js';
 
 /** A window of our own naming, in HU. */
@@ -37,6 +38,38 @@ export function defaultWindow({ windows, pixels }: CtImage): VoiWindow {
     function: 'LINEAR',
     explanation: 'Full range',
   };
+}
+
+/**
+ * The file's window to be shown next: the one after that which is shown, round and round, the first when none of them
+ * is shown.
+ */
+export function nextFileWindow(image: CtImage, shown: VoiWindow): VoiWindow {
+  const { windows } = image;
+  const at = windows.findIndex((one) => isSameWindow(one, shown));
+  return windows[(at + 1) % windows.length] ?? defaultWindow(image);
+}
+
+/** True when both show the same, whatever they are called. */
+export function isSameWindow(a: VoiWindow, b: VoiWindow): boolean {
+  return (
+    a.centre === b.centre &&
+    a.width === b.width &&
+    a.function === b.function &&
+    isSameTable(a.table, b.table)
+  );
+}
+
+function isSameTable(a: VoiTable | undefined, b: VoiTable | undefined): boolean {
+  if (a === b) return true;
+  if (a === undefined || b === undefined || a.length !== b.length) return false;
+  return a.every(([input, level], index) => b[index]?.[0] === input && b[index]?.[1] === level);
+}
+
+/** A window in few words: 'C 300 W 1200', or the name of its table. Names come from the file: show them as text. */
+export function windowWords({ centre, width, table, explanation }: VoiWindow): string {
+  if (table !== undefined) return `LUT “${explanation ?? 'without name'}”`;
+  return `C ${formatFixed(centre, 0)} W ${formatFixed(width, 0)}`;
 }
 
 /** Least and largest output of the Modality LUT: of its table, or of the rescaled ends of the stored range. */

@@ -33,12 +33,21 @@ export function createNote(beginning: NoteBeginning): Note {
     study,
     pair,
     conditions,
+    conditionsByReader: [],
+    bandTable: 'six-classes',
+    densities: [],
+    anatomy: { dominance: null, absentSegments: [] },
     noise: 'reference',
     findings: [],
     regions: [],
     contrasts: [],
+    edges: [],
+    visibility: null,
     lastNumbers: {},
     comment: '',
+    frames: [],
+    seal: null,
+    amendments: [],
   };
 }
 
@@ -62,6 +71,7 @@ export function notePair(
     link,
     evidence,
     overrides,
+    texture: { soft: null, sharp: null },
   };
 }
 

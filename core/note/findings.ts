@@ -32,6 +32,9 @@ export function setFinding(
     segment: fields.segment === undefined ? (present?.segment ?? null) : fields.segment,
     kind,
     nominalMm: fields.nominalMm === undefined ? (present?.nominalMm ?? null) : fields.nominalMm,
+    lengthMm: fields.lengthMm === undefined ? (present?.lengthMm ?? null) : fields.lengthMm,
+    overlap: fields.overlap === undefined ? (present?.overlap ?? null) : fields.overlap,
+    location: fields.location ?? present?.location ?? '',
     assessability:
       fields.assessability === undefined ? (present?.assessability ?? null) : fields.assessability,
     reason: fields.reason ?? present?.reason ?? '',

@@ -1,14 +1,17 @@
 import type { StoredValues } from '../dicom/index.js';
 import {
+  FLAGS,
   type Flag,
   findSlice,
   measureRegion,
+  type NoiseOfStack,
   notMeasured,
   type RegionValue,
 } from '../region/index.js';
 import { type Result, refuse, success } from '../result.js';
 import type { Stack } from '../stack/index.js';
 import { type MeasuredContrast, measuredContrast } from './measuredContrast.js';
+import { edgeSlices, type MeasuredEdgeLine, measureEdges } from './measureEdges.js';
 import type { Plan, PlanRegion } from './plan.js';
 import type { Kernel } from './schema.js';
 
@@ -18,6 +21,8 @@ export interface MeasuredPlan {
   readonly contrasts: readonly ({ readonly id: string } & MeasuredContrast)[];
   readonly profiles: readonly MeasuredProfile[];
   readonly stents: readonly MeasuredStent[];
+  /** Absent where the plan has no edge lines. */
+  readonly edges?: readonly MeasuredEdgeLine[];
 }
 
 /** A region on both kernels; null on a kernel that the plan does not name. */
@@ -47,9 +52,14 @@ export interface MeasuredStent {
 /** Stored values of one slice of a stack; undefined when they can't be had. */
 export type StackStoredOf = (stack: Stack, sliceIndex: number) => StoredValues | undefined;
 
+const NOT_MEASURED: Readonly<Record<Kernel, NoiseOfStack>> = {
+  soft: FLAGS.noStandardError,
+  sharp: FLAGS.noStandardError,
+};
+
 /** Slices of a stack that the plan's regions lie on, ascending: read these before {@link measurePlan}. */
 export function slicesNeeded(plan: Plan, stack: Stack): readonly number[] {
-  const indices = new Set<number>();
+  const indices = new Set<number>(edgeSlices(plan.edges ?? [], stack));
   for (const { shape } of plan.regions) {
     const found = findSlice(shape, stack);
     if (found.ok) indices.add(found.value.sliceIndex);
@@ -63,6 +73,7 @@ export function slicesNeeded(plan: Plan, stack: Stack): readonly number[] {
  * could then be told from another.
  *
  * @param notOnSharp why nothing may be measured on the sharp stack: another patient, another frame of reference
+ * @param noise the noise of both kernels, for the standard errors, or why it is not known
  */
 export function measurePlan(
   plan: Plan,
@@ -70,27 +81,29 @@ export function measurePlan(
   sharp: Stack | undefined,
   storedOf: StackStoredOf,
   notOnSharp?: Flag,
+  noise: Readonly<Record<Kernel, NoiseOfStack>> = NOT_MEASURED,
 ): Result<MeasuredPlan> {
   for (const [what, list] of Object.entries({
     region: plan.regions,
     contrast: plan.contrasts,
     profile: plan.profiles,
     stent: plan.stents,
+    'edge line': plan.edges ?? [],
   })) {
     const twice = repeatedId(list);
     if (twice !== undefined) {
       return refuse('duplicate-id', `The plan has more than one ${what} ${twice}. Name each once.`);
     }
   }
-  const on = (stack: Stack, { shape }: PlanRegion) =>
-    measureRegion(shape, stack, (sliceIndex) => storedOf(stack, sliceIndex));
+  const on = (stack: Stack, { shape }: PlanRegion, kernel: Kernel) =>
+    measureRegion(shape, stack, (sliceIndex) => storedOf(stack, sliceIndex), noise[kernel]);
   const onSharp = (stack: Stack, region: PlanRegion) =>
-    notOnSharp === undefined ? on(stack, region) : notMeasured(region.shape, notOnSharp);
+    notOnSharp === undefined ? on(stack, region, 'sharp') : notMeasured(region.shape, notOnSharp);
   const regions = plan.regions.map(
     (region): MeasuredRegion => ({
       id: region.id,
       role: region.role,
-      soft: on(soft, region),
+      soft: on(soft, region, 'soft'),
       sharp: sharp === undefined ? null : onSharp(sharp, region),
     }),
   );
@@ -114,6 +127,9 @@ export function measurePlan(
       lumenHu: null,
       reason: 'This version does not measure stents yet.',
     })),
+    ...(plan.edges === undefined
+      ? {}
+      : { edges: measureEdges(plan.edges, soft, sharp, storedOf, notOnSharp) }),
   });
 }
 

@@ -7,11 +7,12 @@ export function noteStack(stack: Stack): NoteStack {
   return {
     seriesInstanceUid: acquisition.seriesInstanceUid,
     ...(acquisition.phasePercent === undefined ? {} : { phasePercent: acquisition.phasePercent }),
+    ...(stack.maskedBelowHu === undefined ? {} : { maskedBelowHu: stack.maskedBelowHu }),
     key: stack.key,
     seriesNumber: acquisition.seriesNumber ?? null,
     seriesDescription: acquisition.seriesDescription ?? null,
     kernelLabel: acquisition.kernelLabel ?? null,
-    pixelSpacingMm: [...grid.pixelSpacingMm],
+    pixelSpacingMm: grid.unscaled ? null : [...grid.pixelSpacingMm],
     sliceSpacingMm: stack.sliceSpacingMm ?? null,
     thicknessMm: acquisition.thicknessMm ?? null,
     slices: stack.slices.length,

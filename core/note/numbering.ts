@@ -6,7 +6,7 @@ export const CONTRAST_LETTER = 'C';
 export const FINDING_LETTER = 'D';
 
 /** Name of a role as the reader sees it at the head of a label: 'Lumen'. */
-const ROLE_NAME: Readonly<Record<Role, string>> = {
+export const ROLE_NAME: Readonly<Record<Role, string>> = {
   lumen: 'Lumen',
   wall: 'Wall',
   plaque: 'Plaque',
@@ -40,7 +40,7 @@ export function nextRegionName(note: Note, role: Role): NextNumber & { readonly 
 /** Highest number by letter, over what the note holds and what it remembers. Kept before anything is removed. */
 export function rememberedNumbers(note: Note): Readonly<Record<string, number>> {
   const highest: Record<string, number> = { ...note.lastNumbers };
-  for (const { id } of [...note.regions, ...note.contrasts, ...note.findings]) {
+  for (const { id } of [...note.regions, ...note.contrasts, ...note.findings, ...note.edges]) {
     const [, letter, digits] = /^([A-Z])(\d{1,9})$/.exec(id) ?? [];
     if (letter === undefined) continue;
     highest[letter] = Math.max(highest[letter] ?? 0, Number(digits));

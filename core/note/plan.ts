@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { ROLES } from '../region/roles.js';
+import { PlanEdgeSchema } from './edgeSchema.js';
 import type { Frozen } from './frozen.js';
 
 const finite = z.number();
@@ -21,6 +22,8 @@ export const ShapeSchema = z.discriminatedUnion('kind', [
 export const StackReferenceSchema = z.object({
   seriesInstanceUid: z.string().min(1),
   phasePercent: finite.exactOptional(),
+  /** Values below it are left out as no image, where the files do not mark them. */
+  maskedBelowHu: finite.exactOptional(),
 });
 
 export const NoiseSourceSchema = z.enum(['lumen', 'wall', 'reference', 'pooled']);
@@ -61,6 +64,8 @@ export const PlanSchema = z.object({
   contrasts: z.array(PlanContrastSchema).default([]),
   profiles: z.array(PlanProfileSchema).default([]),
   stents: z.array(PlanStentSchema).default([]),
+  /** Lines across edges. */
+  edges: z.array(PlanEdgeSchema).exactOptional(),
 });
 
 export type Plan = Frozen<z.infer<typeof PlanSchema>>;

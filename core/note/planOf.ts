@@ -17,9 +17,19 @@ export function planOf(note: Note): Plan {
     })),
     profiles: [],
     stents: [],
+    ...(note.edges.length === 0
+      ? {}
+      : {
+          edges: note.edges.map(({ id, fromMm, toMm, bandMm }) => ({ id, fromMm, toMm, bandMm })),
+        }),
   };
 }
 
-function reference({ seriesInstanceUid, phasePercent }: StackReference): StackReference {
-  return { seriesInstanceUid, ...(phasePercent === undefined ? {} : { phasePercent }) };
+function reference(stack: StackReference): StackReference {
+  const { seriesInstanceUid, phasePercent, maskedBelowHu } = stack;
+  return {
+    seriesInstanceUid,
+    ...(phasePercent === undefined ? {} : { phasePercent }),
+    ...(maskedBelowHu === undefined ? {} : { maskedBelowHu }),
+  };
 }

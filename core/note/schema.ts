@@ -1,11 +1,16 @@
 import { z } from 'zod';
+import { DensitySchema } from './densitySchema.js';
+import { NoteEdgeSchema } from './edgeSchema.js';
 import type { Frozen } from './frozen.js';
+import { AmendmentSchema, FrameDigestSchema, SealSchema } from './lifeSchema.js';
 import {
   NoiseSourceSchema,
   PlanContrastSchema,
   PlanRegionSchema,
   StackReferenceSchema,
 } from './plan.js';
+import { PairTextureSchema } from './textureSchema.js';
+import { VisibilitySchema } from './visibilitySchema.js';
 
 const text = z.string();
 const maybeText = z.string().nullable();
@@ -41,7 +46,8 @@ export const NoteStackSchema = StackReferenceSchema.extend({
   seriesNumber: maybeNumber,
   seriesDescription: maybeText,
   kernelLabel: maybeText,
-  pixelSpacingMm: z.tuple([z.number(), z.number()]),
+  /** Null where the files have none. */
+  pixelSpacingMm: z.tuple([z.number(), z.number()]).nullable(),
   sliceSpacingMm: maybeNumber,
   thicknessMm: maybeNumber,
   slices: z.number().int().positive(),
@@ -71,6 +77,8 @@ export const NotePairSchema = z.object({
   link: LinkSchema,
   evidence: z.array(EvidenceSchema),
   overrides: z.array(PairOverrideSchema).default([]),
+  /** Noise and blur of both kernels, on which the standard errors rest; notes of earlier versions have none. */
+  texture: PairTextureSchema.default({ soft: null, sharp: null }),
 });
 
 export const StudySchema = z.object({
@@ -102,6 +110,11 @@ export const FINDING_KINDS = [
   'reference',
 ] as const;
 
+export const DOMINANCE = ['right', 'left', 'co-dominant'] as const;
+
+/** Conditions that the reader may state where the files are silent. */
+export const STATED_CONDITIONS = ['kvp', 'phasePercent', 'contrastAgent', 'thicknessMm'] as const;
+
 export const ASSESSABILITY = ['assessable', 'limited', 'not assessable'] as const;
 
 /** What is read at one place: a coronary segment of the 18-segment model, or none for a reference. */
@@ -110,8 +123,21 @@ export const NoteFindingSchema = z.object({
   segment: z.number().int().min(1).max(18).nullable(),
   kind: z.enum(FINDING_KINDS),
   nominalMm: maybeNumber,
+  /** Nominal length of a stent. */
+  lengthMm: maybeNumber.default(null),
+  /** Whether the stent overlaps another one; null until the reader says so. */
+  overlap: z.boolean().nullable().default(null),
+  /** Where in the segment it lies, in the reader's words. */
+  location: text.default(''),
   assessability: z.enum(ASSESSABILITY).nullable(),
   reason: text,
+});
+
+/** What the reader says of the whole coronary tree. */
+export const AnatomySchema = z.object({
+  dominance: z.enum(DOMINANCE).nullable(),
+  /** Segments of the 18-segment model that this heart does not have. */
+  absentSegments: z.array(z.number().int().min(1).max(18)),
 });
 
 export const NoteRegionSchema = PlanRegionSchema.extend({
@@ -149,14 +175,31 @@ export const NoteSchema = z.object({
   study: StudySchema,
   pair: NotePairSchema,
   conditions: ConditionsSchema,
+  /** Conditions that the reader stated; all others are the files' own. */
+  conditionsByReader: z.array(z.enum(STATED_CONDITIONS)).default([]),
+  /** Table of bands for the density of plaque. */
+  bandTable: text.default('six-classes'),
+  densities: z.array(DensitySchema).default([]),
+  anatomy: AnatomySchema.default({ dominance: null, absentSegments: [] }),
   /** The noise of new contrasts. */
   noise: NoiseSourceSchema,
   findings: z.array(NoteFindingSchema),
   regions: z.array(NoteRegionSchema),
   contrasts: z.array(NoteContrastSchema),
+  /** Lines across edges; notes of earlier versions have none. */
+  edges: z.array(NoteEdgeSchema).default([]),
+  /** The smallest disc that could be seen; notes of earlier versions have none. */
+  visibility: VisibilitySchema.nullable().default(null),
   /** Highest number ever given, by the letter of the identifier: a number is not used again after a removal. */
   lastNumbers: z.record(text, z.number().int().nonnegative()).exactOptional(),
   comment: text,
+  /** The pixels that the values rest on; notes of earlier versions have none. */
+  frames: z.array(FrameDigestSchema).default([]),
+  seal: SealSchema.nullable().default(null),
+  /** Earlier verified states, oldest first, each with the reason why it was opened again. */
+  amendments: z.array(AmendmentSchema).default([]),
+  /** What was taken out of an export without identity, in sentences; absent in the note itself. */
+  deidentified: z.array(text).exactOptional(),
 });
 
 export type Note = Frozen<z.infer<typeof NoteSchema>>;
@@ -165,6 +208,12 @@ export type NoteContrast = Frozen<z.infer<typeof NoteContrastSchema>>;
 export type NoteFinding = Frozen<z.infer<typeof NoteFindingSchema>>;
 export type NoteStack = Frozen<z.infer<typeof NoteStackSchema>>;
 export type Study = Frozen<z.infer<typeof StudySchema>>;
+export type Density = Frozen<z.infer<typeof DensitySchema>>;
+export type Anatomy = Frozen<z.infer<typeof AnatomySchema>>;
+export type Amendment = Frozen<z.infer<typeof AmendmentSchema>>;
+export type FrameDigest = Frozen<z.infer<typeof FrameDigestSchema>>;
+export type StatedCondition = (typeof STATED_CONDITIONS)[number];
+export type Dominance = (typeof DOMINANCE)[number];
 export type Conditions = Frozen<z.infer<typeof ConditionsSchema>>;
 export type NotePair = Frozen<z.infer<typeof NotePairSchema>>;
 export type PairOverride = Frozen<z.infer<typeof PairOverrideSchema>>;

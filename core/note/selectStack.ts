@@ -1,13 +1,15 @@
 import { type Result, refuse, success } from '../result.js';
-import type { Stack } from '../stack/index.js';
+import { isUnscaled, type Stack, withMaskedPadding } from '../stack/index.js';
 import type { StackReference } from './plan.js';
 
 /** Phases are stated in whole or tenths of a percent; closer than this is the same one. */
 const SAME_PHASE_PERCENT = 0.01;
 
-/** The one stack that a reference names. None, or more than one, is refused: a stack is never guessed. */
+/**
+ * The one stack that a reference names, masked as it says. None, or more than one, is refused: a stack is never guessed.
+ */
 export function selectStack(
-  { seriesInstanceUid, phasePercent }: StackReference,
+  { seriesInstanceUid, phasePercent, maskedBelowHu }: StackReference,
   stacks: readonly Stack[],
 ): Result<Stack> {
   const ofSeries = stacks.filter(
@@ -30,7 +32,15 @@ export function selectStack(
       `Series ${seriesInstanceUid} has no stack at phase ${phasePercent} %. It has: ${phases(ofSeries)}.`,
     );
   }
-  if (others.length === 0) return success(only);
+  if (others.length === 0) {
+    if (isUnscaled(only)) {
+      return refuse(
+        'no-pixel-spacing',
+        `Series ${seriesInstanceUid} has no pixel spacing: nothing can be measured on it.`,
+      );
+    }
+    return maskedBelowHu === undefined ? success(only) : withMaskedPadding(only, maskedBelowHu);
+  }
   const advice =
     phasePercent === undefined && new Set(fitting.map(phaseOf)).size === fitting.length
       ? ' Say which with phasePercent.'

@@ -1,4 +1,4 @@
-import type { Stack } from '../stack/index.js';
+import { isUnscaled, type Stack } from '../stack/index.js';
 import { assessByHeaders, type DetailedAssessment } from './assessPair.js';
 import { commonRange } from './commonRange.js';
 
@@ -20,9 +20,9 @@ const LEAST_SLICES = 8;
 /** A pair that shares less than this part of what the longest shares stands behind it. */
 const SHORT = 0.5;
 
-/** Every two stacks of one patient and study, in series order; those that the headers refuse for good included. */
+/** Every two stacks of one patient and study, in series order; those that the headers refuse for good included, those without scale not. */
 export function candidatesOf(stacks: readonly Stack[]): readonly Candidate[] {
-  return pairsOf(stacks).filter(
+  return pairsOf(stacks.filter((stack) => !isUnscaled(stack))).filter(
     ({ header }) =>
       !header.refusedFor.some(({ check }) => check === 'patient' || check === 'study'),
   );

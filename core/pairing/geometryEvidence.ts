@@ -97,6 +97,10 @@ function overlapEvidence(first: Stack, second: Stack): Evidence {
 
 function pixelSpacingEvidence(a: SliceGrid, b: SliceGrid): Evidence {
   const check = 'pixel spacing';
+  if (a.unscaled || b.unscaled) {
+    const which = a.unscaled && b.unscaled ? 'the two stacks have' : 'one of the stacks has';
+    return { check, state: 'differs', text: `${which} no pixel spacing` };
+  }
   const text = ({ pixelSpacingMm }: SliceGrid): string =>
     `${say(pixelSpacingMm[0], '×')} ${say(pixelSpacingMm[1], 'mm')}`;
   const same = a.pixelSpacingMm.every(
@@ -110,6 +114,9 @@ function pixelSpacingEvidence(a: SliceGrid, b: SliceGrid): Evidence {
 /** Size and centre of the field that the pixels cover; compared in the plane of the slices. */
 function fieldEvidence(a: SliceGrid, b: SliceGrid): Evidence {
   const check = 'field of view';
+  if (a.unscaled || b.unscaled) {
+    return { check, state: 'unknown', text: 'field of view: not known without a pixel spacing' };
+  }
   const [x, y] = [fieldOf(a), fieldOf(b)];
   const apart = subtract(x.centreMm, y.centreMm);
   const differences = [

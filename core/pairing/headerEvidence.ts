@@ -1,7 +1,7 @@
 import type { Acquisition } from '../dicom/index.js';
 import type { Evidence, Link, PairOverride } from '../note/index.js';
 import { FLAGS, type Flag } from '../region/index.js';
-import type { Stack } from '../stack/index.js';
+import { isUnscaled, type Stack } from '../stack/index.js';
 import { acquisitionEvidence } from './acquisitionEvidence.js';
 import { compareNumbers, compareTexts } from './compareStated.js';
 import { geometryEvidence } from './geometryEvidence.js';
@@ -78,9 +78,11 @@ export function headerEvidence(
   const refusal =
     other !== undefined
       ? `Not one acquisition: ${other.text}`
-      : hasComparablePositions && overlap?.state === 'differs'
-        ? `Nothing to compare: ${overlap.text}`
-        : undefined;
+      : isUnscaled(first) || isUnscaled(second)
+        ? 'Nothing to compare: without a pixel spacing no place on one stack is known on the other'
+        : hasComparablePositions && overlap?.state === 'differs'
+          ? `Nothing to compare: ${overlap.text}`
+          : undefined;
   return { link, evidence, needsReason, ...(refusal !== undefined && { refusal }) };
 }
 

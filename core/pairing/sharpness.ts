@@ -1,3 +1,4 @@
+import { type KernelTexture, textureOf } from '../quality/index.js';
 import { FLAGS, type Flag } from '../region/index.js';
 import type { Stack } from '../stack/index.js';
 import type { ReadSlice } from './contract.js';
@@ -38,6 +39,8 @@ export interface SharpnessOptions {
 export interface MeasuredSharpness extends SharpnessDecision {
   readonly noise?: NoiseComparison;
   readonly edges?: EdgeComparison;
+  /** Noise and blur of each stack on its own grid; none where there were too few uniform areas. */
+  readonly textures?: { readonly first: KernelTexture; readonly second: KernelTexture };
   /** Uniform areas that were measured on both, and edges. */
   readonly areas: readonly UniformArea[];
   readonly edgePlaces: readonly MeasuredEdge[];
@@ -49,6 +52,8 @@ export interface MeasuredSharpness extends SharpnessDecision {
 }
 
 const SLICES = 5;
+/** Areas of a slice on which the two stacks are compared: the evenest. */
+const COMPARED_PER_SLICE = 10;
 /** With fewer, a jackknife says nothing of the spread. */
 const LEAST_AREAS = 4;
 const LEAST_EDGES = 4;
@@ -71,9 +76,11 @@ export async function measureSharpness(
   if ('reason' in common)
     return { ...undecided(common.reason), areas: [], edgePlaces: [], lossy, flags };
   const { axes, pairs } = common;
-  const { areas, edges } = measurePlaces(pairs, axes);
+  const { areas: all, edges } = measurePlaces(pairs, axes);
+  const areas = all.filter(({ rank }) => rank < COMPARED_PER_SLICE);
   const noise = areas.length < LEAST_AREAS ? undefined : compareNoise(areas, spacingsOf(pairs));
   const rise = edges.length < LEAST_EDGES ? undefined : compareEdges(edges);
+  const textures = areas.length < LEAST_AREAS ? undefined : texturesOf(all, pairs, rise);
   const evidence: SharpnessEvidence = {
     ...(noise && { noise: noise.level, frequency: noise.texture.frequency }),
     frequencyTellsDirection: noise?.texture.tellsDirection ?? false,
@@ -86,6 +93,7 @@ export async function measureSharpness(
     ...decideSharpness(evidence),
     ...(noise && { noise }),
     ...(rise && { edges: rise }),
+    ...(textures && { textures }),
     areas: areas.map(({ area }) => area),
     edgePlaces: edges.map(({ edge }) => edge),
     ...(areas.length > 0 && {
@@ -94,6 +102,22 @@ export async function measureSharpness(
     lossy,
     flags,
   };
+}
+
+function texturesOf(
+  areas: readonly AreaOnBoth[],
+  pairs: readonly PlanePair[],
+  rise: EdgeComparison | undefined,
+): MeasuredSharpness['textures'] {
+  const spacings = spacingsOf(pairs);
+  const on = (side: 'first' | 'second'): KernelTexture | undefined =>
+    textureOf(
+      areas.map((one) => ({ ...one[side], centreMm: one.area.centreMm })),
+      spacings[side],
+      rise?.[`${side}Mm`].value,
+    );
+  const [first, second] = [on('first'), on('second')];
+  return first && second && { first, second };
 }
 
 /** Spacings of the planes: all slices of a stack have one grid. */
@@ -117,6 +141,8 @@ function compareThickness(first: Stack, second: Stack): SharpnessEvidence['thick
 }
 
 interface AreaOnBoth {
+  /** Place among the areas of its slice, evenest first, from 0. */
+  readonly rank: number;
   readonly area: UniformArea;
   readonly first: AreaSpectrum;
   readonly second: AreaSpectrum;
@@ -140,7 +166,7 @@ function measurePlaces(
   const floorHu = evennessFloorHu(shown.map(({ windows }) => windows));
   const areas = shown.flatMap(({ pair, cells, windows }) =>
     (floorHu === undefined ? [] : findAreas(cells, windows, floorHu)).flatMap(
-      (place): AreaOnBoth[] => {
+      (place, rank): AreaOnBoth[] => {
         const [first, second] = [measureArea(pair.first, place), measureArea(pair.second, place)];
         // An area without any noise is drawn, not scanned: it has no logarithm either.
         if (!first || !second || !(first.sdHu > 0 && second.sdHu > 0)) return [];
@@ -150,7 +176,7 @@ function measurePlaces(
           first: { meanHu: first.meanHu, sdHu: first.sdHu },
           second: { meanHu: second.meanHu, sdHu: second.sdHu },
         };
-        return [{ area, first, second }];
+        return [{ rank, area, first, second }];
       },
     ),
   );

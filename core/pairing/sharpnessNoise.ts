@@ -40,6 +40,9 @@ const SAME_SPACING = 0.005;
 
 /** What one area gives of one stack before it is known which band the two share. */
 export interface AreaSpectrum extends AreaNoise {
+  /** Pixels of the area; the lattice of the spectrum may be larger. */
+  readonly columns: number;
+  readonly rows: number;
   readonly power: ReturnType<typeof noisePower>;
 }
 
@@ -65,6 +68,8 @@ export function measureArea(plane: Plane, place: AreaPlace): AreaSpectrum | unde
   return {
     meanHu: hu.reduce((sum, value) => sum + value, 0) / hu.length,
     sdHu: Math.sqrt(rest.reduce((sum, value) => sum + value * value, 0) / freedom),
+    columns,
+    rows,
     power: noisePower(rest, columns, rows, plane.spacingMm, least),
   };
 }

@@ -1,3 +1,5 @@
+import type { Vec3 } from '../geometry/index.js';
+
 /**
  * Noise and blur of one kernel, measured in the same uniform areas and edges of both stacks: what the trust in a
  * value of that kernel rests on. Plain data, so that it travels between workers and into the note.
@@ -17,6 +19,17 @@ export interface KernelTexture {
   readonly riseMm: number | null;
   /** Full width at half maximum of the Gaussian blur with that rise, mm. */
   readonly blurFwhmMm: number | null;
+  /** Where the noise was measured, and its SD there: noise differs over a slice. */
+  readonly places?: readonly TexturePlace[] | undefined;
+}
+
+/** The noise of one uniform area. */
+export interface TexturePlace {
+  /** Patient space. */
+  readonly centreMm: Vec3;
+  readonly sdHu: number;
+  /** Mean there: the brightest of them is enhanced blood. Notes of earlier versions have none. */
+  readonly meanHu?: number | undefined;
 }
 
 /** Textures of both kernels of a pair; null where they could not be measured. */

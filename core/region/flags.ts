@@ -1,5 +1,7 @@
 import type { Flag } from './value.js';
 
+const NO_STANDARD_ERROR = 'no-standard-error';
+
 /** What may be said of a measured value. Each sentence says what it means for the reader. */
 export const FLAGS = {
   sliceMissing: {
@@ -10,13 +12,17 @@ export const FLAGS = {
     code: 'not-hu',
     text: `The values of this stack are “${unit}”, not HU: nothing is measured.`,
   }),
+  noPixelSpacing: {
+    code: 'no-pixel-spacing',
+    text: 'The files have no pixel spacing: nothing is measured.',
+  },
   paddingInside: (count: number): Flag => ({
     code: 'padding-inside',
     text: `${count} pixel(s) inside are padding and were left out: move the region off the border of the scan.`,
   }),
   belowAir: {
     code: 'unmarked-padding',
-    text: 'Pixels inside lie below −1500 HU and are no image, though the file does not mark them: move the region off the border of the scan.',
+    text: 'Pixels inside lie below −1500 HU and are no image, though the file does not mark them: move the region off the border of the scan, or leave unmarked padding out.',
   },
   overBorder: {
     code: 'over-border',
@@ -41,8 +47,32 @@ export const FLAGS = {
     text: `Not measured here. ${why}`,
   }),
   noStandardError: {
-    code: 'no-standard-error',
-    text: 'No standard error: this version does not measure how the noise is correlated.',
+    code: NO_STANDARD_ERROR,
+    text: 'No standard error: the noise of this kernel was not measured.',
+  },
+  noStandardErrorAlone: {
+    code: NO_STANDARD_ERROR,
+    text: 'No standard error: noise is measured in the same places of a soft and a sharp stack, and here is one stack.',
+  },
+  noStandardErrorYet: {
+    code: NO_STANDARD_ERROR,
+    text: 'No standard error yet: the noise of the two kernels is still to be measured.',
+  },
+  noStandardErrorFewAreas: {
+    code: NO_STANDARD_ERROR,
+    text: 'No standard error: the two stacks have too few uniform areas in common to measure their noise.',
+  },
+  noStandardErrorSoWide: {
+    code: NO_STANDARD_ERROR,
+    text: 'No standard error: the region is wider than 256 pixels, and the noise is not known so far.',
+  },
+  noStandardErrorWithoutPixels: {
+    code: NO_STANDARD_ERROR,
+    text: 'No standard error: no pixel lies inside.',
+  },
+  noPlacement: {
+    code: 'no-placement',
+    text: 'No placement sensitivity: moved by half a pixel or made 0.25 mm smaller, the region holds no pixel. Make it larger.',
   },
 } as const;
 

@@ -1,13 +1,13 @@
 import type { StoredValues } from '../dicom/index.js';
-import { add, type SliceGrid, scale } from '../geometry/index.js';
 import { isPadding, LOWEST_IMAGE_HU, rescaled } from '../intensity/index.js';
-import type { Stack, StackSlice } from '../stack/index.js';
+import { isUnscaled, type Stack, type StackSlice } from '../stack/index.js';
 import { shapeArea } from './area.js';
-import { moveShape } from './change.js';
 import { findSlice } from './findSlice.js';
 import { FLAGS } from './flags.js';
 import { visitRuns } from './pixelsInside.js';
+import { placementSensitivity } from './placement.js';
 import type { Shape } from './shape.js';
+import { type NoiseOfStack, regionStandardError } from './standardError.js';
 import { statistics } from './statistics.js';
 import type { Flag, RegionValue } from './value.js';
 
@@ -17,8 +17,16 @@ export type StoredOf = (sliceIndex: number) => StoredValues | undefined;
 /**
  * Measures a shape on one stack: on the nearest slice, over the pixels whose centres lie inside it, padding left
  * out, nothing resampled. What can't be had is null, and a flag says why.
+ *
+ * @param texture the noise of the stack's kernel, for the standard error of the mean; or why it is not known
  */
-export function measureRegion(shape: Shape, stack: Stack, storedOf: StoredOf): RegionValue {
+export function measureRegion(
+  shape: Shape,
+  stack: Stack,
+  storedOf: StoredOf,
+  texture: NoiseOfStack = FLAGS.noStandardError,
+): RegionValue {
+  if (isUnscaled(stack)) return withoutValue(shape, null, null, null, [FLAGS.noPixelSpacing]);
   const found = findSlice(shape, stack);
   if (!found.ok) return withoutValue(shape, null, null, null, [found.refusal]);
   const { sliceIndex, offsetMm } = found.value;
@@ -30,7 +38,7 @@ export function measureRegion(shape: Shape, stack: Stack, storedOf: StoredOf): R
   if (stack.unit !== 'HU') {
     return withoutValue(shape, sliceIndex, offsetMm, slice, [FLAGS.notHu(stack.unit)]);
   }
-  return measureOnSlice(shape, slice, stored, sliceIndex, offsetMm);
+  return measureOnSlice(shape, slice, stored, { sliceIndex, offsetMm, texture });
 }
 
 /** HU of the pixels in a shape on one slice, padding left out, with what was left out. */
@@ -46,34 +54,59 @@ export function regionValues(
   });
   const values = new Float64Array(count);
   let n = 0;
+  const { padding, rescale } = pixels;
   visitRuns(shape, grid, (from, end) => {
+    if (padding === undefined && rescale !== undefined) {
+      n = copyRun(stored, from, end, rescale, values, n);
+      return;
+    }
     for (let index = from; index < end; index++) {
       const value = stored[index] ?? 0;
-      if (pixels.padding === undefined || !isPadding(value, pixels)) {
-        values[n++] = rescaled(value, pixels);
-      }
+      if (!isPadding(value, pixels)) values[n++] = rescaled(value, pixels);
     }
   });
   return { values: values.subarray(0, n), padding: count - n, overBorder };
+}
+
+/** The usual run, without padding and with slope and intercept. @returns the place after the last value */
+function copyRun(
+  stored: StoredValues,
+  from: number,
+  end: number,
+  { slope, intercept }: { readonly slope: number; readonly intercept: number },
+  values: Float64Array,
+  at: number,
+): number {
+  let next = at;
+  for (let index = from; index < end; index++)
+    values[next++] = (stored[index] as number) * slope + intercept;
+  return next;
 }
 
 function measureOnSlice(
   shape: Shape,
   slice: StackSlice,
   stored: StoredValues,
-  sliceIndex: number,
-  offsetMm: number,
+  {
+    sliceIndex,
+    offsetMm,
+    texture,
+  }: { readonly sliceIndex: number; readonly offsetMm: number; readonly texture: NoiseOfStack },
 ): RegionValue {
   const { grid, acquisition } = slice.image;
   const { values, padding, overBorder } = regionValues(shape, slice, stored);
   const { n, mean, sd, min, max, median } = statistics(values);
-  const flags: Flag[] = [FLAGS.noStandardError];
+  const standardError = regionStandardError(shape, slice, stored, texture);
+  const placement =
+    mean === undefined ? undefined : placementSensitivity(shape, slice, stored, mean);
+  const flags: Flag[] = typeof standardError === 'number' ? [] : [standardError];
   if (padding > 0) flags.push(FLAGS.paddingInside(padding));
   if (min !== undefined && min < LOWEST_IMAGE_HU) flags.push(FLAGS.belowAir);
   if (overBorder) flags.push(FLAGS.overBorder);
   if (n === 0) flags.push(FLAGS.noPixels);
   if (n === 1) flags.push(FLAGS.onePixel);
   if (sd === 0) flags.push(FLAGS.zeroSd);
+  if (mean !== undefined && placement === undefined) flags.push(FLAGS.noPlacement);
   if (acquisition.lossy) flags.push(FLAGS.lossy);
   return {
     n,
@@ -89,56 +122,10 @@ function measureOnSlice(
     sliceOffsetMm: offsetMm,
     sopInstanceUid: slice.image.sopInstanceUid,
     frameNumber: frameNumber(slice),
-    standardErrorHu: null,
-    placementHu: mean === undefined ? null : placement(shape, slice, stored, mean),
+    standardErrorHu: typeof standardError === 'number' ? standardError : null,
+    placementHu: placement ?? null,
     flags,
   };
-}
-
-/** How far the mean moves, at most, when the shape moves by half a pixel in eight directions, HU. */
-function placement(
-  shape: Shape,
-  slice: StackSlice,
-  stored: StoredValues,
-  mean: number,
-): number | null {
-  let farthest = 0;
-  for (const move of halfPixelMoves(slice.image.grid)) {
-    const moved = meanInside(moveShape(shape, move), slice, stored);
-    if (moved === undefined) return null;
-    farthest = Math.max(farthest, Math.abs(moved - mean));
-  }
-  return farthest;
-}
-
-/** Mean alone: stored values are whole numbers, so their sum is exact, and the rescale comes once at the end. */
-function meanInside(
-  shape: Shape,
-  { image: { grid, pixels } }: StackSlice,
-  stored: StoredValues,
-): number | undefined {
-  const { padding } = pixels;
-  let sum = 0;
-  let n = 0;
-  visitRuns(shape, grid, (from, end) => {
-    for (let index = from; index < end; index++) {
-      const value = stored[index] ?? 0;
-      if (padding !== undefined && isPadding(value, pixels)) continue;
-      sum += value;
-      n++;
-    }
-  });
-  return n === 0 ? undefined : rescaled(sum / n, pixels);
-}
-
-function halfPixelMoves({ rowDirection, columnDirection, pixelSpacingMm }: SliceGrid) {
-  return Array.from({ length: 8 }, (_, eighth) => {
-    const angle = (eighth * Math.PI) / 4;
-    return add(
-      scale(rowDirection, 0.5 * pixelSpacingMm[1] * Math.cos(angle)),
-      scale(columnDirection, 0.5 * pixelSpacingMm[0] * Math.sin(angle)),
-    );
-  });
 }
 
 /** What a region has on a stack on which it must not be measured, and why. */

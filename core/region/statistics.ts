@@ -26,16 +26,55 @@ export function statistics(values: ArrayLike<number>): Statistics {
       median: undefined,
     };
   }
-  const sorted = Float64Array.from(values).sort();
-  const mean = meanOf(sorted);
+  const own = Float64Array.from(values);
+  const mean = meanOf(own);
+  let [min, max] = [Infinity, -Infinity];
+  for (const value of own) {
+    if (value < min) min = value;
+    if (value > max) max = value;
+  }
   return {
     n,
     mean,
-    sd: n > 1 ? Math.sqrt(varianceOf(sorted, mean)) : undefined,
-    min: sorted[0],
-    max: sorted[n - 1],
-    median: ((sorted[(n - 1) >> 1] ?? 0) + (sorted[n >> 1] ?? 0)) / 2,
+    sd: n > 1 ? Math.sqrt(varianceOf(own, mean)) : undefined,
+    min,
+    max,
+    median: medianOf(own),
   };
+}
+
+/** The median; the values come out in another order. */
+function medianOf(values: Float64Array): number {
+  const upper = values.length >> 1;
+  const high = selected(values, upper);
+  if (values.length % 2 === 1) return high;
+  // All values before the selected place are no greater: the other middle one is the greatest of them.
+  let low = -Infinity;
+  for (let index = 0; index < upper; index += 1) low = Math.max(low, values[index] as number);
+  return (low + high) / 2;
+}
+
+/** The value that sorting would put at a place, by selection (Hoare 1961, doi 10.1145/366622.366647). */
+function selected(values: Float64Array, place: number): number {
+  let [left, right] = [0, values.length - 1];
+  while (left < right) {
+    const pivot = values[(left + right) >> 1] as number;
+    let [up, down] = [left, right];
+    while (up <= down) {
+      while ((values[up] as number) < pivot) up += 1;
+      while ((values[down] as number) > pivot) down -= 1;
+      if (up > down) break;
+      const kept = values[up] as number;
+      values[up] = values[down] as number;
+      values[down] = kept;
+      up += 1;
+      down -= 1;
+    }
+    if (place <= down) right = down;
+    else if (place >= up) left = up;
+    else break;
+  }
+  return values[place] as number;
 }
 
 /** Mean by a shifted, compensated sum (Neumaier 1974). */

@@ -26,7 +26,9 @@ export interface RegionValue {
   readonly sopInstanceUid: string | null;
   /** Frame of a multi-frame image, counted from 1 as DICOM does; null for an image of its own. */
   readonly frameNumber: number | null;
+  /** Standard error of the mean that noise alone makes, from its autocorrelation on this kernel. */
   readonly standardErrorHu: number | null;
+  /** Largest change of the mean by half-pixel moves and 0.25 mm of size, see placementSensitivity. */
   readonly placementHu: number | null;
   readonly flags: readonly Flag[];
 }

@@ -18,7 +18,7 @@ export interface MeasurementTable {
 
 /** A region or a contrast, with what it came to on each kernel of the pair. */
 export interface TableRow {
-  readonly item: 'region' | 'contrast';
+  readonly item: 'region' | 'contrast' | 'edge line';
   readonly id: string;
   readonly label: string;
   readonly role: string;

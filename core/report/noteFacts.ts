@@ -1,5 +1,7 @@
 import { formatDicomDate, formatFixed, formatPersonName } from '../format/index.js';
 import type { Note, NoteStack } from '../note/schema.js';
+import { identityStatement } from './identityStatement.js';
+import { visibilityFact } from './visibilityFact.js';
 
 /** One line of provenance: what it is, and what the file, the reader or the measurement says. */
 export interface Fact {
@@ -36,6 +38,15 @@ export function noteFacts(note: Note): readonly Fact[] {
     ]),
     ...stackFacts('Soft kernel', pair.soft),
     ...(pair.sharp === null ? [] : stackFacts('Sharp kernel', pair.sharp)),
+    ...(note.visibility === null
+      ? []
+      : [
+          ['Pair', 'Smallest visible disc', visibilityFact(note.visibility)] as [
+            Fact['group'],
+            string,
+            string,
+          ],
+        ]),
     ['Note', 'Reader', note.reader === '' ? null : note.reader],
     ['Note', 'Completion', note.completion],
     ['Note', 'Verification', note.verification],
@@ -44,6 +55,7 @@ export function noteFacts(note: Note): readonly Fact[] {
     ['Note', 'Software', `${note.software.name} ${note.software.version}`],
     ['Note', 'Note identifier', note.id],
     ['Note', 'Synthetic', note.synthetic ? 'yes' : 'no'],
+    ['Note', 'Identity', identityStatement(note)],
     ...(note.comment === ''
       ? []
       : [['Note', 'Comment', note.comment] as [Fact['group'], string, string]]),
@@ -55,17 +67,12 @@ function stackFacts(
   group: 'Soft kernel' | 'Sharp kernel',
   stack: NoteStack,
 ): [Fact['group'], string, string | null][] {
-  const [rows, columns] = stack.pixelSpacingMm;
   return [
     [group, 'Kernel label in the files', stack.kernelLabel],
     [group, 'Series', seriesText(stack)],
     [group, 'Series Instance UID', stack.seriesInstanceUid],
     [group, 'Phase', withUnit(stack.phasePercent ?? null, '%')],
-    [
-      group,
-      'Pixel spacing',
-      `${formatFixed(rows, 4)} mm between rows, ${formatFixed(columns, 4)} mm between columns`,
-    ],
+    [group, 'Pixel spacing', spacingText(stack.pixelSpacingMm)],
     [group, 'Slices', `${stack.slices}, ${withUnit(stack.sliceSpacingMm, 'mm') ?? UNKNOWN} apart`],
     [group, 'Slice thickness', withUnit(stack.thicknessMm, 'mm')],
     [group, 'Unit of its values', stack.unit],
@@ -81,4 +88,10 @@ function seriesText({ seriesNumber, seriesDescription }: NoteStack): string | nu
 
 function withUnit(value: number | null, unit: string): string | null {
   return value === null ? null : `${value} ${unit}`;
+}
+
+function spacingText(spacingMm: NoteStack['pixelSpacingMm']): string | null {
+  if (spacingMm === null) return null;
+  const [rows, columns] = spacingMm;
+  return `${formatFixed(rows, 4)} mm between rows, ${formatFixed(columns, 4)} mm between columns`;
 }

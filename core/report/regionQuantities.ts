@@ -60,7 +60,7 @@ const DEFINITIONS = [
     key: 'standardErrorHu',
     digits: 'hu',
     unit: 'pixel',
-    formula: 'from the autocorrelation of the noise',
+    formula: 'of the mean, by noise alone, from its autocorrelation on this kernel',
     optional: true,
   },
   {
@@ -68,7 +68,8 @@ const DEFINITIONS = [
     key: 'placementHu',
     digits: 'hu',
     unit: 'pixel',
-    formula: 'largest change of the mean when moved by half a pixel in eight directions',
+    formula:
+      'largest change of the mean when moved by half a pixel in eight directions or made 0.25 mm larger or smaller at its edge',
     optional: true,
   },
 ] as const satisfies readonly Definition[];
@@ -84,10 +85,21 @@ export function regionQuantities(value: RegionValue, unit: string): readonly Qua
       {
         quantity,
         value: known,
-        printed: digits === 'count' ? formatFixed(known, 0) : formatQuantity(known, digits),
+        printed: printedDigits(known, digits),
         unit: kind === 'pixel' ? unit : kind,
         formula,
       },
     ];
   });
+}
+
+/** A number as the tables print a quantity of a region, or a CNR. */
+export function printedAs(quantity: string, value: number): string {
+  const definitions: readonly Definition[] = DEFINITIONS;
+  const definition = definitions.find((one) => one.quantity === quantity);
+  return printedDigits(value, definition?.digits ?? 'ratio');
+}
+
+function printedDigits(value: number | null, digits: Definition['digits']): string {
+  return digits === 'count' ? formatFixed(value, 0) : formatQuantity(value, digits);
 }

@@ -1,6 +1,7 @@
 import type { Note } from '../note/schema.js';
 import { speaksAgainst } from '../pairing/checks.js';
 import { cautionsOf } from './cautions.js';
+import { identityStatement } from './identityStatement.js';
 
 /** Lines that go with a table on the clipboard: what the numbers are from, and the cautions that can't be left out. */
 export function shortProvenance(note: Note): readonly string[] {
@@ -13,7 +14,8 @@ export function shortProvenance(note: Note): readonly string[] {
   const kvp = conditions.kvp === null ? 'tube voltage not stated' : `${conditions.kvp} kV`;
   const doubts = pair.evidence.filter(speaksAgainst);
   return [
-    `${kernels}; ${kvp}; ${software.name} ${software.version}; ${note.changedAt}; ${note.verification}, ${note.completion}.`,
+    `${kernels}; ${kvp}; ${software.name} ${software.version}; ${note.changedAt || 'time not stated'}; ${note.verification}, ${note.completion}.`,
+    ...(note.deidentified === undefined ? [] : [identityStatement(note)]),
     ...(pair.sharp === null || doubts.length === 0
       ? []
       : [`Pair: ${doubts.map(({ check, state }) => `${check} ${state}`).join('; ')}.`]),

@@ -1,6 +1,7 @@
 import { csvFormatRow } from 'd3';
 import { MINUS, NO_VALUE } from '../format/index.js';
 import type { Note } from '../note/schema.js';
+import { edgeLineRows } from './edgeLineRows.js';
 import { type KernelValues, measurementTable, type TableRow } from './measurementTable.js';
 import type { QuantityValue } from './regionQuantities.js';
 import { type Cell, spreadsheetCell } from './spreadsheetCell.js';
@@ -62,7 +63,7 @@ export function toCsv(note: Note): string {
     changed_at: note.changedAt,
     note_id: note.id,
   };
-  const values = table.rows.flatMap((row) =>
+  const values = [...table.rows, ...edgeLineRows(note)].flatMap((row) =>
     row.kernels.flatMap((kernel) => quantitiesOf(kernel).map((q) => valueLine(row, kernel, q))),
   );
   const facts = table.facts.map(({ group, name, text }): Line => remark(`${group}: ${name}`, text));

@@ -1,5 +1,6 @@
 import { formatFixed, formatPosition } from '../format/index.js';
 import type { Note } from '../note/schema.js';
+import { edgeLineHtml } from './edgeLineHtml.js';
 import { escapeHtml } from './escapeHtml.js';
 import {
   type KernelValues,
@@ -33,7 +34,7 @@ ${cautions(table)}
 ${regions(table)}
 <h2>Contrasts</h2>
 ${contrasts(table)}
-<h2>Where the numbers come from</h2>
+${edgeLineHtml(note)}<h2>Where the numbers come from</h2>
 ${facts(table)}
 ${cautions(table)}
 ${banner(table)}</body>

@@ -27,6 +27,7 @@ const REGION_QUANTITIES = [
   'n',
   'sampled area',
   'SNR',
+  'standard error',
   'placement',
 ] as const;
 

@@ -34,6 +34,7 @@ export function groupKey({ identity, acquisition, grid, pixels }: CtImage): stri
 export function sameGridKind(a: CtImage, b: CtImage): boolean {
   const parallel = (x: number): boolean => x > 1 - COSINE_TOLERANCE;
   return (
+    a.grid.unscaled === b.grid.unscaled &&
     parallel(dot(a.grid.rowDirection, b.grid.rowDirection)) &&
     parallel(dot(a.grid.columnDirection, b.grid.columnDirection)) &&
     parallel(dot(gridNormal(a.grid), gridNormal(b.grid))) &&

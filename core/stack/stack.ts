@@ -25,6 +25,8 @@ export interface Stack {
   /** Unit of its values: HU, another unit as the file gives it, or 'stored'. */
   readonly unit: string;
   readonly findings: readonly Finding[];
+  /** Values below it are taken as padding, because the reader chose so; absent where nothing was chosen. */
+  readonly maskedBelowHu?: number;
 }
 
 /** A file that is no part of any stack, and why. */

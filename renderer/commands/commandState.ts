@@ -1,5 +1,7 @@
 import { COMMANDS, type CommandId } from '../../core/commands/index.js';
+import { isMasked } from '../services/masking.js';
 import type { AppState } from '../state/appState.js';
+import { selectedLine } from '../state/lineSelectors.js';
 import { selectedRegion } from '../state/regionSelectors.js';
 import { linksOf } from '../state/selectors.js';
 
@@ -34,6 +36,7 @@ export function isEnabled(state: AppState, id: CommandId): boolean {
   if (id === 'link.scroll' || id === 'link.view') {
     return pair.sharp !== undefined && state.compare.way === 'open';
   }
+  if (id === 'pair.mask') return pair.soft.unit === 'HU' && note.verification !== 'VERIFIED';
   if (id === 'link.window' || id === 'pair.swap') return pair.sharp !== undefined;
   if (id.startsWith('compare.')) return pair.sharp !== undefined;
   if (id.startsWith('alternate.')) return state.compare.way === 'alternate';
@@ -42,7 +45,10 @@ export function isEnabled(state: AppState, id: CommandId): boolean {
   if (id === 'edit.undo') return state.history.undo.length > 0;
   if (id === 'edit.redo') return state.history.redo.length > 0;
   if (id === 'contrast.new') return note.regions.length > 1;
-  if (id === 'region.delete' || id === 'slice.region') return selectedRegion(state) !== undefined;
+  if ((id === 'region.delete' || id === 'slice.region') && selectedLine(state) !== undefined)
+    return true;
+  if (id === 'region.delete' || id === 'slice.region' || id === 'region.keyImage')
+    return selectedRegion(state) !== undefined;
   return true;
 }
 
@@ -51,6 +57,7 @@ export function isChecked(state: AppState, id: CommandId): boolean {
   if (id.startsWith('tool.')) return id === `tool.${state.tool}`;
   if (id.startsWith('role.')) return id === `role.${state.role}`;
   if (id === 'view.smooth') return state.smooth;
+  if (id === 'pair.mask') return state.pair !== undefined && isMasked(state.pair);
   if (id === 'view.noiseAreas') return state.noiseAreas && hasNoiseAreas(state);
   if (id.startsWith('compare.')) {
     return state.pair?.sharp !== undefined && id === `compare.${state.compare.way}`;

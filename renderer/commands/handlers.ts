@@ -1,5 +1,5 @@
 import type { CommandId } from '../../core/commands/index.js';
-import { defaultWindow, PRESETS } from '../../core/intensity/index.js';
+import { nextFileWindow, PRESETS } from '../../core/intensity/index.js';
 import type { Note } from '../../core/note/index.js';
 import type { Role } from '../../core/region/index.js';
 import type { Shell } from '../host/shell.js';
@@ -81,6 +81,9 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
     'pair.swap': () => {
       void bench.swapPair();
     },
+    'pair.mask': () => {
+      void bench.turnMask();
+    },
     'folder.contents': dialog('contents'),
     'export.csv': save('csv'),
     'export.html': save('html'),
@@ -120,11 +123,16 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
         const message = text === undefined ? state.message : ({ tone: 'plain', text } as const);
         return { ...state, noiseAreas, message };
       }),
+    'plot.bands': () => store.change('Choose plot', (state) => ({ ...state, plot: 'bands' })),
+    'plot.visible': () => store.change('Choose plot', (state) => ({ ...state, plot: 'visible' })),
     'window.file': () => {
       const state = store.now();
       const image = stackOf(state, state.active)?.slices[0].image;
       if (image !== undefined)
-        store.change('Window', setWindow(state.active, defaultWindow(image)));
+        store.change(
+          'Window',
+          setWindow(state.active, nextFileWindow(image, state.plates[state.active].window)),
+        );
     },
     'window.vessel': preset('vessel'),
     'window.stent': preset('stent'),
@@ -135,6 +143,7 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
     'link.view': link('view'),
     'tool.ellipse': tool('ellipse'),
     'tool.outline': tool('outline'),
+    'tool.edge': tool('edge'),
     'role.lumen': role('lumen'),
     'role.wall': role('wall'),
     'role.plaque': role('plaque'),
@@ -143,6 +152,9 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
     'region.next': step(1),
     'region.previous': step(-1),
     'note.save': () => bench.saveNow(),
+    'region.keyImage': dialog('keyImage'),
+    'note.open': dialog('note'),
+    'note.recheck': dialog('recheck'),
     'contrast.new': dialog('newContrast'),
     'help.keys': dialog('keys'),
     'help.numbers': dialog('numbers'),

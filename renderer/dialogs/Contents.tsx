@@ -1,3 +1,5 @@
+import { useState } from 'preact/hooks';
+import { CHARACTER_SET_CHOICES } from '../../core/dicom/index.js';
 import {
   formatCount,
   formatDicomDate,
@@ -7,6 +9,7 @@ import {
   visibleText,
 } from '../../core/format/index.js';
 import type { FolderIndex, Stack } from '../../core/stack/index.js';
+import { Choice } from '../panels/parts/Choice.js';
 import { Dialog } from './Dialog.js';
 import { leftOutGroups, type StudyContents, studiesOf } from './stackLists.js';
 
@@ -16,6 +19,9 @@ export interface ContentsProps {
   /** Keys of the stacks that are on the plates. */
   readonly softKey: string | undefined;
   readonly sharpKey: string | undefined;
+  /** What the texts are read in; undefined for what the files state. */
+  readonly characterSet: string | undefined;
+  readonly onCharacterSet: (characterSet: string | undefined) => void;
   readonly onChoosePair: () => void;
   readonly onClose: () => void;
 }
@@ -55,6 +61,7 @@ export function Contents(props: ContentsProps) {
         {studiesOf(index).map((study) => (
           <StudyTable key={study.stacks[0]?.key} study={study} {...props} />
         ))}
+        {index.stacks.length > 0 && <TextsReadAs {...props} />}
         {groups.length > 0 && (
           <section class="left-out">
             <h3>Files left out</h3>
@@ -78,6 +85,41 @@ export function Contents(props: ContentsProps) {
         )}
       </div>
     </Dialog>
+  );
+}
+
+/** Reading texts again in another set, for files that name the wrong one. Nothing is guessed. */
+function TextsReadAs({
+  characterSet = '',
+  onCharacterSet,
+}: Pick<ContentsProps, 'characterSet' | 'onCharacterSet'>) {
+  const [chosen, setChosen] = useState(characterSet);
+  return (
+    <section class="texts-read-as">
+      <h3>Names that look wrong</h3>
+      <p class="dim">
+        Files can name another character set than their texts are written in. Choose how to read
+        them: the folder is then read again, images and numbers stay as they are, and the findings
+        say what you chose.
+      </p>
+      <Choice
+        label="Read names and descriptions as"
+        value={chosen}
+        options={[
+          { value: '', text: 'The files state' },
+          ...CHARACTER_SET_CHOICES.map(({ stated, title }) => ({ value: stated, text: title })),
+        ]}
+        onChange={setChosen}
+      />{' '}
+      <button
+        type="button"
+        class="button outlined"
+        disabled={chosen === characterSet}
+        onClick={() => onCharacterSet(chosen === '' ? undefined : chosen)}
+      >
+        Read again
+      </button>
+    </section>
   );
 }
 
@@ -156,7 +198,7 @@ function StackRow({ stack, plate }: StackRowProps) {
       <td>{acquisition.kernelLabel ? `“${visibleText(acquisition.kernelLabel)}”` : NO_VALUE}</td>
       <td class="number">{formatCount(stack.slices.length)}</td>
       <td class="number">{formatFixed(stack.sliceSpacingMm, 2)}</td>
-      <td class="number">{formatFixed(grid.pixelSpacingMm[1], 3)}</td>
+      <td class="number">{grid.unscaled ? NO_VALUE : formatFixed(grid.pixelSpacingMm[1], 3)}</td>
       <td class="number">{formatFixed(acquisition.phasePercent, 0)}</td>
       <td class="number">{formatFixed(acquisition.kvp, 0)}</td>
       <td>{visibleText(stack.unit)}</td>

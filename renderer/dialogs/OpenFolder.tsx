@@ -16,6 +16,7 @@ export interface OpenFolderProps {
   readonly onChoose: (folderId: string) => void;
   readonly onRecent: (id: string) => void;
   readonly onForget: (id: string) => void;
+  readonly onForgetAll: () => void;
   readonly onDemonstration: () => void;
   readonly onCancel: () => void;
   readonly onClose: () => void;
@@ -166,6 +167,18 @@ function Recent(props: OpenFolderProps & { readonly disabled: boolean }) {
           </li>
         ))}
       </ul>
+      <button
+        type="button"
+        class="button outlined"
+        disabled={props.disabled}
+        onClick={props.onForgetAll}
+      >
+        Clear recent
+      </button>
+      <p class="dim">
+        Also deletes what was kept of the headers of these folders, names among it, to open them
+        faster. Images and notes stay.
+      </p>
     </div>
   );
 }

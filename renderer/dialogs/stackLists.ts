@@ -72,7 +72,9 @@ export function stackDetails(stack: Stack): readonly string[] {
     `${count} ${count === 1 ? 'slice' : 'slices'} of ${grid.columns} × ${grid.rows}`,
     stack.sliceSpacingMm === undefined ? '' : `every ${formatFixed(stack.sliceSpacingMm, 2)} mm`,
     thicknessMm === undefined ? '' : `${formatFixed(thicknessMm, 2)} mm thick`,
-    `pixels ${formatFixed(grid.pixelSpacingMm[1], 3)} mm`,
+    grid.unscaled
+      ? 'no pixel spacing: for looking only'
+      : `pixels ${formatFixed(grid.pixelSpacingMm[1], 3)} mm`,
     phasePercent === undefined ? 'phase unknown' : `${formatFixed(phasePercent, 0)} % phase`,
     kvp === undefined ? 'kVp unknown' : `${formatFixed(kvp, 0)} kVp`,
   ].filter((text) => text !== '');

@@ -17,6 +17,8 @@ import { requestHeaders, send, sendForJson, type Transport } from './transport.j
 /** A note as the host keeps it, and the tag that guards it against another window. */
 export interface KeptNote {
   readonly note: Note;
+  /** As it stands in its file, with fields that this version does not know: what a seal is checked on. */
+  readonly json: unknown;
   readonly etag: string;
 }
 
@@ -39,10 +41,12 @@ export interface HostClient {
   forgetOne(id: string, signal: AbortSignal): Promise<Result<readonly RecentFolder[]>>;
   /** Forgets all recent folders; gives the list that is left. */
   forgetRecent(signal: AbortSignal): Promise<Result<readonly RecentFolder[]>>;
+  /** With a character set, all texts are read in it whatever the files state. */
   index(
     grant: string,
     onProgress: (progress: Progress) => void,
     signal: AbortSignal,
+    characterSet?: string,
   ): Promise<Result<FolderIndex>>;
   /** With a frame (from 0) of a multi-frame file, only that frame's encoded bytes. */
   frame(grant: string, fileId: number, frame?: number): FrameRequest;
@@ -62,6 +66,12 @@ export interface HostClient {
     etag: string | undefined,
     signal: AbortSignal,
   ): Promise<Result<string>>;
+  /** The note as a PDF file, with its key images as PNG files in base64. */
+  writePdf(
+    note: Note,
+    pictures: readonly { readonly regionId: string; readonly png: string }[],
+    signal: AbortSignal,
+  ): Promise<Result<Uint8Array<ArrayBuffer>>>;
   /** Holds a stream open for as long as the page lives; ends when the host is gone. */
   presence(signal: AbortSignal): Promise<Result<undefined>>;
 }
@@ -102,8 +112,11 @@ export function createClient(origin: string, transport: Transport): HostClient {
       }),
     forgetRecent: (signal) =>
       sendForJson(transport, { method: 'DELETE', url: api.recent.$url(), signal }),
-    index: (grant, onProgress, signal) =>
-      followJob(transport, { method: 'GET', url: indexUrl(grant), signal }, onProgress),
+    index: (grant, onProgress, signal, characterSet) => {
+      const url = indexUrl(grant);
+      if (characterSet !== undefined) url.searchParams.set('characterSet', characterSet);
+      return followJob(transport, { method: 'GET', url, signal }, onProgress);
+    },
     frame: (grant, fileId, frame) => {
       const url = folder.frames[':fileId'].$url({
         param: { grant: encoded(grant), fileId: String(fileId) },
@@ -132,6 +145,16 @@ export function createClient(origin: string, transport: Transport): HostClient {
         ? refuse('no-etag', 'The note was saved, but without a tag; open it again before going on.')
         : success(tag);
     },
+    writePdf: async (note, pictures, signal) => {
+      const url = api.exports.pdf.$url();
+      const answer = await send(transport, {
+        method: 'POST',
+        url,
+        body: { note, pictures },
+        signal,
+      });
+      return answer.ok ? success(new Uint8Array(await answer.value.arrayBuffer())) : answer;
+    },
     presence: async (signal) => {
       const request = { method: 'GET', url: api.presence.$url(), signal } as const;
       const answer = await followJob<undefined>(transport, request, () => {});
@@ -141,10 +164,11 @@ export function createClient(origin: string, transport: Transport): HostClient {
 }
 
 async function keptNote(response: Response): Promise<Result<KeptNote>> {
-  const note = parseNote(await response.json());
+  const json: unknown = await response.json();
+  const note = parseNote(json);
   if (!note.ok) return note;
   const etag = response.headers.get('ETag');
   return etag === null
     ? refuse('no-etag', 'The saved note came without a tag, so it can’t be changed safely.')
-    : success({ note: note.value, etag });
+    : success({ note: note.value, json, etag });
 }

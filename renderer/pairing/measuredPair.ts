@@ -7,6 +7,7 @@ import type {
   PairVerdict,
   Sharpness,
 } from '../../core/pairing/index.js';
+import type { KernelTexture } from '../../core/quality/index.js';
 import type { Stack } from '../../core/stack/index.js';
 
 /** A square in which noise was measured, in patient space; its sides run along rows and columns. */
@@ -21,6 +22,8 @@ export interface NoiseSpectrum {
   readonly powerHu2Mm2: ArrayLike<number>;
   /** Mean frequency, per mm. */
   readonly meanPerMm: number;
+  /** Frequency of the peak, per mm, where it was taken from the same spectrum. */
+  readonly peakPerMm?: number;
 }
 
 /** What was measured of the pair, as plain data. Soft and sharp are those of the plates. */
@@ -38,6 +41,10 @@ export interface MeasuredPair {
   readonly areas: readonly NoiseArea[];
   /** By the key of the stack; empty where there were too few areas. */
   readonly spectra: Readonly<Record<string, NoiseSpectrum>>;
+  /** Noise and blur of each kernel on its own grid, by the key of the stack; empty where there were too few areas. */
+  readonly textures: Readonly<Record<string, KernelTexture>>;
+  /** Number of edges that the rise distances of the textures rest on. */
+  readonly edges?: number;
 }
 
 /**
@@ -69,6 +76,11 @@ export function measuredPair(
             [soft.key]: { ...texture.first, meanPerMm: texture.firstPerMm },
             [sharp.key]: { ...texture.second, meanPerMm: texture.secondPerMm },
           },
+    textures:
+      detail?.textures === undefined
+        ? {}
+        : { [soft.key]: detail.textures.first, [sharp.key]: detail.textures.second },
+    ...(detail?.edges && { edges: detail.edgePlaces.length }),
   };
 }
 

@@ -1,6 +1,6 @@
 import { formatMeanSd, formatQuantity, NO_VALUE, visibleText } from '../../core/format/index.js';
 import type { NoteContrast, NoteRegion } from '../../core/note/index.js';
-import { isQuiet, type RegionValue } from '../../core/region/index.js';
+import { FLAGS, isQuiet, type RegionValue } from '../../core/region/index.js';
 import { RoleKey } from './parts/RoleSignView.js';
 import { FlagSign } from './parts/StateSign.js';
 
@@ -57,7 +57,7 @@ function ValueCells({ kernel, value, contrast }: ValueCellsProps) {
   const why = contrast?.flags.map(({ text }) => text).join(' ');
   return (
     <>
-      <td class={kernel} title={reason}>
+      <td class={kernel} title={meanTitle(value, reason)}>
         {reason !== undefined && (
           <span class="flag">
             <FlagSign />
@@ -73,6 +73,23 @@ function ValueCells({ kernel, value, contrast }: ValueCellsProps) {
       />
     </>
   );
+}
+
+/** What stands behind a mean, in words; the flags of the value after it. */
+function meanTitle(value: RegionValue | null, reason: string | undefined): string | undefined {
+  if (value?.meanHu == null) return reason;
+  const { meanHu, standardErrorHu, placementHu, flags } = value;
+  const absent = flags.find(({ code }) => code === FLAGS.noStandardError.code);
+  const error =
+    standardErrorHu === null
+      ? absent?.text
+      : `Standard error of the mean, by noise alone: ${formatQuantity(standardErrorHu, 'hu')} HU.`;
+  const placement =
+    placementHu === null
+      ? undefined
+      : `Placement: the mean moves by up to ${formatQuantity(placementHu, 'hu')} HU with half a pixel or 0.25 mm of size.`;
+  const mean = `Mean ${formatQuantity(meanHu, 'hu')} HU ± SD of the pixels.`;
+  return [mean, error, placement, reason].filter((part) => part !== undefined).join(' ');
 }
 
 function NumberCell({

@@ -3,7 +3,7 @@ import type { NoteRegion } from '../../core/note/index.js';
 import type { RegionValue } from '../../core/region/index.js';
 import { RoleKey } from './parts/RoleSignView.js';
 import { FlagSign } from './parts/StateSign.js';
-import { flagTexts, readoutRows } from './readoutRows.js';
+import { absenceReason, flagTexts, type ReadoutRow, readoutRows } from './readoutRows.js';
 
 export interface PairedReadoutProps {
   /** The selected region; undefined when none is. Its values may be fresher than the note's, while it is dragged. */
@@ -42,14 +42,14 @@ export function PairedReadout({ region, unit }: PairedReadoutProps) {
         <tbody>
           {readoutRows(soft, sharp, unit).map((row) => (
             <tr key={row.name} class={row.aid ? 'band' : undefined}>
-              <td class="soft" title={reason(row.soft, soft)}>
+              <td class="soft" title={titleOf(row, row.soft, soft)}>
                 {row.soft}
               </td>
-              <th scope="row">
+              <th scope="row" title={row.help}>
                 {row.name}
                 {row.delta !== undefined && <span class="delta"> {row.delta}</span>}
               </th>
-              <td class="sharp" title={reason(row.sharp, sharp)}>
+              <td class="sharp" title={titleOf(row, row.sharp, sharp)}>
                 {row.sharp}
               </td>
             </tr>
@@ -70,9 +70,7 @@ export function PairedReadout({ region, unit }: PairedReadoutProps) {
   );
 }
 
-/** Why there is no value, for the title of an empty cell. */
-function reason(text: string, value: RegionValue | null): string | undefined {
-  if (text !== NO_VALUE) return undefined;
-  if (value === null) return 'This stack has no value here.';
-  return value.flags.map((flag) => flag.text).join(' ') || undefined;
+/** What a cell's number is; of an empty cell, why there is none. */
+function titleOf(row: ReadoutRow, text: string, value: RegionValue | null): string | undefined {
+  return (text === NO_VALUE ? absenceReason(row, value) : row.help) || undefined;
 }

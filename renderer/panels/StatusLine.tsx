@@ -1,11 +1,13 @@
 import { formatPosition, formatQuantity } from '../../core/format/index.js';
-import type { Vec3 } from '../../core/geometry/index.js';
+import type { PixelPoint, Vec3 } from '../../core/geometry/index.js';
 
 export interface StatusLineProps {
   /** What lies under the pointer or the caret; undefined when it is on neither plate. */
   readonly cursor:
     | {
-        readonly positionMm: Vec3;
+        readonly positionMm?: Vec3;
+        /** In place of the position, where the files have no pixel spacing. */
+        readonly pixel?: PixelPoint;
         /** Pixel values there; null on padding, outside the image, or where there is no slice. */
         readonly soft: number | null;
         readonly sharp: number | null;
@@ -30,10 +32,16 @@ export function StatusLine({ cursor, unit, single, message }: StatusLineProps) {
           sharp <span class="value">{value(cursor?.sharp)}</span> {unit}
         </span>
       )}
-      <span>{cursor ? formatPosition(cursor.positionMm) : ''}</span>
+      <span>{placeText(cursor)}</span>
       <span class="message" role="status" data-tone={message?.tone} title={message?.text}>
         {message?.text}
       </span>
     </footer>
   );
+}
+
+function placeText(cursor: StatusLineProps['cursor']): string {
+  if (cursor?.positionMm !== undefined) return formatPosition(cursor.positionMm);
+  if (cursor?.pixel === undefined) return '';
+  return `column ${Math.round(cursor.pixel.column) + 1}, row ${Math.round(cursor.pixel.row) + 1}`;
 }

@@ -5,7 +5,7 @@ import {
   formatSigned,
   NO_VALUE,
 } from '../../core/format/index.js';
-import { isQuiet, type RegionValue, snrBand } from '../../core/region/index.js';
+import { FLAGS, isQuiet, type RegionValue, snrBand } from '../../core/region/index.js';
 
 /** A line of the paired readout. */
 export interface ReadoutRow {
@@ -16,6 +16,10 @@ export interface ReadoutRow {
   readonly delta?: string;
   /** A word that helps to read the line before. */
   readonly aid?: true;
+  /** What the number is, in plain words. */
+  readonly help?: string;
+  /** Code of the flag that says why there is none; any flag may, where there is no code. */
+  readonly absentFor?: string;
 }
 
 type Value = RegionValue | null;
@@ -35,6 +39,16 @@ export function readoutRows(soft: Value, sharp: Value, unit: string): readonly R
     row('SD', hu(soft?.sdHu), hu(sharp?.sdHu)),
     row('SNR', formatQuantity(soft?.snr, 'ratio'), formatQuantity(sharp?.snr, 'ratio')),
     { ...row('band', bandText(soft), bandText(sharp)), aid: true },
+    {
+      ...row('standard error', plusMinus(soft?.standardErrorHu), plusMinus(sharp?.standardErrorHu)),
+      help: STANDARD_ERROR_HELP,
+      absentFor: FLAGS.noStandardError.code,
+    },
+    {
+      ...row('placement', plusMinus(soft?.placementHu), plusMinus(sharp?.placementHu)),
+      help: PLACEMENT_HELP,
+      absentFor: FLAGS.noPlacement.code,
+    },
     row(
       'median',
       hu(soft?.medianHu),
@@ -48,6 +62,27 @@ export function readoutRows(soft: Value, sharp: Value, unit: string): readonly R
 
 function row(name: string, soft: string, sharp: string, delta?: string): ReadoutRow {
   return { name, soft, sharp, ...(delta === undefined ? {} : { delta }) };
+}
+
+/** What a standard error is, in plain words. */
+export const STANDARD_ERROR_HELP =
+  'Standard error of the mean: how far noise alone moves it. In 95 of 100 scans like this one the mean would lie within about twice this of what it is without noise. Neighbouring pixels share their noise, which is taken into account.';
+
+/** What a placement sensitivity is, in plain words. */
+export const PLACEMENT_HELP =
+  'Placement: how far the mean moves, at most, when the region is moved by half a pixel in any of eight directions, or made 0.25 mm larger or smaller at its edge. Large where an edge is near.';
+
+function plusMinus(value: number | null | undefined): string {
+  const text = formatQuantity(value, 'hu');
+  return text === NO_VALUE ? text : `± ${text}`;
+}
+
+/** Why a line has no value on a stack, in sentences. */
+export function absenceReason({ absentFor }: ReadoutRow, value: Value): string {
+  if (value === null) return 'This stack has no value here.';
+  const own = value.flags.filter(({ code }) => code === absentFor);
+  const others = value.flags.filter((flag) => !isQuiet(flag));
+  return (own.length > 0 ? own : others).map(({ text }) => text).join(' ');
 }
 
 function bandText(value: Value): string {

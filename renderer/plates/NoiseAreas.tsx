@@ -22,7 +22,7 @@ export function NoiseAreas({ kernel, store }: { readonly kernel: Kernel; readonl
         };
         const path = `M${corner(-1, -1)}L${corner(1, -1)}L${corner(1, 1)}L${corner(-1, 1)}Z`;
         return (
-          <g key={path} class="noise-area">
+          <g key={path} class="noise-area" data-chosen={centreMm === state.noiseArea}>
             <path class="region-halo" d={path} />
             <path class="noise-line" d={path} />
           </g>

@@ -1,12 +1,11 @@
+import { orientationLetters, scaleBar } from '../../core/geometry/index.js';
 import type { Kernel } from '../../core/note/index.js';
 import type { AppState } from '../state/appState.js';
 import { kernelOfFace, type PlateFace } from '../state/compareSelectors.js';
 import { otherKernel, plateScale, shownSlice, stackOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
-import { orientationLetters } from './orientationLetters.js';
 import { type FoldedSlice, PlateLegend } from './PlateLegend.js';
 import { positionText } from './positionText.js';
-import { scaleBar } from './scaleBar.js';
 
 /** The scale bar takes at most this much of a plate's width, and this many CSS pixels. */
 const BAR_SHARE = 0.22;
@@ -34,7 +33,7 @@ export function PlateLabels({ face, store }: { readonly face: PlateFace; readonl
       slices={stack.slices.length}
       letters={orientationLetters(image.grid)}
       bar={
-        scale === undefined
+        scale === undefined || image.grid.unscaled
           ? undefined
           : scaleBar(scale, Math.min(size.widthPx * BAR_SHARE, BAR_PX))
       }

@@ -1,14 +1,14 @@
-import type { CtImage } from '../../core/dicom/index.js';
+import type { CtImage, VoiWindow } from '../../core/dicom/index.js';
 import { formatFixed, formatQuantity, visibleText } from '../../core/format/index.js';
+import type { OrientationLetters, ScaleBar } from '../../core/geometry/index.js';
+import { isSameWindow, windowWords } from '../../core/intensity/index.js';
 import type { Kernel } from '../../core/note/index.js';
-import type { OrientationLetters } from './orientationLetters.js';
-import type { ScaleBar } from './scaleBar.js';
 
 export interface PlateLegendProps {
   readonly kernel: Kernel;
   /** The slice on the plate. */
   readonly image: CtImage;
-  readonly window: { readonly centre: number; readonly width: number };
+  readonly window: VoiWindow;
   /** What lies to the right on a folded plate. */
   readonly folded?: FoldedSlice | undefined;
   /** The plate shows sharp − soft: it has no window, and a scale of its own. */
@@ -26,7 +26,7 @@ export interface PlateLegendProps {
 export interface FoldedSlice {
   readonly kernel: Kernel;
   readonly image: CtImage;
-  readonly window: { readonly centre: number; readonly width: number };
+  readonly window: VoiWindow;
 }
 
 /** The words over a plate: what it is, its window, where it is, which way is which. Labels stand as the file has them. */
@@ -86,12 +86,8 @@ function kernelName(kernel: Kernel): string {
   return kernel === 'soft' ? 'Soft' : 'Sharp';
 }
 
-function windowText({ centre, width }: PlateLegendProps['window']): string {
-  return `C ${formatFixed(centre, 0)} W ${formatFixed(width, 0)}`;
-}
-
-function isSameWindow(a: PlateLegendProps['window'], b: PlateLegendProps['window']): boolean {
-  return a.centre === b.centre && a.width === b.width;
+function windowText(window: VoiWindow): string {
+  return visibleText(windowWords(window));
 }
 
 function seriesText({ acquisition }: CtImage): string {
@@ -102,9 +98,11 @@ function seriesText({ acquisition }: CtImage): string {
 
 /** '0.39 mm · 0.6 mm thick'; both spacings where they differ, between columns first, as on the plate. */
 function spacingText({ grid, acquisition }: CtImage): string {
+  const { thicknessMm } = acquisition;
+  const thickness =
+    thicknessMm === undefined ? '' : ` · ${String(Number(thicknessMm.toFixed(2)))} mm thick`;
+  if (grid.unscaled) return `no pixel spacing${thickness}`;
   const [rows, columns] = grid.pixelSpacingMm.map((mm) => formatQuantity(mm, 'lengthMm'));
   const spacing = rows === columns ? columns : `${columns} × ${rows}`;
-  const { thicknessMm } = acquisition;
-  if (thicknessMm === undefined) return `${spacing} mm`;
-  return `${spacing} mm · ${String(Number(thicknessMm.toFixed(2)))} mm thick`;
+  return `${spacing} mm${thickness}`;
 }

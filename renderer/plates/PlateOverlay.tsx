@@ -3,6 +3,7 @@ import { isOnPlate, regionsOn, takesMarks } from '../state/regionSelectors.js';
 import { shownSlice, transformOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import { shapeOnPlate } from '../tools/regionOnPlate.js';
+import { LineMarks } from './LineMarks.js';
 import { patientToPlate } from './plateTransform.js';
 import { RegionShape } from './RegionShape.js';
 
@@ -48,6 +49,7 @@ export function PlateOverlay({ kernel, store }: PlateOverlayProps) {
           open
         />
       )}
+      <LineMarks kernel={kernel} store={store} />
       {at !== undefined && (
         <path
           class="caret"

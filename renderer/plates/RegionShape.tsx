@@ -1,5 +1,5 @@
 import type { Role } from '../../core/region/index.js';
-import { ROLE_SIGNS } from '../style/roleSigns.js';
+import { ROLE_SIGNS } from '../../core/region/index.js';
 import { handlesOf, type ShapeOnPlate } from '../tools/regionOnPlate.js';
 
 export interface RegionShapeProps {

@@ -1,4 +1,4 @@
-import type { PixelEncoding, VoiWindow } from '../../core/dicom/index.js';
+import type { PixelEncoding, VoiTable, VoiWindow } from '../../core/dicom/index.js';
 import { displayTable } from '../../core/intensity/index.js';
 
 /** Tables in memory at once: both plates, and a few slices around whose rescale differs. */
@@ -6,13 +6,26 @@ const KEPT = 6;
 
 const tables = new Map<string, Uint32Array>();
 
+/** A window's table can have thousands of steps: it is known by a number, and not read at every picture. */
+const tableNumbers = new WeakMap<VoiTable, number>();
+let tablesNumbered = 0;
+
+function tableNumber(table: VoiTable): number {
+  const known = tableNumbers.get(table);
+  if (known !== undefined) return known;
+  tablesNumbered += 1;
+  tableNumbers.set(table, tablesNumbered);
+  return tablesNumbered;
+}
+
 /**
  * Opaque grey pixels, as a canvas holds them, for every stored value & 0xffff. Red, green and blue are the same
  * byte, so that the byte order of the machine does not matter but for alpha, which is the highest byte on every
  * machine that runs a browser today.
  */
 export function greyTable(pixels: PixelEncoding, window: VoiWindow): Uint32Array {
-  const key = JSON.stringify([pixels, window.centre, window.width, window.function]);
+  const { centre, width, function: shape, table } = window;
+  const key = JSON.stringify([pixels, centre, width, shape, table && tableNumber(table)]);
   const known = tables.get(key);
   if (known !== undefined) return known;
   const levels = displayTable(pixels, window);

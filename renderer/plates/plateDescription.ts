@@ -1,3 +1,5 @@
+import type { VoiWindow } from '../../core/dicom/index.js';
+import { visibleText } from '../../core/format/index.js';
 import type { AppState } from '../state/appState.js';
 import { kernelOfFace, type PlateFace } from '../state/compareSelectors.js';
 import { regionsOn } from '../state/regionSelectors.js';
@@ -19,13 +21,19 @@ export function plateName(state: AppState, face: PlateFace): string {
   if (stack === undefined) return `${name}, empty`;
   const shown = shownSlice(state, kernel);
   if (shown === undefined) return `${name}, no slice here`;
-  const { centre, width } = state.plates[kernel].window;
+  const { window } = state.plates[kernel];
   const mm = shown.slice.alongMm.toFixed(1);
   const scale =
     face === 'difference'
       ? `scale plus and minus ${state.compare.rangeHu} HU`
-      : `window ${Math.round(centre)} ${Math.round(width)}`;
+      : `window ${spokenWindow(window)}`;
   return `${name}, slice ${shown.index + 1} of ${stack.slices.length}, ${mm} mm, ${scale}`;
+}
+
+function spokenWindow({ centre, width, table, explanation }: VoiWindow): string {
+  return table === undefined
+    ? `${Math.round(centre)} ${Math.round(width)}`
+    : `lookup table ${visibleText(explanation ?? 'without name')}`;
 }
 
 const FACE_KEYS: Partial<Readonly<Record<PlateFace, string>>> = {

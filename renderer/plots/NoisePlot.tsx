@@ -74,6 +74,8 @@ function Picture({ soft, sharp, about, widthPx, heightPx }: PictureProps) {
       <path class="series sharp" d={sharpLine} />
       <Mean side="soft" px={x(soft.meanPerMm)} bottomPx={bottom} />
       <Mean side="sharp" px={x(sharp.meanPerMm)} bottomPx={bottom} />
+      <Peak side="soft" spectrum={soft} x={x} y={y} />
+      <Peak side="sharp" spectrum={sharp} x={x} y={y} />
       <path class="series soft" d={`M${right - 118} 9h18`} />
       <text class="soft" x={right - 95} y={13}>
         soft
@@ -84,6 +86,24 @@ function Picture({ soft, sharp, about, widthPx, heightPx }: PictureProps) {
       </text>
     </svg>
   );
+}
+
+/** The highest point of a spectrum: a ring on its curve. */
+function Peak({
+  side,
+  spectrum: { peakPerMm, frequencyPerMm, powerHu2Mm2 },
+  x,
+  y,
+}: {
+  readonly side: 'soft' | 'sharp';
+  readonly spectrum: NoiseSpectrum;
+  readonly x: (perMm: number) => number;
+  readonly y: (power: number) => number;
+}) {
+  if (peakPerMm === undefined) return null;
+  const power = powerHu2Mm2[Array.from(frequencyPerMm).indexOf(peakPerMm)];
+  if (power === undefined || !(power > 0)) return null;
+  return <circle class={`peak-mark ${side}`} cx={x(peakPerMm)} cy={y(power)} r={3} />;
 }
 
 interface MeanProps {

@@ -11,7 +11,9 @@ export interface PlotFrameProps {
 
 const PLOTS: readonly { readonly id: PlotId; readonly name: string }[] = [
   { id: 'histogram', name: 'Histogram' },
+  { id: 'bands', name: 'Bands' },
   { id: 'noise', name: 'Noise' },
+  { id: 'visible', name: 'Visible' },
 ];
 
 /** The plot's place: its title, and tabs to choose what is plotted (ARIA tabs pattern). */

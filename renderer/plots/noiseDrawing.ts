@@ -46,7 +46,7 @@ export function noiseDrawing(
     .y(({ power }) => y(isLog ? Math.max(power, floor) : power));
   const powers = isLog
     ? Array.from({ length: DECADES + 1 }, (_, decade) => floor * 10 ** decade)
-    : y.ticks(4);
+    : y.ticks(Math.max(2, Math.min(4, Math.floor((heightPx - 56) / 22))));
   return { x, y, isLog, powers, softLine: curve(a) ?? '', sharpLine: curve(b) ?? '' };
 }
 

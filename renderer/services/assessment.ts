@@ -12,6 +12,8 @@ export interface AssessmentOptions {
   readonly assessor: Pick<Assessor, 'assess'>;
   /** Present time, ISO 8601. */
   readonly now: () => string;
+  /** The measure is there, and kept. */
+  readonly onMeasured: () => void;
   /** The measure is there, and says that soft and sharp should change places; nothing is marked and nobody has chosen. */
   readonly onWrongOrder: () => void;
 }
@@ -32,6 +34,7 @@ export function createAssessment(options: AssessmentOptions): AssessmentWork {
   const finish = (measured: MeasuredPair): void => {
     const before = store.now().pair;
     store.change(KEEP_MEASURED, keepMeasured(measured, options.now()));
+    options.onMeasured();
     const { pair, note } = store.now();
     if (pair !== undefined && isWrongOrder(pair, measured) && mayReorder(pair, note)) {
       options.onWrongOrder();

@@ -2,10 +2,12 @@ import {
   anySynthetic,
   createNote,
   type Note,
+  type NoteStack,
   noteConditions,
   notePair,
   noteStudy,
 } from '../../core/note/index.js';
+import type { Stack } from '../../core/stack/index.js';
 import type { PairState } from '../state/appState.js';
 
 export interface NoteSetting {
@@ -47,11 +49,13 @@ export function beginNote(kept: Note | undefined, setting: NoteSetting): Note {
     changedAt: now,
     regions: kept.regions.map((region) => ({ ...region, soft: null, sharp: null })),
     contrasts: kept.contrasts.map((contrast) => ({ ...contrast, soft: null, sharp: null })),
+    edges: kept.edges.map((edge) => ({ ...edge, soft: null, sharp: null })),
   };
 }
 
-/** The same stacks, linked alike: what is linked by number alone is not measured on the sharp stack. */
+/** The same stacks, masked and linked alike: what is linked by number alone is not measured on the sharp stack. */
 function isSamePair({ pair: kept }: Note, { soft, sharp, link }: PairState): boolean {
-  const isSameSharp = (kept.sharp?.key ?? undefined) === sharp?.key;
-  return kept.soft.key === soft.key && isSameSharp && kept.link === link;
+  const isSame = (of: NoteStack | null, stack: Stack | undefined): boolean =>
+    of?.key === stack?.key && of?.maskedBelowHu === stack?.maskedBelowHu;
+  return isSame(kept.soft, soft) && isSame(kept.sharp, sharp) && kept.link === link;
 }

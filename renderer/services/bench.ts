@@ -1,13 +1,20 @@
 import type { OpenFolder } from '../../app/host/contract.js';
-import { defaultWindow } from '../../core/intensity/index.js';
-import type { Kernel, PairOverride, RegionValues } from '../../core/note/index.js';
-import type { Shape } from '../../core/region/index.js';
+import { formatFixed } from '../../core/format/index.js';
+import { defaultWindow, LOWEST_IMAGE_HU } from '../../core/intensity/index.js';
+import type { EdgeValues, Kernel, PairOverride, RegionValues } from '../../core/note/index.js';
+import { checkSeal } from '../../core/note/life/index.js';
+import type { BandLine, Shape } from '../../core/region/index.js';
 import type { Result } from '../../core/result.js';
 import type { Stack } from '../../core/stack/index.js';
 import type { HostClient, KeptNote } from '../host/client.js';
 import { type MeasuredPair, swappedPair } from '../pairing/measuredPair.js';
 import type { PairState } from '../state/appState.js';
-import { KEEP_MEASURED, swapPlates } from '../state/changes/assessment.js';
+import {
+  KEEP_MEASURED,
+  keepMeasured,
+  samePlaces,
+  swapPlates,
+} from '../state/changes/assessment.js';
 import { showPair } from '../state/changes/view.js';
 import { NOTHING_LOADED, NOTHING_MARKED } from '../state/initialState.js';
 import type { Store } from '../state/store.js';
@@ -21,8 +28,10 @@ import { beginNote } from './beginNote.js';
 import { type Candidate, studyOf } from './choosePair.js';
 import { createJobs } from './jobs.js';
 import { loadVolumes } from './loadVolumes.js';
+import { asOnPlates, isMasked, withMaskTurned } from './masking.js';
 import { createMeasuring } from './measuring.js';
 import { createOpenFolder } from './openFolder.js';
+import { pageDigest } from './pageDigest.js';
 import { pairMessage } from './pairMessage.js';
 import { pairOf } from './pairOf.js';
 import { createFindPairs } from './proposals.js';
@@ -39,7 +48,8 @@ export interface BenchOptions {
 
 /** Opens folders and pairs, holds their pixels, measures on them, and keeps the note. */
 export interface Bench {
-  openFolder(folder: OpenFolder): Promise<void>;
+  /** Opens a folder; with a character set, its texts are read in that one. */
+  openFolder(folder: OpenFolder, characterSet?: string): Promise<void>;
   openDemonstration(): Promise<void>;
   /** Shows two stacks, or one alone, as the reader chose them, with the reasons for what the files differ in. */
   choosePair(
@@ -49,6 +59,8 @@ export interface Bench {
   ): Promise<void>;
   /** Puts soft and sharp in each other's place, as the reader asked. */
   swapPair(): Promise<void>;
+  /** Leaves out what lies below all images and is not marked, or takes that back, on both stacks. */
+  turnMask(): Promise<void>;
   /** Looks for pairs among the stacks of the folder, for the dialog. */
   proposePairs(signal?: AbortSignal): Promise<void>;
   /** Gives up the measuring of the pair. */
@@ -59,13 +71,22 @@ export interface Bench {
   cancelJob(): void;
   /** Stored values of a slice; undefined until it was read. */
   stored(kernel: Kernel, index: number): StoredSlice | undefined;
+  /** Asks for a slice that is not there, to look at it once. */
+  askFor(kernel: Kernel, index: number): void;
   /** What a shape measures on both stacks now. */
   measure(shape: Shape): RegionValues;
+  /** What an edge line measures on both stacks now. */
+  measureEdge(line: BandLine): EdgeValues;
   /** Measures all regions again, after slices have come or an undo. */
   remeasure(): void;
   saveNow(): void;
   readonly autosave: Autosave;
 }
+
+const SEAL_BROKEN =
+  'This note says that it is verified, but its content is not what was verified. Measure it again (Note menu), and do not rely on it.';
+const MASK_ON = `Values below ${formatFixed(LOWEST_IMAGE_HU, 0)} HU are left out as no image on both stacks; the note says so.`;
+const MASK_OFF = 'Nothing is left out any more but what the files mark as padding.';
 
 export function createBench(options: BenchOptions): Bench {
   const { store, client, signal, now } = options;
@@ -90,7 +111,7 @@ export function createBench(options: BenchOptions): Bench {
     autosave.save(after.note);
   });
 
-  const { measure, remeasure } = createMeasuring(store, () => volumes, now);
+  const { measure, measureEdge, remeasure } = createMeasuring(store, () => volumes, now);
 
   const warn = (text: string): void =>
     store.change('Warn', (state) => ({ ...state, message: { tone: 'warning', text } }));
@@ -102,6 +123,7 @@ export function createBench(options: BenchOptions): Bench {
     store,
     assessor,
     now,
+    onMeasured: remeasure,
     onWrongOrder: () => {
       void swap('measure');
     },
@@ -156,8 +178,14 @@ export function createBench(options: BenchOptions): Bench {
       dialog: undefined,
       message: pairMessage(pair),
     }));
+    if (kept !== undefined && kept.note.verification === 'VERIFIED') {
+      void checkSeal(kept.json, pageDigest).then((seal) => {
+        if (seal === 'changed' && !mine.signal.aborted) warn(SEAL_BROKEN);
+      });
+    }
     const window = defaultWindow(soft.slices[0].image);
     const sharpWindow = sharp === undefined ? window : defaultWindow(sharp.slices[0].image);
+    if (known !== undefined) store.change(KEEP_MEASURED, keepMeasured(known, now()));
     store.change('Show the middle', showPair({ soft: window, sharp: sharpWindow }));
     const life = AbortSignal.any([mine.signal, signal]);
     let isAssessed = known !== undefined;
@@ -203,6 +231,22 @@ export function createBench(options: BenchOptions): Bench {
     store.change('Places as before', (state) => ({ ...swapPlates(plates)(state), compare }));
   };
 
+  /** The pair is shown anew, because everything that was measured of it changes; the plates stay where they are. */
+  const turnMask = async (): Promise<void> => {
+    const { pair, index, plates, compare } = store.now();
+    if (pair === undefined || index === undefined) return;
+    const turned = withMaskTurned(pair, index.stacks);
+    if (!turned.ok) return warn(turned.refusal.text);
+    await autosave.settled();
+    if (store.now().pair?.soft !== pair.soft) return;
+    await usePair(turned.value, pair.chosenBy);
+    store.change('Places as before', (state) => ({
+      ...samePlaces(plates)(state),
+      compare,
+      message: { tone: 'plain', text: isMasked(pair) ? MASK_OFF : MASK_ON },
+    }));
+  };
+
   return {
     autosave,
     openFolder,
@@ -217,9 +261,10 @@ export function createBench(options: BenchOptions): Bench {
     },
     choosePair: async (soft, sharp, overrides = []) => {
       await autosave.settled();
-      await usePair({ soft, sharp, overrides }, 'reader');
+      await usePair(asOnPlates({ soft, sharp, overrides }, store.now().pair), 'reader');
     },
     swapPair: () => swap('reader'),
+    turnMask,
     proposePairs: async (given) => {
       const { index, folder } = store.now();
       if (index === undefined || folder === undefined) return;
@@ -233,7 +278,9 @@ export function createBench(options: BenchOptions): Bench {
     },
     cancelJob: jobs.cancel,
     stored: (kernel, index) => volumes?.[kernel]?.slice(index),
+    askFor: (kernel, index) => volumes?.[kernel]?.ask(index),
     measure,
+    measureEdge,
     remeasure,
     saveNow: () => {
       const { note, save } = store.now();

@@ -1,6 +1,6 @@
 import type { Note, PairOverride } from '../../core/note/index.js';
 import { selectStack } from '../../core/note/index.js';
-import type { Stack } from '../../core/stack/index.js';
+import { isUnscaled, type Stack } from '../../core/stack/index.js';
 import type { Proposal } from '../pairing/proposal.js';
 
 /** Two stacks, or one alone, that could be shown. */
@@ -26,8 +26,12 @@ export function studyOf(stack: Stack): string {
  * Undefined when there is a choice to make.
  */
 export function candidateByOrder(stacks: readonly Stack[]): Candidate | undefined {
-  const [first, second] = stacks.toSorted(bySeries);
-  if (first === undefined || stacks.length > 2) return undefined;
+  // Those without a pixel spacing are shown only where there is nothing else.
+  const scaled = stacks.filter((stack) => !isUnscaled(stack));
+  const offered = scaled.length > 0 ? scaled : stacks;
+  const [first, second] = offered.toSorted(bySeries);
+  if (first === undefined || offered.length > 2) return undefined;
+  if (second !== undefined && isUnscaled(second)) return undefined;
   if (second === undefined) return { soft: first, sharp: undefined };
   return studyOf(first) === studyOf(second) ? { soft: first, sharp: second } : undefined;
 }

@@ -1,6 +1,8 @@
 import { signal as createSignal, type ReadonlySignal } from '@preact/signals';
 import type { FolderLevel, OpenFolder } from '../../app/host/contract.js';
+import type { Result } from '../../core/result.js';
 import type { HostClient } from '../host/client.js';
+import type { AppState } from '../state/appState.js';
 import type { Store } from '../state/store.js';
 
 /** What the browser shell's folder dialog shows. */
@@ -18,13 +20,15 @@ export interface FolderDialog {
   choose(levelId: string): void;
   /** Opens a folder of the list of recent ones, from the dialog or without it. */
   openRecent(id: string): Promise<OpenFolder | undefined>;
+  /** Takes a folder off the list, and deletes what was kept of its headers. */
   forget(id: string): void;
+  forgetAll(): void;
   close(): void;
 }
 
 export function createFolderDialog(
   store: Store,
-  client: Pick<HostClient, 'browse' | 'openFolder' | 'openRecent' | 'forgetOne'>,
+  client: Pick<HostClient, 'browse' | 'openFolder' | 'openRecent' | 'forgetOne' | 'forgetRecent'>,
   signal: AbortSignal,
 ): FolderDialog {
   const state = createSignal<FolderDialogState>({ level: undefined, problem: undefined });
@@ -50,6 +54,12 @@ export function createFolderDialog(
     );
     answer?.(folder);
     answer = undefined;
+  };
+
+  /** Names of patients may still lie on the disk when it failed: the reader must know. */
+  const showLeft = (recent: Result<AppState['recent']>): void => {
+    if (recent.ok) store.change('Forget folder', (now) => ({ ...now, recent: recent.value }));
+    else state.value = { ...state.peek(), problem: recent.refusal.text };
   };
 
   return {
@@ -82,9 +92,10 @@ export function createFolderDialog(
       return undefined;
     },
     forget: (id) => {
-      void client.forgetOne(id, signal).then((recent) => {
-        if (recent.ok) store.change('Forget folder', (now) => ({ ...now, recent: recent.value }));
-      });
+      void client.forgetOne(id, signal).then(showLeft);
+    },
+    forgetAll: () => {
+      void client.forgetRecent(signal).then(showLeft);
     },
     close: () => finish(undefined),
   };

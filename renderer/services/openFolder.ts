@@ -29,11 +29,11 @@ export interface OpenFolderOptions {
  */
 export function createOpenFolder(
   options: OpenFolderOptions,
-): (folder: OpenFolder) => Promise<void> {
+): (folder: OpenFolder, characterSet?: string) => Promise<void> {
   const { store, client, jobs, findPairs, usePair, onClose } = options;
   const warn = (text: string): void =>
     store.change('Warn', (state) => ({ ...state, message: { tone: 'warning', text } }));
-  return async (folder) => {
+  return async (folder, characterSet) => {
     const running = await jobs.begin('Looking through the folder');
     if (running === undefined) return;
     onClose();
@@ -41,6 +41,7 @@ export function createOpenFolder(
       ...state,
       ...NOTHING_MARKED,
       folder,
+      characterSet,
       index: undefined,
       pair: undefined,
       proposals: undefined,
@@ -49,7 +50,7 @@ export function createOpenFolder(
       dialog: undefined,
       message: undefined,
     }));
-    const found = await client.index(folder.grant, jobs.progress(running), running);
+    const found = await client.index(folder.grant, jobs.progress(running), running, characterSet);
     if (running.aborted) return;
     jobs.end();
     if (!found.ok) return warn(found.refusal.text);

@@ -8,13 +8,16 @@ import type {
 import type { VoiWindow } from '../../core/dicom/index.js';
 import type { Vec3 } from '../../core/geometry/index.js';
 import type { Evidence, Kernel, Link, Note, PairOverride } from '../../core/note/index.js';
-import type { Role, Shape } from '../../core/region/index.js';
+import type { BandLine, Role, Shape } from '../../core/region/index.js';
 import type { Stack } from '../../core/stack/index.js';
 import type { MeasuredPair } from '../pairing/measuredPair.js';
 import type { Proposal } from '../pairing/proposal.js';
 import type { PlatePoint } from '../plates/platePoint.js';
 
-export type ToolId = 'window' | 'move' | 'zoom' | 'ellipse' | 'outline';
+export type ToolId = 'window' | 'move' | 'zoom' | 'ellipse' | 'outline' | LinePurpose;
+
+/** What a line is drawn for. */
+export type LinePurpose = 'edge';
 
 export type DialogId =
   | 'openFolder'
@@ -24,7 +27,10 @@ export type DialogId =
   | 'cautions'
   | 'keys'
   | 'numbers'
-  | 'newContrast';
+  | 'newContrast'
+  | 'note'
+  | 'recheck'
+  | 'keyImage';
 
 /** The two stacks on the plates; without a sharp one a single stack is read. */
 export interface PairState {
@@ -61,7 +67,7 @@ export interface CompareState {
   readonly rangeHu: number;
 }
 
-export type PlotId = 'histogram' | 'noise';
+export type PlotId = 'histogram' | 'bands' | 'noise' | 'visible';
 
 export interface PlateSize {
   readonly widthPx: number;
@@ -96,6 +102,14 @@ export interface Draft {
   readonly shape: Shape;
   /** The region that is being changed; undefined for a new one. */
   readonly regionId: string | undefined;
+}
+
+/** A line that is being drawn or dragged and is no part of the note yet. */
+export interface LineDraft extends BandLine {
+  readonly kernel: Kernel;
+  readonly purpose: LinePurpose;
+  /** The line that is being changed; undefined for a new one. */
+  readonly lineId: string | undefined;
 }
 
 /** An outline whose points are still being set. */
@@ -148,6 +162,8 @@ export interface AppState {
   readonly settings: Settings;
   readonly recent: readonly RecentFolder[];
   readonly folder: OpenFolder | undefined;
+  /** What the reader has the texts of the folder's files read in; undefined for what the files state. */
+  readonly characterSet?: string | undefined;
   readonly index: FolderIndex | undefined;
   /** Long work of the host that is running. */
   readonly job: Progress | undefined;
@@ -158,6 +174,8 @@ export interface AppState {
   readonly compare: CompareState;
   /** The areas in which noise was measured are outlined on the plates. */
   readonly noiseAreas: boolean;
+  /** Middle of the one among them that the reader chose in the list. */
+  readonly noiseArea?: Vec3 | undefined;
   readonly plot: PlotId;
   readonly plates: { readonly [K in Kernel]: PlateState };
   readonly active: Kernel;
@@ -168,6 +186,9 @@ export interface AppState {
   readonly selected: string | undefined;
   readonly draft: Draft | undefined;
   readonly openOutline: OpenOutline | undefined;
+  readonly lineDraft: LineDraft | undefined;
+  /** The end of the selected line that the arrow keys move; undefined for all of it. */
+  readonly lineEnd: 'from' | 'to' | undefined;
   readonly caret: Caret | undefined;
   readonly hover: Hover | undefined;
   readonly tool: ToolId;

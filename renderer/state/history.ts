@@ -1,9 +1,13 @@
 import type { Note } from '../../core/note/index.js';
+import { isSealed } from '../../core/note/life/index.js';
 import type { AppState, History } from './appState.js';
 import type { Change } from './store.js';
 
 /** Steps that can be taken back. More would keep notes that nobody goes back to. */
 const DEPTH = 200;
+
+/** What a reader is told who wants to change a verified note. */
+export const VERIFIED = 'This note is verified. To change it, amend it (Note menu).';
 
 /**
  * A change of the note that can be undone under the name `label`. Its inverse is the note before it. With
@@ -13,9 +17,8 @@ export function editNote(label: string, edit: (note: Note) => Note, key?: string
   return (state) => {
     const before = state.note;
     if (before === undefined) return state;
-    if (before.verification === 'VERIFIED') {
-      const text = 'This note is verified and can’t be changed.';
-      return { ...state, message: { tone: 'warning', text } };
+    if (isSealed(before)) {
+      return { ...state, message: { tone: 'warning', text: VERIFIED } };
     }
     const after = edit(before);
     if (after === before) return state;
@@ -32,7 +35,7 @@ function remember(history: History, label: string, note: Note, key: string | und
 /** Takes the last change of the note back; the state as it is when there is none. */
 export function undo(state: AppState): AppState {
   const last = state.history.undo.at(-1);
-  if (last === undefined || state.note === undefined) return state;
+  if (last === undefined || state.note === undefined || isSealed(state.note)) return state;
   return withSelection({
     ...state,
     note: last.note,
@@ -46,7 +49,7 @@ export function undo(state: AppState): AppState {
 /** Makes the change again that was taken back last. */
 export function redo(state: AppState): AppState {
   const last = state.history.redo.at(-1);
-  if (last === undefined || state.note === undefined) return state;
+  if (last === undefined || state.note === undefined || isSealed(state.note)) return state;
   return withSelection({
     ...state,
     note: last.note,
@@ -61,6 +64,7 @@ export function redo(state: AppState): AppState {
 export function withSelection(state: AppState): AppState {
   const { selected, note } = state;
   if (selected === undefined) return state;
-  const present = note?.regions.some(({ id }) => id === selected) ?? false;
+  const present =
+    note !== undefined && [...note.regions, ...note.edges].some(({ id }) => id === selected);
   return present ? state : { ...state, selected: undefined };
 }

@@ -16,6 +16,8 @@ export const NOTHING_MARKED = {
   selected: undefined,
   draft: undefined,
   openOutline: undefined,
+  lineDraft: undefined,
+  lineEnd: undefined,
   caret: undefined,
   hover: undefined,
 } as const satisfies Partial<AppState>;

@@ -1,6 +1,6 @@
 import type { Kernel, NoteRegion } from '../../core/note/index.js';
 import { findSlice, type Shape } from '../../core/region/index.js';
-import type { Stack } from '../../core/stack/index.js';
+import { isUnscaled, type Stack } from '../../core/stack/index.js';
 import type { AppState } from './appState.js';
 import { shownSlice, stackOf } from './selectors.js';
 
@@ -23,6 +23,8 @@ export function sliceOf(shape: Shape, stack: Stack): number | undefined {
  * compared, since marks lie in the soft stack's space.
  */
 export function takesMarks(state: AppState, kernel: Kernel): boolean {
+  const stack = stackOf(state, kernel);
+  if (stack !== undefined && isUnscaled(stack)) return false;
   return kernel === 'soft' || state.pair?.link === 'position';
 }
 

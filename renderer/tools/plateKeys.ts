@@ -14,6 +14,7 @@ import { isOnPlate, selectedRegion } from '../state/regionSelectors.js';
 import { plateGrid, stackOf } from '../state/selectors.js';
 import { canMark } from './canMark.js';
 import { ellipseOn } from './drawnEllipse.js';
+import { type LineKey, lineKey } from './lineKeys.js';
 import { closeOutline, removePoint, setPoint } from './outlineTool.js';
 import type { ToolPort } from './tool.js';
 
@@ -47,13 +48,11 @@ export function plateKey(
   const state = port.now();
   const grid = plateGrid(state, kernel);
   if (grid === undefined) return false;
+  const asked = lineKeyOf(key, shift, letterKeys, grid, caretPoint(state, kernel));
+  if (asked !== undefined && lineKey(port, kernel, asked)) return true;
   const arrow = ARROWS[key];
   if (arrow !== undefined) {
-    const pixels = shift ? FAST : 1;
-    const by = add(
-      scale(grid.rowDirection, arrow[0] * pixels * grid.pixelSpacingMm[1]),
-      scale(grid.columnDirection, arrow[1] * pixels * grid.pixelSpacingMm[0]),
-    );
+    const by = arrowMm(arrow, shift, grid);
     changeShape(port, kernel, 'move', (shape) => moveShape(shape, by)) ||
       moveCaret(port, kernel, by);
     return true;
@@ -75,9 +74,37 @@ export function plateKey(
   return false;
 }
 
+/** What a key asks of a line. */
+function lineKeyOf(
+  key: string,
+  shift: boolean,
+  letterKeys: boolean,
+  grid: SliceGrid,
+  caretMm: Vec3,
+): LineKey | undefined {
+  const arrow = ARROWS[key];
+  if (arrow !== undefined) return { kind: 'move', by: arrowMm(arrow, shift, grid) };
+  if (key === 'Enter') return { kind: 'enter', atMm: onPlane(caretMm, grid) };
+  if (key === 'Backspace') return { kind: 'back' };
+  if (!letterKeys || (key !== '+' && key !== '-')) return undefined;
+  return { kind: 'widen', steps: key === '+' ? 1 : -1 };
+}
+
+function arrowMm(arrow: readonly [number, number], shift: boolean, grid: SliceGrid): Vec3 {
+  const pixels = shift ? FAST : 1;
+  return add(
+    scale(grid.rowDirection, arrow[0] * pixels * grid.pixelSpacingMm[1]),
+    scale(grid.columnDirection, arrow[1] * pixels * grid.pixelSpacingMm[0]),
+  );
+}
+
 /** Gives up, one thing at a time, what Esc gives up when no pointer is down. True when there was something. */
 export function giveUp(port: ToolPort): boolean {
-  const { openOutline, draft, selected, caret } = port.now();
+  const { openOutline, draft, lineDraft, lineEnd, selected, caret } = port.now();
+  if (lineDraft !== undefined || lineEnd !== undefined) {
+    port.change('Give up', (state) => ({ ...state, lineDraft: undefined, lineEnd: undefined }));
+    return true;
+  }
   if (openOutline !== undefined || draft !== undefined) {
     port.change('Give up', (state) => ({ ...state, openOutline: undefined, draft: undefined }));
     return true;

@@ -1,7 +1,7 @@
 import type { Kernel } from '../../core/note/index.js';
-import type { Role, Shape } from '../../core/region/index.js';
+import type { BandLine, Role, Shape } from '../../core/region/index.js';
 import type { PlatePoint } from '../plates/platePoint.js';
-import type { AppState } from '../state/appState.js';
+import type { AppState, LinePurpose } from '../state/appState.js';
 import type { Change } from '../state/store.js';
 
 /** Where the pointer is and what is held with it. */
@@ -20,6 +20,10 @@ export interface ToolPort {
   placeRegion(role: Role, shape: Shape): void;
   /** Measures a region's new shape and puts it into the note. Changes of one key in a row are undone as one. */
   reshapeRegion(id: string, shape: Shape, key?: string): void;
+  /** Measures a finished line on both stacks and puts it into the note. */
+  placeLine(purpose: LinePurpose, line: BandLine): void;
+  /** Measures a line at its new place and puts it into the note; keys as for regions. */
+  reshapeLine(purpose: LinePurpose, id: string, line: BandLine, key?: string): void;
 }
 
 /**

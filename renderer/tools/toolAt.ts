@@ -1,5 +1,7 @@
 import type { AppState, ToolId } from '../state/appState.js';
 import { ellipseTool } from './ellipseTool.js';
+import { isLineTool } from './lineKeys.js';
+import { lineAt, lineHandleTool, lineTool } from './lineTool.js';
 import { moveTool } from './moveTool.js';
 import { outlineTool } from './outlineTool.js';
 import { regionAt, selectTool } from './selectTool.js';
@@ -13,12 +15,17 @@ const TOOLS: Readonly<Record<ToolId, Tool>> = {
   zoom: zoomTool,
   ellipse: ellipseTool,
   outline: outlineTool,
+  edge: lineTool('edge'),
 };
 
 /** The tool that a press uses: a region that it takes hold of, else the chosen tool. */
 export function toolAt(state: AppState, pointer: ToolPointer): Tool {
   // While points of an outline are being set, a press near another region still sets a point.
   if (state.openOutline !== undefined) return TOOLS[state.tool];
+  const line = lineAt(state, pointer);
+  if (line !== undefined && state.note?.verification !== 'VERIFIED') return lineHandleTool(line);
+  // A line is drawn across marks: with its tool a press near the edge of a region begins a line.
+  if (isLineTool(state.tool)) return TOOLS[state.tool];
   const hit = regionAt(state, pointer);
   const canChange = state.note?.verification !== 'VERIFIED';
   return hit !== undefined && canChange ? selectTool(hit) : TOOLS[state.tool];

@@ -12,7 +12,9 @@ import { useEngine } from '../engine.js';
 import { changeSettings } from '../services/start.js';
 import { editNote } from '../state/history.js';
 import { ChoosePairView } from './ChoosePairView.js';
+import { KeyImageView } from './KeyImageView.js';
 import { keyNames } from './keyNames.js';
+import { NoteDialogView } from './NoteDialogView.js';
 import { useSelected } from './useSelected.js';
 
 /** The dialog that is open, if any. */
@@ -37,6 +39,11 @@ export function DialogsView() {
       return <ChoosePairView onClose={close} />;
     case 'newContrast':
       return <NewContrastView onClose={close} />;
+    case 'keyImage':
+      return <KeyImageView onClose={close} />;
+    case 'note':
+    case 'recheck':
+      return <NoteDialogView rechecks={dialog === 'recheck'} onClose={close} />;
     case 'settings':
       return (
         <SettingsDialog
@@ -91,6 +98,7 @@ function OpenFolderView() {
         void folderDialog.openRecent(id).then((folder) => folder && bench.openFolder(folder));
       }}
       onForget={folderDialog.forget}
+      onForgetAll={folderDialog.forgetAll}
       onDemonstration={() => {
         folderDialog.close();
         void bench.openDemonstration();
@@ -102,8 +110,8 @@ function OpenFolderView() {
 }
 
 function ContentsView({ onClose }: ClosableProps) {
-  const { store } = useEngine();
-  const { index, folder, pair } = store.now();
+  const { store, bench } = useEngine();
+  const { index, folder, pair, characterSet } = store.now();
   if (index === undefined || folder === undefined) return null;
   return (
     <Contents
@@ -111,6 +119,8 @@ function ContentsView({ onClose }: ClosableProps) {
       folderName={folder.name}
       softKey={pair?.soft.key}
       sharpKey={pair?.sharp?.key}
+      characterSet={characterSet}
+      onCharacterSet={(chosen) => void bench.openFolder(folder, chosen)}
       onChoosePair={() =>
         store.change('Open dialog', (state) => ({ ...state, dialog: 'choosePair' }))
       }

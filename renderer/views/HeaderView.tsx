@@ -1,4 +1,6 @@
 import { COMMANDS, type Command, type CommandId } from '../../core/commands/index.js';
+import { noteStudy, type Study } from '../../core/note/index.js';
+import type { Stack } from '../../core/stack/index.js';
 import { checkedCommands, enabledCommands } from '../commands/commandState.js';
 import { useEngine } from '../engine.js';
 import { Header, type SaveState as ShownSaveState } from '../panels/Header.js';
@@ -16,6 +18,7 @@ const MORE: readonly CommandId[] = [
   'folder.contents',
   'folder.demonstration',
   'pair.swap',
+  'pair.mask',
   'edit.undo',
   'edit.redo',
   'edit.copyTable',
@@ -35,6 +38,7 @@ const MORE: readonly CommandId[] = [
 export function HeaderView() {
   const { run } = useEngine();
   const note = useSelected((state) => state.note);
+  const study = useSelected(shownStudy);
   const save = useSelected((state) => state.save);
   const leftOut = useSelected((state) => state.index?.leftOut.length);
   const enabled = useSelected((state) => enabledCommands(state).join(' '));
@@ -42,7 +46,7 @@ export function HeaderView() {
   const canPair = useSelected((state) => (state.index?.stacks.length ?? 0) > 0);
   return (
     <Header
-      identity={note === undefined ? undefined : identityText(note.study)}
+      identity={study === undefined ? undefined : identityText(study)}
       synthetic={note?.synthetic ?? false}
       save={shownSave(save, note)}
       canPair={canPair}
@@ -88,4 +92,19 @@ function shownSave(save: AppState['save'], note: AppState['note']): ShownSaveSta
     case 'failed':
       return { kind: 'failed', reason: save.text, ...states };
   }
+}
+
+/** Who is read: as the note has it, or as the reader has the texts read now. */
+function shownStudy({ note, pair, characterSet }: AppState): Study | undefined {
+  if (characterSet === undefined || pair === undefined) return note?.study;
+  return studyReadNow(pair.soft);
+}
+
+/** The same object for the same stack: the header is not drawn again with every change of the state. */
+const studies = new WeakMap<Stack, Study>();
+
+function studyReadNow(stack: Stack): Study {
+  const known = studies.get(stack) ?? noteStudy(stack);
+  studies.set(stack, known);
+  return known;
 }

@@ -3,13 +3,15 @@ import type { Kernel } from '../../core/note/index.js';
 import { regionValues, type Shape } from '../../core/region/index.js';
 import { useEngine } from '../engine.js';
 import { Histogram } from '../plots/Histogram.js';
-import { NoisePlot } from '../plots/NoisePlot.js';
 import { PlotFrame } from '../plots/PlotFrame.js';
 import type { Bench } from '../services/bench.js';
 import type { AppState } from '../state/appState.js';
 import { selectedRegion, sliceOf, takesMarks } from '../state/regionSelectors.js';
 import { stackOf } from '../state/selectors.js';
+import { BandsView } from './BandsView.js';
+import { NoiseView } from './NoiseView.js';
 import { useSelected } from './useSelected.js';
+import { VisibleView } from './VisibleView.js';
 
 const NONE = new Float64Array(0);
 
@@ -20,42 +22,29 @@ export function PlotView() {
   const label = useSelected((state) => selectedRegion(state)?.label);
   return (
     <PlotFrame
-      title={plot === 'histogram' ? (label ?? 'Histogram') : 'Noise in uniform areas'}
+      title={titleOf(plot, label)}
       plot={plot}
       onPlot={(id) => store.change('Choose plot', (state) => ({ ...state, plot: id }))}
     >
-      {plot === 'histogram' ? <HistogramView /> : <NoiseView />}
+      {plot === 'histogram' && <HistogramView />}
+      {plot === 'bands' && <BandsView />}
+      {plot === 'noise' && <NoiseView />}
+      {plot === 'visible' && <VisibleView />}
     </PlotFrame>
   );
 }
 
-/** The noise power spectra that were measured with the pair. */
-function NoiseView() {
-  const assessment = useSelected((state) => state.assessment);
-  const pair = useSelected((state) => state.pair);
-  return <NoisePlot {...noiseOf(pair, assessment)} />;
-}
-
-function noiseOf(
-  pair: AppState['pair'],
-  assessment: AppState['assessment'],
-): Parameters<typeof NoisePlot>[0] {
-  if (pair?.sharp === undefined) {
-    return { spectra: undefined, about: 'Choose a pair to compare the noise of its two kernels.' };
+function titleOf(plot: AppState['plot'], label: string | undefined): string {
+  switch (plot) {
+    case 'histogram':
+      return label ?? 'Histogram';
+    case 'bands':
+      return label ?? 'Plaque density';
+    case 'noise':
+      return 'Noise and sharpness';
+    case 'visible':
+      return 'What could be seen';
   }
-  if (assessment.kind === 'failed') return { spectra: undefined, about: assessment.text };
-  if (assessment.kind !== 'done') {
-    return { spectra: undefined, about: 'The noise of both kernels is being measured…' };
-  }
-  const { spectra, areas } = assessment.measured;
-  const [soft, sharp] = [spectra[pair.soft.key], spectra[pair.sharp.key]];
-  if (soft === undefined || sharp === undefined) {
-    return {
-      spectra: undefined,
-      about: 'Too few uniform areas were found in both stacks to measure their noise.',
-    };
-  }
-  return { spectra: { soft, sharp }, about: `${areas.length} areas` };
 }
 
 /** The histogram of the selected region on both kernels; it stands still while a region is dragged. */

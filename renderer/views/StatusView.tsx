@@ -78,7 +78,12 @@ function cursorOf(
     kernel === place.kernel || (takesMarks(state, kernel) && takesMarks(state, place.kernel))
       ? valueAt(state, bench, kernel, place.pointMm)
       : null;
-  return { positionMm: place.pointMm, soft: on('soft'), sharp: on('sharp') };
+  const grid = shownSlice(state, place.kernel)?.slice.image.grid;
+  // Without a pixel spacing the place is a pixel's and not the patient's.
+  const where = grid?.unscaled
+    ? { pixel: patientToPixel(grid, place.pointMm) }
+    : { positionMm: place.pointMm };
+  return { ...where, soft: on('soft'), sharp: on('sharp') };
 }
 
 /** The value of the pixel at a place of the shown slice; null on padding, outside, and before it was read. */

@@ -1,4 +1,6 @@
 import { COMMANDS, type CommandId } from '../../core/commands/index.js';
+import { visibleText } from '../../core/format/index.js';
+import { windowWords } from '../../core/intensity/index.js';
 import { checkedCommands, enabledCommands } from '../commands/commandState.js';
 import { useEngine } from '../engine.js';
 import { ToolBar } from '../panels/ToolBar.js';
@@ -28,6 +30,5 @@ export function ToolBarView() {
 
 function shownWindow({ pair, plates, active }: AppState): string | undefined {
   if (pair === undefined) return undefined;
-  const { centre, width } = plates[active].window;
-  return `C ${Math.round(centre)} W ${Math.round(width)}`;
+  return visibleText(windowWords(plates[active].window));
 }

@@ -1,5 +1,12 @@
 import type { RegionValues } from '../../core/note/index.js';
-import { findSlice, measureRegion, type RegionValue, type Shape } from '../../core/region/index.js';
+import {
+  FLAGS,
+  findSlice,
+  measureRegion,
+  type NoiseOfStack,
+  type RegionValue,
+  type Shape,
+} from '../../core/region/index.js';
 import type { PairVolumes } from './loadPair.js';
 import type { StoredSlice, Volume } from './volume.js';
 
@@ -12,15 +19,20 @@ export type MeasureShape = (shape: Shape, volumes: PairVolumes) => RegionValues;
 interface Remembered {
   readonly volume: Volume;
   readonly stored: StoredSlice | undefined;
+  readonly noise: NoiseOfStack;
   readonly value: RegionValue;
 }
 
 /**
- * A measure with a memory: a shape object that was measured on a slice isn't measured on it again. Shapes are
- * never changed in place, so the object itself is the key, and the memory goes when the shape goes.
+ * A measure with a memory: a shape object that was measured on a slice isn't measured on it again, unless the noise of
+ * the stack has become known since. Shapes are never changed in place, so the object itself is the key, and the memory
+ * goes when the shape goes.
+ *
+ * @param noiseOf the noise of a stack as it is known now, the same object as long as nothing new is known
  */
 export function createMeasureShape(
   isGap: (volume: Volume, index: number) => boolean,
+  noiseOf: (volume: Volume) => NoiseOfStack = () => FLAGS.noStandardError,
 ): MeasureShape {
   const memory = new WeakMap<Shape, Remembered[]>();
 
@@ -29,18 +41,21 @@ export function createMeasureShape(
     const index = found.ok ? found.value.sliceIndex : undefined;
     const stored = index === undefined ? undefined : volume.slice(index);
     const known = memory.get(shape) ?? [];
+    const noise = noiseOf(volume);
     // A slice that is still to come has no value yet; a gap has one that says why there is none.
     if (index !== undefined && stored === undefined && !isGap(volume, index)) {
       const before = known.find((entry) => entry.volume === volume && entry.stored !== undefined);
-      if (before === undefined) volume.ask(index);
+      if (before?.noise !== noise) volume.ask(index);
       return before?.value ?? null;
     }
-    const same = known.find((entry) => entry.volume === volume && entry.stored === stored);
+    const same = known.find(
+      (entry) => entry.volume === volume && entry.stored === stored && entry.noise === noise,
+    );
     if (same !== undefined) return same.value;
-    const value = measureRegion(shape, volume.stack, (slice) => volume.slice(slice));
+    const value = measureRegion(shape, volume.stack, (slice) => volume.slice(slice), noise);
     memory.set(shape, [
       ...known.filter((entry) => entry.volume !== volume),
-      { volume, stored, value },
+      { volume, stored, noise, value },
     ]);
     return value;
   };

@@ -3,8 +3,10 @@ import { fileURLToPath } from 'node:url';
 import { isMainThread, parentPort, Worker, workerData } from 'node:worker_threads';
 import { evidenceCases } from './evidence/cases.js';
 import { type JudgedCase, judgeCase } from './evidence/judge.js';
+import { reportObserver } from './evidence/observerReport.js';
 import type { ProjectionCache } from './evidence/phantomPair.js';
 import { SHARPNESS_BUDGET_MS, sharpnessTimeMs } from './evidence/sharpnessTime.js';
+import { reportStandardError } from './evidence/standardErrorReport.js';
 
 const SCENES = 4;
 
@@ -89,6 +91,10 @@ if (isMainThread) {
   process.stdout.write(
     `${time <= SHARPNESS_BUDGET_MS ? 'kept' : 'MISSED'}: ${time.toFixed(0)} ms a pair at 512², five heights, budget ${SHARPNESS_BUDGET_MS} ms\n`,
   );
+  const isCovered = await reportStandardError((line) => process.stdout.write(`${line}\n`));
+  if (!isCovered) process.exitCode = 1;
+  const isSeen = await reportObserver((line) => process.stdout.write(`${line}\n`));
+  if (!isSeen) process.exitCode = 1;
 } else {
   await judgeScene(workerData as Task, (one) => parentPort?.postMessage(one));
 }

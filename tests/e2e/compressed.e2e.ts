@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { expect, type Page, test } from '@playwright/test';
 import { type CtSliceOptions, ctSlice } from '../corpus/ctSlice.js';
 import { enhancedCt } from '../corpus/enhancedCt.js';
+import { highThroughput } from '../corpus/highThroughput.js';
 import { acceptCautions, dragOn, sharpPlate, softPlate, watchPage } from './support/bench.js';
 import { startShell, temporaryHome } from './support/shell.js';
 
@@ -102,6 +103,33 @@ for (const [name, soft, sharp] of PAIRS) {
     home.remove();
   });
 }
+
+test('a pair in HTJ2K is decoded in the page', async ({ page }) => {
+  const home = temporaryHome();
+  const folder = join(home.path, 'study');
+  mkdirSync(folder);
+  for (const [name, series, number, hu] of [
+    ['soft', '2.25.8.1', 3, SOFT_HU],
+    ['sharp', '2.25.8.2', 4, SHARP_HU],
+  ] as const) {
+    const coded = await highThroughput(flat(hu), SIDE, SIDE);
+    const pixels = { 2145386512: { tag: 0x7fe00010, vr: 'OB', fragments: [coded] } } as const;
+    for (const [index, slice] of slices(series, number, hu).entries()) {
+      const change = { ...slice.change, ...pixels };
+      const transferSyntaxUid = '1.2.840.10008.1.2.4.201';
+      writeFileSync(
+        join(folder, `${name}${index}`),
+        ctSlice({ ...slice, change, transferSyntaxUid }),
+      );
+    }
+  }
+  const { shell, complaints } = await openFolder(page, home.path, folder);
+  await expectMeasured(page);
+  expect(complaints).toEqual([]);
+  await page.close();
+  await shell.stop();
+  home.remove();
+});
 
 test('a pair of enhanced multi-frame images is read frame by frame', async ({ page }) => {
   const home = temporaryHome();

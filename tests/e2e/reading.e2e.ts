@@ -205,6 +205,38 @@ test('hinge, ledger, saved note and CSV say the same', async () => {
   expect(contrast?.formula).toBe('CNR = (lumen − wall) / SD of wall');
 });
 
+test('the standard error of each mean stands in the hinge, the note and the CSV once the noise is measured', async () => {
+  await expect
+    .poll(() => savedNote().regions[0]?.sharp?.standardErrorHu ?? null, { timeout: 30_000 })
+    .not.toBeNull();
+  await regionRow(page, 'L1').click();
+  const note = savedNote();
+  const { soft, sharp } = note.regions[0] ?? {};
+  expect(note.pair.texture.soft?.areas).toBeGreaterThan(10);
+  expect(note.pair.texture.sharp?.noiseSdHu).toBeGreaterThan(
+    note.pair.texture.soft?.noiseSdHu ?? 0,
+  );
+  const row = page.locator('[data-panel=hinge] .readout tbody tr', { hasText: 'standard error' });
+  await expect(row.locator('td.soft')).toHaveText(`± ${soft?.standardErrorHu?.toFixed(1)}`);
+  await expect(row.locator('td.sharp')).toHaveText(`± ${sharp?.standardErrorHu?.toFixed(1)}`);
+  await expect(row.locator('td.soft')).toHaveAttribute('title', /how far noise alone moves it/);
+  const placement = page.locator('[data-panel=hinge] .readout tbody tr', { hasText: 'placement' });
+  await expect(placement.locator('td.sharp')).toHaveText(`± ${sharp?.placementHu?.toFixed(1)}`);
+  const mean = regionRow(page, 'L1').locator('td.soft').first();
+  await expect(mean).toHaveAttribute(
+    'title',
+    /Standard error of the mean, by noise alone: [\d.]+ HU/,
+  );
+  const download = page.waitForEvent('download');
+  await page.keyboard.press('Control+e');
+  const lines = csvParse(readFileSync(await (await download).path(), 'utf8'));
+  const line = lines.find(
+    ({ id, kernel, quantity }) =>
+      id === 'L1' && kernel === 'sharp' && quantity === 'standard error',
+  );
+  expect(Number(line?.value)).toBe(sharp?.standardErrorHu);
+});
+
 test('a reload finds note, regions and numbers again', async () => {
   const before = await regionRow(page, 'W1').innerText();
   await page.goto('about:blank');

@@ -54,6 +54,8 @@ export function GalleryDialog({ name }: { readonly name: string }) {
           folderName="heart-2026-01"
           softKey="1.2.3.3"
           sharpKey="1.2.3.4"
+          characterSet={undefined}
+          onCharacterSet={nothing}
           onChoosePair={nothing}
           onClose={close}
         />
@@ -112,6 +114,7 @@ function GalleryFolder({ reading, onClose }: { readonly reading: boolean; onClos
       onChoose={nothing}
       onRecent={nothing}
       onForget={nothing}
+      onForgetAll={nothing}
       onDemonstration={nothing}
       onCancel={nothing}
       onClose={onClose}

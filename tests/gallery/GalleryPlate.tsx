@@ -1,5 +1,5 @@
 import { useEffect, useRef } from 'preact/hooks';
-import { ROLE_SIGNS } from '../../renderer/style/roleSigns.js';
+import { ROLE_SIGNS } from '../../core/region/index.js';
 
 interface GalleryPlateProps {
   readonly grain: number;

@@ -43,7 +43,7 @@ function textOf({ files, stacks, leftOut }: IndexDocument): string {
       stack.phasePercent ?? '–',
       stack.slices,
       `${stack.rows} × ${stack.columns}`,
-      stack.pixelSpacingMm.join(' × '),
+      stack.pixelSpacingMm?.join(' × ') ?? '–',
       stack.sliceSpacingMm ?? '–',
       stack.unit,
     ]),

@@ -17,8 +17,8 @@ type Stored = z.infer<typeof StoredSchema>;
 /** The folders opened last, latest first, ten at most. Names of folders can tell who was examined. */
 export interface Recents {
   list(): Promise<readonly RecentFolder[]>;
-  /** Puts a real path first. */
-  add(path: string): Promise<void>;
+  /** Puts a real path first; gives the paths that fell off the end of the list. */
+  add(path: string): Promise<readonly string[]>;
   /** The path behind an id of the list. */
   find(id: string): Promise<string | undefined>;
   /** Takes one folder off the list; an unknown id changes nothing. */
@@ -36,10 +36,14 @@ export function createRecents(folder: string): Recents {
     const stored = await readJsonFile(path, StoredSchema);
     return stored.kind === 'value' ? stored.value : [];
   };
-  const change = (edit: (entries: Stored) => Stored): Promise<void> =>
+  /** @returns the entries that are gone */
+  const change = (edit: (entries: Stored) => Stored): Promise<Stored> =>
     queue.run(async () => {
       await ensureOwnerFolder(folder);
-      await writeOwnerFile(path, `${JSON.stringify(edit(await read()), null, 2)}\n`);
+      const before = await read();
+      const after = edit(before);
+      await writeOwnerFile(path, `${JSON.stringify(after, null, 2)}\n`);
+      return before.filter(({ path: gone }) => !after.some((entry) => entry.path === gone));
     });
 
   return {
@@ -53,17 +57,23 @@ export function createRecents(folder: string): Recents {
           })),
         ),
       ),
-    add: (added) =>
-      change((entries) => {
+    add: async (added) => {
+      const gone = await change((entries) => {
         const id =
           entries.find((entry) => entry.path === added)?.id ??
           randomBytes(12).toString('base64url');
         const others = entries.filter((entry) => entry.path !== added);
         return [{ id, path: added }, ...others].slice(0, KEPT);
-      }),
+      });
+      return gone.map((entry) => entry.path);
+    },
     find: (id) => queue.run(async () => (await read()).find((entry) => entry.id === id)?.path),
-    remove: (id) => change((entries) => entries.filter((entry) => entry.id !== id)),
-    clear: () => change(() => []),
+    remove: async (id) => {
+      await change((entries) => entries.filter((entry) => entry.id !== id));
+    },
+    clear: async () => {
+      await change(() => []);
+    },
     settled: queue.settled,
   };
 }

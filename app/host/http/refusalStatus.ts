@@ -5,6 +5,7 @@ const STATUS = {
   'no-such-folder': 404,
   'no-such-file': 404,
   'no-such-frame': 404,
+  'no-such-character-set': 400,
   'unreadable-file': 403,
   'outside-folder': 403,
   vanished: 404,

@@ -4,7 +4,7 @@ import type { SliceGrid } from '../../../core/geometry/index.js';
 import type { FileState } from './readFileHeader.js';
 
 /** Raise it when the text of a cache, or the meaning of anything in it, changes. */
-export const CACHE_FORMAT = 1;
+export const CACHE_FORMAT = 2;
 
 /** A schema for every key of a type: a key that is added to the type is missed here by the compiler. */
 type Shape<T> = { readonly [K in keyof T]-?: z.ZodType<T[K]> };
@@ -72,6 +72,7 @@ const WindowSchema = z.strictObject({
   width: z.number(),
   function: z.enum(['LINEAR', 'LINEAR_EXACT', 'SIGMOID']),
   explanation: maybeText,
+  table: z.array(z.tuple([z.number(), z.number()])).exactOptional(),
 } satisfies Shape<CtImage['windows'][number]>);
 
 type GridKind = Omit<SliceGrid, 'positionMm'>;
@@ -82,6 +83,7 @@ const GridKindSchema = z.strictObject({
   pixelSpacingMm: z.tuple([z.number(), z.number()]),
   rows: z.int().positive(),
   columns: z.int().positive(),
+  unscaled: z.literal(true).exactOptional(),
 } satisfies Shape<GridKind>);
 
 /** What slices have in common stands in tables, each value once; a slice has its place in the table instead. */

@@ -14,7 +14,10 @@ import { OPEN_FLAGS } from './readFileHeader.js';
 export interface HeaderCache {
   /** Readings kept for a folder, given by its real path; none when there are none that can be believed. */
   read(root: string): Promise<CachedReadings>;
-  /** Keeps readings in place of those that were kept. Returns at once. */
+  /**
+   * Keeps readings in place of those that were kept. Returns at once. A folder that was forgotten since it was asked
+   * for stays forgotten, also when its reading was under way.
+   */
   write(root: string, readings: CachedReadings): void;
   forget(root: string): Promise<void>;
   clear(): Promise<void>;
@@ -44,6 +47,9 @@ export function createHeaderCache(options: HeaderCacheOptions): HeaderCache {
   const fileOf = (root: string): string =>
     join(folder, `${createHash('sha256').update(root).digest('hex').slice(0, 32)}.json`);
 
+  /** Folders that were asked for and not forgotten since: only of these are readings kept. */
+  const wanted = new Set<string>();
+
   const removeOldest = async (): Promise<void> => {
     const files = await listFiles(folder);
     files.sort((a, b) => b.usedMs - a.usedMs);
@@ -55,18 +61,21 @@ export function createHeaderCache(options: HeaderCacheOptions): HeaderCache {
   };
 
   return {
-    read: (root) =>
-      queue.run(async () => {
+    read: (root) => {
+      wanted.add(root);
+      return queue.run(async () => {
         const path = fileOf(root);
         const text = await readAtMost(path, limits.one);
         if (text === undefined) return new Map();
         const readings = readingsOfCache(text, { root, reader });
         if (readings.size > 0) await touch(path);
         return readings;
-      }),
+      });
+    },
     write: (root, readings) => {
       queue
         .run(async () => {
+          if (!wanted.has(root)) return;
           const path = fileOf(root);
           const text = cacheText({ root, reader }, readings);
           if (readings.size === 0 || Buffer.byteLength(text) > limits.one) {
@@ -78,11 +87,16 @@ export function createHeaderCache(options: HeaderCacheOptions): HeaderCache {
         })
         .catch(report);
     },
-    forget: (root) => queue.run(() => rm(fileOf(root), { force: true })),
-    clear: () =>
-      queue.run(async () => {
+    forget: (root) => {
+      wanted.delete(root);
+      return queue.run(() => rm(fileOf(root), { force: true }));
+    },
+    clear: () => {
+      wanted.clear();
+      return queue.run(async () => {
         for (const { path } of await listFiles(folder)) await rm(path, { force: true });
-      }),
+      });
+    },
     settled: queue.settled,
   };
 }

@@ -1,15 +1,20 @@
 import { availableParallelism } from 'node:os';
 import { setImmediate } from 'node:timers/promises';
 import { Piscina } from 'piscina';
+import type { ReadOptions } from '../../../core/dicom/index.js';
 import { workerFile } from '../workerFile.js';
-import { readBatch } from './readBatch.js';
+import { type Batch, readBatch } from './readBatch.js';
 import type { FileReading } from './readFileHeader.js';
 
 /** Reads headers of files by the batch. Rejects with an AbortError when its signal is aborted. */
 export interface HeaderReader {
   /** Batches that keep it busy: more of them at once only wait. */
   readonly lanes: number;
-  read(paths: readonly string[], signal?: AbortSignal): Promise<readonly FileReading[]>;
+  read(
+    paths: readonly string[],
+    signal?: AbortSignal,
+    options?: ReadOptions,
+  ): Promise<readonly FileReading[]>;
   /** Starts its threads, so that the first folder does not wait for them. */
   warm(): Promise<void>;
   close(): Promise<void>;
@@ -29,7 +34,7 @@ export function createHeaderReader(threads: number): HeaderReader {
 }
 
 function threadedReader(threads: number): HeaderReader {
-  const pool = new Piscina<readonly string[], readonly FileReading[]>({
+  const pool = new Piscina<Batch, readonly FileReading[]>({
     filename: workerFile('index.worker'),
     minThreads: 0,
     maxThreads: threads,
@@ -38,10 +43,15 @@ function threadedReader(threads: number): HeaderReader {
   return {
     // One is read while the next one is on its way.
     lanes: 2 * threads,
-    read: (paths, signal) =>
-      pool.run(paths, { name: 'readBatch', ...(signal === undefined ? {} : { signal }) }),
+    read: (paths, signal, options = {}) =>
+      pool.run(
+        { paths, options },
+        { name: 'readBatch', ...(signal === undefined ? {} : { signal }) },
+      ),
     async warm() {
-      const empty = Array.from({ length: threads }, () => pool.run([], { name: 'readBatch' }));
+      const empty = Array.from({ length: threads }, () =>
+        pool.run({ paths: [], options: {} }, { name: 'readBatch' }),
+      );
       await Promise.all(empty);
     },
     close: () => pool.destroy(),
@@ -51,10 +61,10 @@ function threadedReader(threads: number): HeaderReader {
 function ownReader(): HeaderReader {
   return {
     lanes: 1,
-    async read(paths, signal) {
+    async read(paths, signal, options = {}) {
       await setImmediate();
       signal?.throwIfAborted();
-      return readBatch(paths);
+      return readBatch({ paths, options });
     },
     async warm() {},
     async close() {},

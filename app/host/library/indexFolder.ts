@@ -1,4 +1,5 @@
 import { basename, join } from 'node:path';
+import type { ReadOptions } from '../../../core/dicom/index.js';
 import { type Result, success } from '../../../core/result.js';
 import {
   buildStacks,
@@ -28,7 +29,7 @@ const BATCH = 32;
 const SETTLED_MS = 2000;
 
 /** How a folder is indexed. */
-export interface IndexOptions extends JobOptions {
+export interface IndexOptions extends JobOptions, ReadOptions {
   /** Worker threads; 0 reads in this thread. By default as many as there are processors, four at most. */
   readonly threads?: number;
   /** A reader to be used instead of threads of its own. It is not closed here. */
@@ -36,7 +37,7 @@ export interface IndexOptions extends JobOptions {
   /** Paths of an earlier index of this folder: a file that is still there keeps its number. */
   readonly known?: readonly string[];
   /** What was read of folders before. A file that is in the same state is not opened. */
-  readonly cache?: Pick<HeaderCache, 'read' | 'write'>;
+  readonly cache?: Pick<HeaderCache, 'read' | 'write'> | undefined;
   /** Present time, ms since 1970; the system's by default. */
   readonly now?: () => number;
 }
@@ -57,8 +58,10 @@ export interface IndexedFolder extends FolderIndex {
  */
 export async function indexFolder(
   directory: string,
-  options: IndexOptions = {},
+  given: IndexOptions = {},
 ): Promise<Result<IndexedFolder>> {
+  // What is kept was read as the files say.
+  const options = given.characterSet === undefined ? given : { ...given, cache: undefined };
   const root = await realFolder(directory);
   if (!root.ok) return root;
   const scan = await scanFolder(root.value, options);
@@ -109,7 +112,7 @@ async function readAll(
   options: IndexOptions,
 ): Promise<readonly FileReading[] | undefined> {
   const { onProgress, signal } = options;
-  const unchanged = await unchangedFiles(root, files, kept, signal);
+  const unchanged = await unchangedFiles(root, files, kept, options);
   if (isCancelled(signal)) return undefined;
   const changed = files.filter((file) => !unchanged.has(file));
   const tell = (done: number): void =>
@@ -138,7 +141,7 @@ async function readAll(
 async function readBatches(
   paths: readonly string[],
   onDone: (done: number) => void,
-  { signal, threads = usualThreads(), reader: given }: IndexOptions,
+  { signal, threads = usualThreads(), reader: given, characterSet }: IndexOptions,
 ): Promise<readonly FileReading[] | undefined> {
   const batches: (readonly string[])[] = [];
   for (let start = 0; start < paths.length; start += BATCH) {
@@ -151,7 +154,7 @@ async function readBatches(
   const lane = async (): Promise<void> => {
     for (let number = next++; number < batches.length; number = next++) {
       const batch = batches[number] ?? [];
-      found[number] = await reader.read(batch, signal);
+      found[number] = await reader.read(batch, signal, { characterSet });
       done += batch.length;
       onDone(done);
     }

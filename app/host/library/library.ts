@@ -1,3 +1,4 @@
+import type { ReadOptions } from '../../../core/dicom/index.js';
 import { type Result, refuse, success } from '../../../core/result.js';
 import type { FolderIndex } from '../../../core/stack/index.js';
 import type { Grants } from '../folders/grants.js';
@@ -12,7 +13,7 @@ export interface Library {
   /** Says that a folder is about to be read: the threads start while the page is still loading. */
   warm(): Promise<void>;
   /** Reads a granted folder anew. Its files can be asked for from then on; numbers given before stay. */
-  index(grant: string, options?: JobOptions): Promise<Result<FolderIndex>>;
+  index(grant: string, options?: JobOptions & ReadOptions): Promise<Result<FolderIndex>>;
   /** Opens a file by its number in the folder's index. Whoever gets it closes it. */
   open(grant: string, fileId: number): Promise<Result<OpenFrame>>;
 }

@@ -1,5 +1,5 @@
 import { closeSync, constants, fstatSync, openSync, readSync } from 'node:fs';
-import { type HeaderReading, readHeader } from '../../../core/dicom/index.js';
+import { type HeaderReading, type ReadOptions, readHeader } from '../../../core/dicom/index.js';
 import { fileErrorCode, fileErrorReason } from '../storage/fileError.js';
 
 /** Size and time of change of a file when its header was read. */
@@ -37,7 +37,7 @@ export const OPEN_FLAGS =
 const SCRATCH = new Uint8Array(64 << 10);
 
 /** Reads the header of one file, with as few bytes as will do. Blocks: call it in a worker thread. */
-export function readFileHeader(path: string): FileReading {
+export function readFileHeader(path: string, options: ReadOptions = {}): FileReading {
   let descriptor: number;
   try {
     descriptor = openSync(path, OPEN_FLAGS);
@@ -46,7 +46,7 @@ export function readFileHeader(path: string): FileReading {
   }
   try {
     const { size, mtimeMs, ctimeMs, ino } = fstatSync(descriptor);
-    const reading = readSteps(descriptor, size);
+    const reading = readSteps(descriptor, size, options);
     const failed = reading.kind === 'leftOut' && FAILED.has(reading.code);
     return failed ? { reading } : { reading, stamp: { size, mtimeMs, ctimeMs, ino } };
   } catch (error) {
@@ -59,23 +59,23 @@ export function readFileHeader(path: string): FileReading {
 /** Reasons to leave a file out that lie in the moment, not in what the file holds. */
 const FAILED: ReadonlySet<string> = new Set(['file-shrank', 'reader-failed']);
 
-function readSteps(descriptor: number, size: number): FileReading['reading'] {
+function readSteps(descriptor: number, size: number, options: ReadOptions): FileReading['reading'] {
   if (size === 0) return leaveOut('empty-file', 'Empty file: it holds no bytes.');
   for (const step of [...STEPS, Math.min(size, MOST_BYTES)]) {
     const bytes = readStart(descriptor, Math.min(step, size));
     if (bytes.length < Math.min(step, size)) {
       return leaveOut('file-shrank', 'The file became shorter while it was read.');
     }
-    const reading = readChecked(bytes, size);
+    const reading = readChecked(bytes, size, options);
     if (reading.kind !== 'needMore') return reading;
   }
   return leaveOut('no-header', `No image header in its ${Math.min(size, MOST_BYTES)} bytes.`);
 }
 
 /** One file that the reader stumbles over must not stop the folder; it is left out, and the text says what happened. */
-function readChecked(bytes: Uint8Array, size: number): HeaderReading {
+function readChecked(bytes: Uint8Array, size: number, options: ReadOptions): HeaderReading {
   try {
-    return readHeader(bytes, size);
+    return readHeader(bytes, size, options);
   } catch (error) {
     return leaveOut('reader-failed', `Diptych failed to read this file (${String(error)}).`);
   }

@@ -3,6 +3,7 @@ import { join } from 'node:path';
 import type { Note } from '../../../core/note/index.js';
 import { type Result, refuse, success } from '../../../core/result.js';
 import { fileErrorCode, fileErrorReason } from '../storage/fileError.js';
+import { removeLeftovers } from '../storage/leftovers.js';
 import { ensureOwnerFolder, writeOwnerFile } from '../storage/ownerFile.js';
 import { createQueue } from '../storage/queue.js';
 import { checkSentNote, checkStoredNote } from './checkNote.js';
@@ -46,6 +47,8 @@ export interface NotesStore {
  */
 export function createNotes(folder: string): NotesStore {
   const queue = createQueue();
+  /** Folders that this process has freed of what killed writers left. */
+  const swept = new Set<string>();
   const folderOf = (key: NoteKey): string => join(folder, noteFolderName(key));
 
   const save = async (value: unknown, condition: SaveCondition): Promise<Result<SavedNote>> => {
@@ -63,6 +66,8 @@ export function createNotes(folder: string): NotesStore {
     if (etag === current?.etag) return success({ etag, created: false });
     await ensureOwnerFolder(folder);
     await ensureOwnerFolder(place);
+    if (!swept.has(place)) await removeLeftovers(place, Date.now());
+    swept.add(place);
     if (current !== undefined) await keepVersion(join(place, 'earlier'), current.bytes);
     await writeOwnerFile(join(place, 'note.json'), bytes);
     return success({ etag, created: current === undefined });

@@ -2,6 +2,7 @@ import { Hono } from 'hono';
 import type { Services } from '../services.js';
 import { chooserRoutes } from './chooser.js';
 import { demonstrationRoutes } from './demonstration.js';
+import { exportRoutes } from './exports.js';
 import { folderRoutes } from './folders.js';
 import { noteRoutes } from './notes.js';
 import { presenceRoutes } from './presence.js';
@@ -25,6 +26,7 @@ export function apiRoutes(services: Services, options: RouteOptions) {
     .route('/', recentRoutes(services))
     .route('/', demonstrationRoutes(services))
     .route('/', noteRoutes(services))
+    .route('/', exportRoutes())
     .route('/', presenceRoutes(services))
     .route('/', options.folderChooser === true ? chooserRoutes(services) : noChooser());
 }

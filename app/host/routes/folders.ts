@@ -1,5 +1,6 @@
 import { type Context, Hono } from 'hono';
-import { refuse } from '../../../core/result.js';
+import { characterSetChoice } from '../../../core/dicom/index.js';
+import { type Refusal, refuse } from '../../../core/result.js';
 import { byteRange } from '../http/byteRange.js';
 import { jobStream } from '../http/jobStream.js';
 import { refused } from '../http/refused.js';
@@ -8,15 +9,24 @@ import { frameStream } from '../library/frameStream.js';
 import type { OpenFrame } from '../library/openFrame.js';
 import type { Services } from '../services.js';
 
+const NO_SUCH_SET: Refusal = {
+  code: 'no-such-character-set',
+  text: 'Texts can’t be read in this character set. Choose one of those that are offered.',
+};
+
 /** What an opened folder holds, and the bytes of its files by their number. */
 export function folderRoutes(services: Services) {
   const maps = createFrameMaps();
   return new Hono()
-    .get('/folders/:grant/index', (context) =>
-      jobStream(context.req.raw.signal, services.report, (options) =>
-        services.library.index(context.req.param('grant'), options),
-      ),
-    )
+    .get('/folders/:grant/index', (context) => {
+      const characterSet = context.req.query('characterSet');
+      if (characterSet !== undefined && characterSetChoice(characterSet) === undefined) {
+        return refused(context, NO_SUCH_SET);
+      }
+      return jobStream(context.req.raw.signal, services.report, (options) =>
+        services.library.index(context.req.param('grant'), { ...options, characterSet }),
+      );
+    })
     .get('/folders/:grant/frames/:fileId', async (context) => {
       const number = context.req.param('fileId');
       const fileId = /^\d{1,9}$/.test(number) ? Number(number) : -1;

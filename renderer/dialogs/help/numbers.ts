@@ -57,11 +57,22 @@ export const NUMBERS: readonly NumberHelp[] = [
     source: 'Formulas in use: Acta Radiol 2021, doi 10.1177/02841851211041813.',
   },
   {
-    title: 'Standard error and placement',
+    title: 'Standard error of a mean',
     text: [
-      'Neighbouring pixels are correlated, so SD/√n is several times too small. A standard error is given only where the noise’s correlation was measured on that kernel; elsewhere there is none. Placement is how far the mean moves when the region moves by half a pixel in eight directions.',
+      'How far noise alone moves the mean of a region. Neighbouring pixels share their noise, so SD/√n is wrong, on a soft kernel several times too small. Here the noise power spectrum of each kernel is measured in the uniform areas that the pair has in common; it gives the correlation between any two pixels, and the sum over all pairs of pixels of the region gives the error of their mean. The mean ± 1.96 standard errors holds what the mean would be without noise in about 95 of 100 scans.',
+      'The noise σ is that of the uniform areas, the near ones counting more; never the SD of the region itself, which holds structure too. What detrending takes from the lowest frequencies is given back; below 0.08 per mm, which no area of 12 mm can tell, the noise is taken rather too high than too low, so that the error of a region wider than 10 mm is somewhat overstated. Where a single stack is read, or the two have fewer than four uniform areas in common, there is no standard error.',
+      'It says nothing of blur, of a misplaced outline or of structure inside the region.',
     ],
-    source: 'Variance of a mean of correlated values: any textbook of time series.',
+    formula: 'SE² = σ²/n² × ΣΣ ρ over all pairs of pixels;  not SD²/n',
+    source:
+      'Variance of a mean of correlated values: any textbook of time series. Noise power spectrum: AAPM report 233, 2019. Detrending undone after Richardson 1972, doi 10.1364/JOSA.62.000055.',
+  },
+  {
+    title: 'Placement',
+    text: [
+      'How far the mean moves, at most, when the region is placed a little otherwise: moved by half a pixel in eight directions, and its edge moved by 0.25 mm outwards and inwards (both half axes of an ellipse, each side of an outline). It is large where an edge is near, whatever the noise. A region so small that one of these holds no pixel has none.',
+    ],
+    source: 'Diptych’s own rule.',
   },
   {
     title: 'One acquisition',
@@ -78,6 +89,16 @@ export const NUMBERS: readonly NumberHelp[] = [
     ],
     formula: 'bin width = 2 × IQR / ∛n',
     source: 'Freedman & Diaconis 1981, Z Wahrscheinlichkeitstheorie verw Gebiete 57:453.',
+  },
+  {
+    title: 'What could be seen',
+    text: [
+      'The smallest disc that stands out k times its noise for a matched filter that knows its shape and place, from the noise spectrum and the blur that were measured on each kernel. k is 3 to 5; 5 is the classic value. The contrast is the disc’s own, before blur: that of a lumen and a wall of the note as each kernel shows it, or one that you type.',
+      'It is an ideal observer’s figure: the background is even, with the noise of the uniform areas, and nothing else looks like the disc. In a real vessel less is seen. Below 20 HU an eye tells nothing apart even under ideal conditions (common practice, no source).',
+    ],
+    formula: 'd′² = [∬|W|²·TTF²]² / ∬|W|²·TTF²·NPS ≥ k²',
+    source:
+      'AAPM report 233, 2019; Samei 2019, Med Phys 46:e735, doi 10.1002/mp.13763. Criterion: Rose 1948, J Opt Soc Am 38:196.',
   },
   {
     title: 'Segments',

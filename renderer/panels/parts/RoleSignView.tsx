@@ -1,5 +1,5 @@
 import type { Role } from '../../../core/region/index.js';
-import { ROLE_SIGNS, type RoleSign } from '../../style/roleSigns.js';
+import { ROLE_SIGNS, type RoleSign } from '../../../core/region/index.js';
 
 /** The shape of a role about (0, 0), 8 px wide, in the current colour. */
 function Shape({ shape }: { readonly shape: RoleSign['shape'] }) {

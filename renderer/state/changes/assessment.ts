@@ -1,3 +1,4 @@
+import { type NotePair, withRenewedVisibility } from '../../../core/note/index.js';
 import type { MeasuredPair } from '../../pairing/measuredPair.js';
 import type { AppState, PlateState } from '../appState.js';
 import type { Change } from '../store.js';
@@ -14,6 +15,7 @@ export function keepMeasured(measured: MeasuredPair, now: string): Change {
     const { pair, note } = state;
     if (pair?.soft.key !== measured.softKey || pair.sharp?.key !== measured.sharpKey) return state;
     const { evidence } = measured;
+    const texture = textureOfPair(measured);
     const isDecided = measured.measuredSharpKey === pair.sharp.key;
     const chosenBy = pair.chosenBy === 'order' && isDecided ? 'measure' : pair.chosenBy;
     return {
@@ -21,15 +23,26 @@ export function keepMeasured(measured: MeasuredPair, now: string): Change {
       assessment: { kind: 'done', measured },
       pair: { ...pair, evidence, chosenBy },
       note:
-        note === undefined || note.verification === 'VERIFIED' || isSame(note.pair, evidence)
+        note === undefined ||
+        note.verification === 'VERIFIED' ||
+        isSame(note.pair, evidence, texture)
           ? note
-          : { ...note, changedAt: now, pair: { ...note.pair, evidence: [...evidence] } },
+          : withRenewedVisibility({
+              ...note,
+              changedAt: now,
+              pair: { ...note.pair, evidence: [...evidence], texture },
+            }),
     };
   };
 }
 
-function isSame(pair: { readonly evidence: unknown }, evidence: unknown): boolean {
-  return JSON.stringify(pair.evidence) === JSON.stringify(evidence);
+function isSame(pair: NotePair, evidence: unknown, texture: unknown): boolean {
+  return JSON.stringify([pair.evidence, pair.texture]) === JSON.stringify([evidence, texture]);
+}
+
+/** The textures of the kernels as the plates have them: the pair may have changed places since it was measured. */
+function textureOfPair({ softKey, sharpKey, textures }: MeasuredPair): NotePair['texture'] {
+  return { soft: textures[softKey] ?? null, sharp: textures[sharpKey] ?? null };
 }
 
 /** Gives each plate the place and window that the other one had, after soft and sharp were swapped. */
@@ -40,6 +53,20 @@ export function swapPlates(before: AppState['plates']): Change {
     return {
       ...state,
       plates: { soft: moved(before.sharp, soft), sharp: moved(before.soft, sharp) },
+    };
+  };
+}
+
+/** Gives both plates the places and windows that they had, after the same stacks were shown anew. */
+export function samePlaces(before: AppState['plates']): Change {
+  return (state) => {
+    const { soft, sharp } = state.plates;
+    return {
+      ...state,
+      plates: {
+        soft: { ...before.soft, size: soft.size },
+        sharp: { ...before.sharp, size: sharp.size },
+      },
     };
   };
 }

@@ -1,12 +1,13 @@
 import type { AppState } from '../appState.js';
 import { selectedRegion, sliceOf, takesMarks } from '../regionSelectors.js';
 import { otherKernel, stackOf } from '../selectors.js';
+import { goToLine } from './edges.js';
 import { scrollTo } from './view.js';
 
 /** Takes the plates to the selected region's slice: the active plate where the region lies on it, else the other. */
 export function goToRegion(state: AppState): AppState {
   const region = selectedRegion(state);
-  if (region === undefined) return state;
+  if (region === undefined) return goToLine(state);
   for (const kernel of [state.active, otherKernel(state.active)]) {
     const stack = stackOf(state, kernel);
     if (stack === undefined || !takesMarks(state, kernel)) continue;

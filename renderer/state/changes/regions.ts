@@ -8,6 +8,7 @@ import type { Role, Shape } from '../../../core/region/index.js';
 import type { AppState } from '../appState.js';
 import { editNote } from '../history.js';
 import type { Change } from '../store.js';
+import { removeSelectedEdge } from './edges.js';
 
 /** Puts a new region into the note and selects it. */
 export function placeRegion(role: Role, shape: Shape, values: RegionValues, now: string): Change {
@@ -40,11 +41,14 @@ export function reshapeRegion(
 export function removeSelected(now: string): Change {
   return (state) => {
     const region = state.note?.regions.find(({ id }) => id === state.selected);
-    if (state.note === undefined || region === undefined) return state;
+    if (state.note === undefined || region === undefined) return removeSelectedEdge(now)(state);
     const { note, removedContrasts } = removeRegion(state.note, region.id, now);
+    const edited = editNote(`Delete ${region.label}`, () => note)(state);
+    // A verified note keeps its regions, and the reader is told.
+    if (edited.note !== note) return edited;
     const gone = removedContrasts.map(({ id }) => id).join(', ');
     return {
-      ...editNote(`Delete ${region.label}`, () => note)(state),
+      ...edited,
       selected: undefined,
       draft: undefined,
       message: {
@@ -59,7 +63,10 @@ export function removeSelected(now: string): Change {
 }
 
 export function selectRegion(id: string | undefined): Change {
-  return (state) => (state.selected === id ? state : { ...state, selected: id, draft: undefined });
+  return (state) =>
+    state.selected === id
+      ? state
+      : { ...state, selected: id, draft: undefined, lineEnd: undefined };
 }
 
 /** Selects the next or the previous region in the order of making; from none, the first or the last. */

@@ -109,7 +109,8 @@ export const CHARACTER_SET_ROWS: readonly CorpusRow[] = [
     row: 41,
     section: 'C',
     title: 'Mislabelled (GBK bytes, ISO_IR 100)',
-    outcome: 'read as labelled; nothing is guessed from the text',
+    outcome:
+      'read as labelled; nothing is guessed from the text. The reader can have texts read in another set, and a finding says so',
     cases: [
       nameCase('GBK as ISO_IR 100', {
         set: 'ISO_IR 100',

@@ -47,10 +47,16 @@ function withWindow(name: string, centre: string, width: string): RowCase {
   };
 }
 
-const refusedSpacing = (name: string, value: string): RowCase =>
-  leftOut('REFUSE', name, 'no-geometry', 'Pixel Spacing', () =>
-    ctSlice({ change: { 2621488: spacing(value) } }),
-  );
+/** Shown pixel by pixel; what is taken away is all measuring. */
+const refusedSpacing = (name: string, value: string): RowCase => ({
+  name,
+  verdict: 'REFUSE',
+  code: 'no-pixel-spacing',
+  says: 'pixel spacing',
+  build: () => ({ slice: ctSlice({ change: { 2621488: spacing(value) } }) }),
+  image: { grid: { pixelSpacingMm: [1, 1], unscaled: true } },
+  stored: PLAIN_STORED,
+});
 
 /** Section C, numbers: rows 46 to 50. */
 export const NUMBER_ROWS: readonly CorpusRow[] = [

@@ -27,6 +27,8 @@ const spacing = (value: readonly number[] | string): WriteElement => ({
 });
 const sopClass = (value: string): WriteElement => ({ tag: 0x00080016, vr: 'UI', value });
 
+const UNSCALED = { grid: { pixelSpacingMm: [1, 1], unscaled: true } } as const;
+
 /** Rows 82 to 88: series and geometry. */
 export const SERIES: readonly CorpusRow[] = [
   {
@@ -238,13 +240,12 @@ export const SERIES: readonly CorpusRow[] = [
     section: 'E',
     title: 'Geometry missing or impossible, UIDs stripped, two patients, two frames of reference',
     outcome:
-      'Directions within 1e-3 are put right; otherwise a slice without geometry is left out. Slices without UIDs are grouped by folder and header. Patients are never mixed.',
+      'Directions within 1e-3 are put right; otherwise a slice without position or orientation is left out. Without a pixel spacing it is shown pixel by pixel: no scale, nothing measured, part of no pair. Slices without UIDs are grouped by folder and header. Patients are never mixed.',
     cases: [
       ...(
         [
           ['no position', 0x00200032],
           ['no orientation', 0x00200037],
-          ['no pixel spacing', 0x00280030],
         ] as const
       ).map(([name, tag]) => ({
         name,
@@ -253,9 +254,17 @@ export const SERIES: readonly CorpusRow[] = [
         build: () => files({ change: without(tag) }),
       })),
       {
+        name: 'no pixel spacing',
+        verdict: 'REFUSE',
+        code: 'no-pixel-spacing',
+        build: () => files({ change: without(0x00280030) }),
+        image: UNSCALED,
+      },
+      {
         name: 'imager spacing is no pixel spacing',
         verdict: 'REFUSE',
-        code: 'no-geometry',
+        code: 'no-pixel-spacing',
+        image: UNSCALED,
         build: () =>
           files({
             change: {
@@ -268,14 +277,29 @@ export const SERIES: readonly CorpusRow[] = [
         [
           ['empty pixel spacing', spacing('')],
           ['pixel spacing zero', spacing([0, 0.5])],
-          ['an orientation of five numbers', orientation([1, 0, 0, 0, 1])],
         ] as const
       ).map(([name, element]) => ({
         name,
         verdict: 'REFUSE' as const,
-        code: 'no-geometry',
+        code: 'no-pixel-spacing',
         build: () => files({ change: change(element) }),
+        image: UNSCALED,
       })),
+      {
+        name: 'some slices without a pixel spacing are a stack of their own',
+        verdict: 'REFUSE',
+        code: 'no-pixel-spacing',
+        build: () => files(...at(0, 1), { z: 2, change: without(0x00280030) }),
+        image: { grid: { pixelSpacingMm: [0.5, 0.25] } },
+      },
+      ...([['an orientation of five numbers', orientation([1, 0, 0, 0, 1])]] as const).map(
+        ([name, element]) => ({
+          name,
+          verdict: 'REFUSE' as const,
+          code: 'no-geometry',
+          build: () => files({ change: change(element) }),
+        }),
+      ),
       ...(
         [
           ['not unit vectors', [2, 0, 0, 0, 1, 0]],

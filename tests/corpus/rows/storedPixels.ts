@@ -1,3 +1,4 @@
+import type { WriteElement } from '../../../core/dicom/write/index.js';
 import { ctSlice } from '../ctSlice.js';
 import { change, without } from '../element.js';
 import type { CorpusRow } from '../row.js';
@@ -11,6 +12,27 @@ const INTERCEPT = 0x00281052;
 const TYPE = 0x00281054;
 
 const one = (options: Parameters<typeof ctSlice>[0]) => () => ({ 'a.dcm': ctSlice(options) });
+
+/** A VOI LUT Sequence of one table (PS3.3 C.11.2.1.1). */
+function voiLut(
+  descriptor: readonly number[],
+  data: readonly number[],
+  explanation?: string,
+): WriteElement {
+  return {
+    tag: 0x00283010,
+    vr: 'SQ',
+    items: [
+      [
+        { tag: 0x00283002, vr: 'US', value: descriptor },
+        ...(explanation === undefined
+          ? []
+          : [{ tag: 0x00283003, vr: 'LO', value: explanation } as const]),
+        { tag: 0x00283006, vr: 'US', value: data },
+      ],
+    ],
+  };
+}
 
 /** Rows 51 to 63: stored bits and what they mean. */
 export const STORED_PIXELS: readonly CorpusRow[] = [
@@ -136,7 +158,7 @@ export const STORED_PIXELS: readonly CorpusRow[] = [
     section: 'D',
     title: 'Padding values without the tag (−2000, −3024 outside the circle)',
     outcome:
-      'Read, nothing taken away; a finding where the pixels are read, a flag on each region that holds them.',
+      'Read, nothing taken away by itself; a flag on each region that holds them. The reader can leave them out of both stacks; the note then says so and is measured so again.',
     cases: [
       {
         name: '−3024 HU',
@@ -320,7 +342,7 @@ export const STORED_PIXELS: readonly CorpusRow[] = [
     section: 'D',
     title: 'Window widths and functions of all kinds',
     outcome:
-      'Read as the function says; a window that it does not allow is left out, with a finding.',
+      'Read as the function says; lookup tables are among the windows of the file. A window that its function does not allow, or a table that is none, is left out, with a finding.',
     cases: [
       ...(['0', '-5', '0.5'] as const).map((width) => ({
         name: `LINEAR with width ${width}`,
@@ -380,22 +402,81 @@ export const STORED_PIXELS: readonly CorpusRow[] = [
       },
       {
         name: 'a VOI LUT and no window',
-        verdict: 'READ+',
-        code: 'voi-lut',
-        build: one({
-          change: change({
-            tag: 0x00283010,
-            vr: 'SQ',
-            items: [
-              [
-                { tag: 0x00283002, vr: 'US', value: [2, 0, 16] },
-                { tag: 0x00283006, vr: 'US', value: [0, 65535] },
+        verdict: 'READ',
+        build: one({ change: change(voiLut([4, 0xfc18, 8], [0, 51, 51, 255], 'NARROW')) }),
+        image: {
+          windows: [
+            {
+              centre: -998,
+              width: 4,
+              function: 'LINEAR',
+              explanation: 'NARROW',
+              // 0xFC18 is −1000: HU are signed (PS3.3 C.11.2.1.1).
+              table: [
+                [-1000, 0],
+                [-999, 51],
+                [-997, 255],
               ],
-            ],
-          }),
-        }),
-        image: { windows: [] },
+            },
+          ],
+        },
       },
+      {
+        name: 'a window and a VOI LUT of 16 bits: both are offered, the window first',
+        verdict: 'READ',
+        build: one({
+          change: change(ds(0x00281050, 40), ds(0x00281051, 400), voiLut([2, 0, 16], [0, 65535])),
+        }),
+        image: {
+          windows: [
+            { centre: 40, width: 400, function: 'LINEAR' },
+            {
+              centre: 1,
+              width: 2,
+              function: 'LINEAR',
+              explanation: 'Table 1',
+              table: [
+                [0, 0],
+                [1, 255],
+              ],
+            },
+          ],
+        },
+      },
+      {
+        name: 'a VOI LUT of 8 bits, packed two to a word',
+        verdict: 'READ',
+        build: one({ change: change(voiLut([4, 10, 8], [0x6600, 0xff99])) }),
+        image: {
+          windows: [
+            {
+              centre: 12,
+              width: 4,
+              function: 'LINEAR',
+              explanation: 'Table 1',
+              table: [
+                [10, 0],
+                [11, 102],
+                [12, 153],
+                [13, 255],
+              ],
+            },
+          ],
+        },
+      },
+      ...(
+        [
+          ['too short', voiLut([4, 0, 16], [0, 1, 2])],
+          ['with more than its bits hold', voiLut([2, 0, 8], [0, 300])],
+          ['without a descriptor', voiLut([], [0, 1])],
+        ] as const
+      ).map(([name, element]) => ({
+        name: `a VOI LUT ${name}`,
+        verdict: 'READ+' as const,
+        code: 'bad-voi-lut',
+        build: one({ change: change(element) }),
+        image: { windows: [] },
+      })),
     ] as unknown as CorpusRow['cases'],
   },
 ];

@@ -205,15 +205,22 @@ describe('export', () => {
     expect([code, err]).toEqual([0, '']);
     const file = join(folder, 'out');
     expect(readFileSync(file, 'utf8')).toBe(make(richNote()));
-    expect(JSON.parse(out)).toEqual({ file, form, bytes: statSync(file).size });
+    expect(JSON.parse(out)).toEqual({
+      file,
+      form,
+      bytes: statSync(file).size,
+      deidentified: false,
+    });
     if (process.platform !== 'win32') expect(statSync(file).mode & 0o777).toBe(0o600);
   });
 
   it.each([
-    ['pdf', 'out', '--as pdf is not in this version. There are csv, tsv and html.\n'],
-    ['sr', 'out', '--as sr is not in this version. There are csv, tsv and html.\n'],
     ['htm', 'out', 'There is no form “htm”. Did you mean html?\n'],
-    ['constructor', 'out', 'There is no form “constructor”. There are csv, tsv and html.\n'],
+    [
+      'constructor',
+      'out',
+      'There is no form “constructor”. There are csv, tsv, html, json and sr.\n',
+    ],
     ['csv', 'note.json', 'The export would replace the note itself.\n'],
     ['csv', 'no/such/out', 'out can’t be written: it is not there.\n'],
   ])('refuses --as %s --to %s', async (form, to, sentence) => {
@@ -253,10 +260,6 @@ describe('the command line', () => {
       'measure: --in is given twice. See: diptych measure --help\n',
     ],
     [['index', 'a', '--json=1'], 'index: --json takes no value. See: diptych index --help\n'],
-    [
-      ['recheck', 'a', '--in', 'b'],
-      'recheck is not in this version of Diptych; a later one has it.\n',
-    ],
     [['phantom', '--to', 'x', '--slices', '-1'], '--slices is “-1”; it must be a whole number.\n'],
     [
       ['phantom', '--to', 'x', '--slices', 'many'],

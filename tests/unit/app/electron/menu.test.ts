@@ -183,7 +183,7 @@ describe('menuTemplate', () => {
       'A && B',
       'gone (not there now)',
       '—',
-      'Clear this list',
+      'Clear recent',
     ]);
     expect(children(recent).map((item) => item.enabled)).toEqual([
       true,

@@ -305,7 +305,7 @@ describe('the running shell', () => {
       .at(-1)
       ?.click?.({} as MenuItem, undefined, {});
     await vi.waitFor(() =>
-      expect(recent().map((item) => item.label)).toEqual([undefined, 'Clear this list']),
+      expect(recent().map((item) => item.label)).toEqual([undefined, 'Clear recent']),
     );
     expect(calls).toContain('clear recent');
     expect(await host.services.recents.list()).toEqual([]);

@@ -44,6 +44,7 @@ export function sampleNote(
       sharp: null,
       link: 'position',
       overrides: [],
+      texture: { soft: null, sharp: null },
       evidence: [],
     },
     conditions: {
@@ -56,7 +57,16 @@ export function sampleNote(
     noise: 'reference',
     findings: [],
     regions: [],
+    visibility: null,
+    edges: [],
     contrasts: [],
+    conditionsByReader: [],
+    bandTable: 'six-classes',
+    densities: [],
+    anatomy: { dominance: null, absentSegments: [] },
+    frames: [],
+    seal: null,
+    amendments: [],
     comment: change.comment ?? '',
   };
 }

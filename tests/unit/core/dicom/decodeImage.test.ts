@@ -165,8 +165,6 @@ describe('readHeader', () => {
       { tag: 0x00080016, vr: 'UI', value: '1.2.840.10008.5.1.4.1.1.88.33' },
     ],
     ['a colour image', 'not-a-ct-slice', { tag: 0x00280002, vr: 'US', value: 3 }],
-    ['no pixel spacing', 'no-geometry', { tag: 0x00280030, vr: 'DS', value: '' }],
-    ['zero pixel spacing', 'no-geometry', { tag: 0x00280030, vr: 'DS', value: [0, 0] }],
     ['a position of text', 'no-geometry', { tag: 0x00200032, vr: 'DS', value: ['a', 'b', 'c'] }],
     [
       'slanted direction cosines',
@@ -176,6 +174,20 @@ describe('readHeader', () => {
   ] as const)('leaves out %s', (_, code, element) => {
     const bytes = ctSlice({ change: { [element.tag]: element } });
     expect(readHeader(bytes, bytes.length)).toMatchObject({ kind: 'leftOut', code });
+  });
+
+  it.each([
+    ['no', ''],
+    ['zero', [0, 0]],
+    ['one', [0.5]],
+    ['negative', [-0.5, 0.5]],
+  ])('takes a slice with %s pixel spacing as unscaled, and says so', (_, value) => {
+    const bytes = ctSlice({ change: { 2621488: { tag: 0x00280030, vr: 'DS', value } } });
+    const reading = readHeader(bytes, bytes.length);
+    if (reading.kind !== 'image') throw new Error(`not an image: ${reading.kind}`);
+    const [{ grid, findings }] = reading.images;
+    expect([grid.unscaled, grid.pixelSpacingMm]).toEqual([true, [1, 1]]);
+    expect(findings.map(({ code }) => code)).toEqual(['no-pixel-spacing']);
   });
 
   it.each([

@@ -20,6 +20,8 @@ function threeLumens(): Note {
 }
 
 const STENT = { segment: 7, kind: 'stent', nominalMm: 3 } as const;
+/** What nobody has said of a stent yet. */
+const UNSAID = { lengthMm: null, overlap: null, location: '' } as const;
 const findingOf = (note: Note, id: string) => note.regions.find((r) => r.id === id)?.findingId;
 
 describe('findings of a note', () => {
@@ -27,7 +29,17 @@ describe('findings of a note', () => {
     const one = got(setFinding(threeLumens(), 'L1', STENT, NOW));
     const two = got(setFinding(one, 'L2', { segment: 7, kind: 'stent' }, NOW));
     expect(two.findings).toEqual([
-      { id: 'D1', segment: 7, kind: 'stent', nominalMm: 3, assessability: null, reason: '' },
+      {
+        id: 'D1',
+        segment: 7,
+        kind: 'stent',
+        nominalMm: 3,
+        lengthMm: null,
+        overlap: null,
+        location: '',
+        assessability: null,
+        reason: '',
+      },
     ]);
     expect([findingOf(two, 'L1'), findingOf(two, 'L2'), findingOf(two, 'L3')]).toEqual([
       'D1',
@@ -41,7 +53,7 @@ describe('findings of a note', () => {
     const two = got(setFinding(one, 'L2', STENT, NOW));
     const judged = got(setFinding(two, 'L2', { assessability: 'limited', reason: 'motion' }, NOW));
     expect(judged.findings).toEqual([
-      { id: 'D1', ...STENT, assessability: 'limited', reason: 'motion' },
+      { id: 'D1', ...STENT, ...UNSAID, assessability: 'limited', reason: 'motion' },
     ]);
   });
 
@@ -70,7 +82,9 @@ describe('findings of a note', () => {
     const two = got(setFinding(one, 'L2', { ...STENT, nominalMm: 3.5, reason: 'b' }, NOW));
     expect(two.findings).toHaveLength(2);
     const alike = got(setFinding(two, 'L2', { nominalMm: 3 }, NOW));
-    expect(alike.findings).toEqual([{ id: 'D2', ...STENT, assessability: null, reason: 'b; a' }]);
+    expect(alike.findings).toEqual([
+      { id: 'D2', ...STENT, ...UNSAID, assessability: null, reason: 'b; a' },
+    ]);
     expect(findingOf(alike, 'L1')).toBe('D2');
   });
 

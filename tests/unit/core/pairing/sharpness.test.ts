@@ -125,6 +125,31 @@ describe('measureSharpness', () => {
     expect([1 / 12, 1 / 8]).toContain(resolutionPerMm);
   });
 
+  it('gives the texture of each stack up to the highest frequency of its own grid', async () => {
+    const { textures, areas, noise } = await measure(pair);
+    // 92 mm / 200 and 98 mm / 220 a pixel: 1.087 and 1.122 /mm, whole rings of 0.08 /mm.
+    expect(textures?.first.frequencyPerMm.at(-1)).toBeCloseTo(1.04, 9);
+    expect(textures?.second.frequencyPerMm.at(-1)).toBeCloseTo(1.12, 9);
+    expect(textures?.first.frequencyPerMm.slice(0, 3).map((f) => f.toFixed(2))).toEqual([
+      '0.02',
+      '0.08',
+      '0.16',
+    ]);
+    // The comparison takes the evenest areas of a slice, the texture all.
+    expect(textures?.first.areas).toBeGreaterThanOrEqual(areas.length);
+    expect(textures?.first.places).toHaveLength(textures?.first.areas ?? -1);
+    expect((textures?.first.noiseSdHu ?? 0) / (noise?.firstHu ?? 1)).toBeGreaterThan(0.9);
+    expect((textures?.first.noiseSdHu ?? 9) / (noise?.firstHu ?? 1)).toBeLessThan(1.3);
+  });
+
+  it('gives no texture where there are too few areas', async () => {
+    const flat = imageStack('flat', grid, [
+      { zMm: 8, hu: new Float64Array(200 * 200).fill(-900) },
+      { zMm: 16, hu: new Float64Array(200 * 200).fill(-900) },
+    ]);
+    expect((await measure([flat, flat])).textures).toBeUndefined();
+  });
+
   it('carries the mark of lossy compression', async () => {
     const slices = sharp.stack.slices.map((slice) => ({
       ...slice,

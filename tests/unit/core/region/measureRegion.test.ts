@@ -180,7 +180,8 @@ describe('measureRegion', () => {
     expect([value.n, value.meanHu, value.flags.map((flag) => flag.code)]).toEqual([
       4,
       -17,
-      ['no-standard-error', 'padding-inside'],
+      // Half a millimetre wide, it can't be made 0.25 mm smaller on each side.
+      ['no-standard-error', 'padding-inside', 'no-placement'],
     ]);
   });
 
@@ -199,7 +200,8 @@ describe('measureRegion', () => {
       sdHu: null,
       snr: null,
     });
-    const flat = measureRegion(five, stack, storedOf);
+    const more: Shape = { kind: 'ellipse', centreMm: [-9.5, -19.5, 0], radiiMm: [0.4, 0.7] };
+    const flat = measureRegion(more, stack, storedOf);
     expect([flat.sdHu, flat.snr, flat.placementHu]).toEqual([0, null, 0]);
     expect(flat.flags.map((flag) => flag.code)).toContain('zero-sd');
   });

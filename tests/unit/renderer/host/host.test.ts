@@ -121,7 +121,7 @@ describe('The client of the host', () => {
     const one = clientOf(() => json(note, { headers: { ETag: '"a"' } }));
     expect(await one.client.readNote('2.25.1', signal)).toEqual({
       ok: true,
-      value: { note, etag: '"a"' },
+      value: { note, json: note, etag: '"a"' },
     });
   });
 

@@ -12,6 +12,9 @@ const finding = (id: string, segment: number | null, kind: NoteFinding['kind']):
   segment,
   kind,
   nominalMm: null,
+  lengthMm: null,
+  overlap: null,
+  location: '',
   assessability: null,
   reason: '',
 });

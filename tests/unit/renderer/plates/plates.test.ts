@@ -1,10 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { directionLetters, orientationLetters, scaleBar } from '../../../../core/geometry/index.js';
 import { displayTable } from '../../../../core/intensity/index.js';
 import { greyTable, mapGreys } from '../../../../renderer/plates/greyTables.js';
-import {
-  directionLetters,
-  orientationLetters,
-} from '../../../../renderer/plates/orientationLetters.js';
 import {
   fitScale,
   patientToPlate,
@@ -13,7 +10,6 @@ import {
   plateTransform,
 } from '../../../../renderer/plates/plateTransform.js';
 import { positionText } from '../../../../renderer/plates/positionText.js';
-import { scaleBar } from '../../../../renderer/plates/scaleBar.js';
 import { sampleStack } from '../sample.js';
 
 const axialGrid = sampleStack().slices[0].image.grid;

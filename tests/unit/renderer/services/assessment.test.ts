@@ -21,12 +21,17 @@ async function assess(chosenBy: PairState['chosenBy'], sharper: 'soft' | 'sharp'
     sharpKey: pair.sharp?.key,
     measuredSharpKey: pair[sharper]?.key,
     evidence: [SHIFT],
+    textures: {},
   } as unknown as MeasuredPair;
   let swaps = 0;
+  let told = 0;
   const work = createAssessment({
     store,
     assessor: { assess: async () => success(measured) },
     now: () => '2026-01-10T11:00:00Z',
+    onMeasured: () => {
+      told += 1;
+    },
     onWrongOrder: () => {
       swaps += 1;
     },
@@ -34,6 +39,8 @@ async function assess(chosenBy: PairState['chosenBy'], sharper: 'soft' | 'sharp'
   work.begin(pair, 'grant', new AbortController().signal);
   expect(store.now().assessment.kind).toBe('running');
   await new Promise((done) => setTimeout(done));
+  // The regions are measured again with the noise that is known now, once.
+  expect(told).toBe(1);
   return { state: store.now(), swaps };
 }
 

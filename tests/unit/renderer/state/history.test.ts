@@ -70,7 +70,7 @@ describe('Undo and redo', () => {
     };
     const after = comment('one')(verified);
     expect(after.note).toBe(verified.note);
-    expect(after.message?.text).toBe('This note is verified and can’t be changed.');
+    expect(after.message?.text).toBe('This note is verified. To change it, amend it (Note menu).');
   });
 });
 

@@ -47,6 +47,7 @@ const measured = (change: Partial<MeasuredPair> = {}): MeasuredPair => ({
   measuredSharpKey: sharp.key,
   areas: [],
   spectra: {},
+  textures: {},
   ...change,
 });
 

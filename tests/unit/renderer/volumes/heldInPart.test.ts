@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Kernel } from '../../../../core/note/index.js';
+import { FLAGS, type NoiseOfStack } from '../../../../core/region/index.js';
 import type { DecodeRequest } from '../../../../renderer/volumes/decodeRequest.js';
 import { windowAround } from '../../../../renderer/volumes/loadOrder.js';
 import { loadPair, type PairLoading } from '../../../../renderer/volumes/loadPair.js';
@@ -203,6 +204,32 @@ describe('A region on a slice that there is no room for', () => {
     expect(measure(shape, { soft, sharp: undefined }).soft).toBe(before);
     await settled();
     expect(read).toHaveLength(10);
+  });
+
+  it('keeps its value when its slice is dropped, and is measured on it again when the noise has become known', async () => {
+    const { soft, at, loading, onSlice } = reading({ shown: 10, capacity: 5 });
+    let noise: NoiseOfStack = FLAGS.noStandardErrorYet;
+    const measure = createMeasureShape(
+      () => false,
+      () => noise,
+    );
+    const shape = shapeAt(10);
+    const now = () => measure(shape, { soft, sharp: undefined }).soft;
+    await settled();
+    const before = now();
+    at.shown = 2;
+    loading.look();
+    await settled();
+    noise = FLAGS.noStandardErrorFewAreas;
+    onSlice.now = () => {
+      now();
+    };
+    expect(now()).toBe(before);
+    await settled();
+    expect(now()).toMatchObject({
+      meanHu: 10,
+      flags: expect.arrayContaining([FLAGS.noStandardErrorFewAreas]),
+    });
   });
 
   it('is measured on its slice, which is read for it once and dropped again', async () => {

@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import type { KernelTexture } from '../../../../core/quality/index.js';
+import { FLAGS, type NoiseOfStack } from '../../../../core/region/index.js';
 import type { DecodeRequest } from '../../../../renderer/volumes/decodeRequest.js';
 import { nextTask } from '../../../../renderer/volumes/loadOrder.js';
 import { loadPair } from '../../../../renderer/volumes/loadPair.js';
@@ -161,6 +163,35 @@ describe('Measuring a shape', () => {
     const measure = createMeasureShape(() => false);
     const pair = { soft, sharp: undefined };
     expect(measure(shape, pair).soft).toBe(measure(shape, pair).soft);
+  });
+
+  it('measures again when the noise of the stack has become known', () => {
+    const soft = volumeOf('2.25.1');
+    receive(soft, 1, 100);
+    const white: KernelTexture = {
+      noiseSdHu: 10,
+      areas: 8,
+      frequencyPerMm: [0.02, 2],
+      powerHu2Mm2: [100, 100],
+      meanPerMm: 0.5,
+      peakPerMm: 0.5,
+      riseMm: null,
+      blurFwhmMm: null,
+    };
+    let noise: NoiseOfStack = FLAGS.noStandardErrorYet;
+    const measure = createMeasureShape(
+      () => false,
+      () => noise,
+    );
+    const pair = { soft, sharp: undefined };
+    expect(measure(shape, pair).soft).toMatchObject({
+      standardErrorHu: null,
+      flags: expect.arrayContaining([FLAGS.noStandardErrorYet]),
+    });
+    noise = white;
+    const value = measure(shape, pair).soft;
+    expect(value?.standardErrorHu).toBeGreaterThan(0);
+    expect(measure(shape, pair).soft).toBe(value);
   });
 
   it('says why there is none on a slice that can’t be read', () => {

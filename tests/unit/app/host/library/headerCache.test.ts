@@ -1,4 +1,15 @@
-import { mkdir, readdir, readFile, rename, rm, stat, utimes, writeFile } from 'node:fs/promises';
+import {
+  chmod,
+  mkdir,
+  readdir,
+  readFile,
+  rename,
+  rm,
+  stat,
+  truncate,
+  utimes,
+  writeFile,
+} from 'node:fs/promises';
 import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
 import { createHeaderCache } from '../../../../../app/host/library/headerCache.js';
@@ -187,3 +198,129 @@ describe('The cache of headers', () => {
     expect(await readdir(cacheFolder)).toEqual([]);
   });
 });
+
+describe('A cache of headers that meets trouble', () => {
+  test('is read anew where a file was cut or two changed names', async () => {
+    const { folder, cache } = await setUp();
+    await open(folder, cache);
+    const [one, two, three] = ['slice1.dcm', 'slice2.dcm', 'slice3.dcm'].map((name) =>
+      join(folder, name),
+    );
+    if (one === undefined || two === undefined || three === undefined) throw new Error('no files');
+    await rename(one, `${one}.aside`);
+    await rename(two, one);
+    await rename(`${one}.aside`, two);
+    await truncate(three, (await stat(three)).size - 20);
+    const { opened, index } = await open(folder, cache);
+    expect(opened.sort()).toEqual(['slice1.dcm', 'slice2.dcm', 'slice3.dcm']);
+    expect(index.stacks[0]?.slices.map(({ file, alongMm }) => [file, alongMm])).toEqual([
+      ['slice2.dcm', 0.5],
+      ['slice1.dcm', 1],
+    ]);
+    expect(index.leftOut.map(({ file }) => file)).toContain('slice3.dcm');
+  });
+
+  test.skipIf(process.getuid?.() === 0)(
+    'says so once where it can’t be written, and the folder opens all the same',
+    async () => {
+      const { folder, cacheFolder } = await setUp();
+      await mkdir(join(cacheFolder, '..'), { recursive: true });
+      await chmod(join(cacheFolder, '..'), 0o500);
+      await expectOpensUncached(folder, cacheFolder);
+      await chmod(join(cacheFolder, '..'), 0o700);
+    },
+  );
+
+  test('says so once where its folder is no folder, and the study opens all the same', async () => {
+    const { folder, cacheFolder } = await setUp();
+    await mkdir(join(cacheFolder, '..'), { recursive: true });
+    await writeFile(cacheFolder, 'in the way');
+    await expectOpensUncached(folder, cacheFolder);
+    expect(await readFile(cacheFolder, 'utf8')).toBe('in the way');
+  });
+
+  test('serves two processes that open one folder at once', async () => {
+    const { folder, cache, cacheFolder } = await setUp();
+    const other = createHeaderCache({ folder: cacheFolder, reader: 'reader 1', report: fail });
+    const both = await Promise.all([open(folder, cache), open(folder, other)]);
+    expect(both[1].index).toEqual(both[0].index);
+    await onlyFile(cacheFolder);
+    expect((await open(folder, cache)).opened).toEqual([]);
+    expect((await open(folder, other)).opened).toEqual([]);
+    await cache.clear();
+    expect((await open(folder, other)).opened).toHaveLength(4);
+  });
+
+  test('keeps nothing of a folder that was forgotten while it was being read', async () => {
+    for (const forget of [(cache: Cache) => cache.clear(), forgetFolder]) {
+      const { folder, cache, cacheFolder } = await setUp();
+      const reader = createHeaderReader(0);
+      const index = await indexFolder(folder, {
+        cache,
+        now: later,
+        reader: {
+          ...reader,
+          read: async (paths, signal) => {
+            await forget(cache, folder);
+            return reader.read(paths, signal);
+          },
+        },
+      });
+      expect(index.ok).toBe(true);
+      await cache.settled();
+      expect(await readdir(cacheFolder).catch(() => [])).toEqual([]);
+      await open(folder, cache);
+      await onlyFile(cacheFolder);
+    }
+  });
+
+  test('goes for a folder that falls off the end of the list of recent ones', async () => {
+    const { home, services } = await hostForTest();
+    const study = await studyFolder(home);
+    await services.openFolder(study);
+    const cacheFolder = join(home, 'cache', 'headers');
+    await open(study, createHeaderCache({ folder: cacheFolder, reader: 'r', report: fail }));
+    await onlyFile(cacheFolder);
+    for (let number = 0; number < 10; number++) {
+      const another = join(home, `other${number}`);
+      await mkdir(another);
+      await services.openFolder(another);
+    }
+    expect(await services.recents.list()).toHaveLength(10);
+    expect(await readdir(cacheFolder)).toEqual([]);
+  });
+
+  test('lets the look for changes be cancelled', async () => {
+    const { folder, cache } = await setUp();
+    await open(folder, cache);
+    const stop = new AbortController();
+    const index = await indexFolder(folder, {
+      threads: 0,
+      signal: stop.signal,
+      cache: {
+        write: cache.write,
+        read: async (root) => {
+          stop.abort();
+          return cache.read(root);
+        },
+      },
+    });
+    expect(index).toMatchObject({ ok: false, refusal: { code: 'cancelled' } });
+  });
+});
+
+function forgetFolder(cache: Cache, folder: string): Promise<void> {
+  return cache.forget(folder);
+}
+
+/** Opens a study twice with a cache that can't be written: both times all is read, and the fault is told. */
+async function expectOpensUncached(folder: string, cacheFolder: string): Promise<void> {
+  const told: unknown[] = [];
+  const report = (error: unknown) => told.push(error);
+  const cache = createHeaderCache({ folder: cacheFolder, reader: 'r', report });
+  expect((await open(folder, cache)).opened).toHaveLength(4);
+  expect(told).toHaveLength(1);
+  const again = await open(folder, cache);
+  expect(again.opened).toHaveLength(4);
+  expect(again.index.stacks).toHaveLength(1);
+}

@@ -1,10 +1,14 @@
-import { mkdirSync, readdirSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { expect, test } from 'vitest';
+import { afterAll, beforeAll, expect, test } from 'vitest';
 import type { Progress } from '../../../../../app/host/contract.js';
+import {
+  createHeaderCache,
+  type HeaderCache,
+} from '../../../../../app/host/library/headerCache.js';
 import { indexFolder } from '../../../../../app/host/library/indexFolder.js';
 import { ctSlice } from '../../../../corpus/ctSlice.js';
-import { temporaryFolder } from '../temporaryFolder.js';
 
 const FILES = 20_000;
 
@@ -32,9 +36,33 @@ function openFiles(): number {
   return process.platform === 'linux' ? readdirSync('/proc/self/fd').length : 0;
 }
 
-test('a folder of 20,000 files is read without a stall, with few files open and in little memory', async () => {
-  const folder = await temporaryFolder();
+let home: string;
+let folder: string;
+let cache: HeaderCache;
+
+beforeAll(() => {
+  home = mkdtempSync(join(tmpdir(), 'diptych-test-'));
+  folder = join(home, 'study');
+  mkdirSync(folder);
   writeMany(folder);
+  cache = createHeaderCache({
+    folder: join(home, 'headers'),
+    reader: 'r',
+    report: (error) => {
+      throw error;
+    },
+  });
+}, 60_000);
+
+afterAll(async () => {
+  await cache.settled();
+  rmSync(home, { recursive: true });
+}, 60_000);
+
+/** Ten seconds on, when the files of a test have long been as they are. */
+const now = (): number => Date.now() + 10_000;
+
+test('a folder of 20,000 files is read without a stall, with few files open and in little memory', async () => {
   const openBefore = openFiles();
   const heapBefore = process.memoryUsage().heapUsed;
   let openMost = 0;
@@ -50,6 +78,8 @@ test('a folder of 20,000 files is read without a stall, with few files open and 
   }, 5);
   const index = await indexFolder(folder, {
     threads: 0,
+    cache,
+    now,
     onProgress: (progress) => told.push(progress),
   });
   const seconds = (performance.now() - begun) / 1000;
@@ -69,4 +99,42 @@ test('a folder of 20,000 files is read without a stall, with few files open and 
   // Bounds for a busy machine of two processors; a quiet one takes three seconds.
   expect(longestWait).toBeLessThan(2000);
   expect(seconds).toBeLessThan(30);
+}, 120_000);
+
+test('that folder opens again from the cache without a stall and with its progress told', async () => {
+  // The test before has read it.
+  await cache.settled();
+  let longestWait = 0;
+  let last = performance.now();
+  const told: Progress[] = [];
+  const begun = performance.now();
+  const tick = setInterval(() => {
+    const present = performance.now();
+    longestWait = Math.max(longestWait, present - last);
+    last = present;
+  }, 5);
+  const second = await indexFolder(folder, {
+    cache,
+    now,
+    onProgress: (progress) => told.push(progress),
+    reader: {
+      lanes: 1,
+      read: async (paths) => {
+        throw new Error(`opened: ${paths.length} files`);
+      },
+      warm: async () => {},
+      close: async () => {},
+    },
+  });
+  const seconds = (performance.now() - begun) / 1000;
+  await new Promise((resolve) => setTimeout(resolve, 20));
+  clearInterval(tick);
+  if (!second.ok) throw new Error(second.refusal.text);
+  expect(second.value.stacks[0]?.slices).toHaveLength(FILES);
+  expect(second.value.stacks[0]?.slices[7]?.alongMm).toBe(10_003.75);
+  expect(told.filter(({ text }) => text.startsWith('Looking for changes')).length).toBe(40);
+  expect(told.at(-1)).toMatchObject({ done: FILES, total: FILES });
+  // Bounds for a busy machine of two processors; a quiet one takes a second.
+  expect(longestWait).toBeLessThan(3000);
+  expect(seconds).toBeLessThan(20);
 }, 120_000);

@@ -1,4 +1,5 @@
-import { type SliceGrid, scale, type Vec3 } from '../../core/geometry/index.js';
+import type { SliceGrid } from './grid.js';
+import { scale, type Vec3 } from './vec3.js';
 
 /** The letters at the four sides of a plate. */
 export interface OrientationLetters {

@@ -1,4 +1,4 @@
-import type { Role } from '../../core/region/index.js';
+import type { Role } from './roles.js';
 
 /** The look of a role's marks: a colour, and two signs that do without it. */
 export interface RoleSign {

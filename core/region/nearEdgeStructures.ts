@@ -1,0 +1,169 @@
+import type { EdgeLevels } from './nearEdgeLevels.js';
+import type { EdgeWindow } from './nearEdgeWindow.js';
+
+/** What a strong edge is the edge of. Bone counts as calcium. */
+export type EdgeKind = 'strut' | 'calcium' | 'air';
+
+/** A bright structure or air within a window: which pixels it holds, row × columns + column of the window. */
+export interface Structure {
+  readonly kind: EdgeKind;
+  readonly pixels: readonly number[];
+  /** Level of its contour at each of these pixels, HU: half way between it and its surroundings. */
+  readonly levelHu: readonly number[];
+}
+
+/**
+ * Air is what lies below this, about half way between lung and tissue, and reaches the second somewhere. Lung is
+ * −900 to −700 HU, air −1000. Common practice, no source.
+ */
+const AIR_HU = -400;
+const AIR_SEED_HU = -600;
+/** The brightest pixel within this many blurs is the height of a structure at a place. */
+const HEIGHT_BLURS = 0.75;
+
+/**
+ * Bright structures and air in a smoothed window. A bright structure is a connected set of pixels above the enhanced
+ * lumen, with a peak that noise does not reach, or a length that it does not. Its border at a place is the contour
+ * half way between the brightest pixel close by and the lumen, or the region where that is the darker.
+ *
+ * @param regionHu what the region measures: the surroundings of what lies beside it
+ */
+export function structuresIn(
+  window: EdgeWindow,
+  spacingMm: readonly [number, number],
+  levels: EdgeLevels,
+  regionHu: number,
+): readonly Structure[] {
+  const { hu } = window;
+  const isBright = (at: number): boolean => (hu[at] as number) > levels.brightHu;
+  const bright = components(window, isBright).flatMap((pixels): Structure[] => {
+    const isStrong =
+      pixels.some((at) => (hu[at] as number) >= levels.peakHu) ||
+      extentMm(pixels, window, spacingMm) >= levels.longMm;
+    return isStrong ? [brightStructure(pixels, window, spacingMm, levels, regionHu)] : [];
+  });
+  // A region that is air itself lies at no edge of air.
+  if (regionHu < AIR_HU) return bright;
+  const air = components(window, (at) => (hu[at] as number) < AIR_HU).flatMap(
+    (pixels): Structure[] =>
+      pixels.some((at) => (hu[at] as number) <= AIR_SEED_HU)
+        ? [{ kind: 'air', pixels, levelHu: pixels.map(() => AIR_HU) }]
+        : [],
+  );
+  return [...bright, ...air];
+}
+
+function brightStructure(
+  pixels: readonly number[],
+  { hu, columns, rows }: EdgeWindow,
+  spacingMm: readonly [number, number],
+  levels: EdgeLevels,
+  regionHu: number,
+): Structure {
+  const surroundHu = Math.min(regionHu, levels.lumenHu);
+  const across = Math.floor((HEIGHT_BLURS * levels.blurMm) / spacingMm[0]);
+  const down = Math.floor((HEIGHT_BLURS * levels.blurMm) / spacingMm[1]);
+  const heightNear = (at: number): number => {
+    const [row, column] = [Math.floor(at / columns), at % columns];
+    let height = -Infinity;
+    for (let r = Math.max(0, row - down); r <= Math.min(rows - 1, row + down); r++)
+      for (let c = Math.max(0, column - across); c <= Math.min(columns - 1, column + across); c++)
+        height = Math.max(height, hu[r * columns + c] as number);
+    return height;
+  };
+  const kept: number[] = [];
+  const levelHu: number[] = [];
+  for (const at of pixels) {
+    const level = Math.max(levels.brightHu, (heightNear(at) + surroundHu) / 2);
+    if ((hu[at] as number) < level) continue;
+    kept.push(at);
+    levelHu.push(level);
+  }
+  return { kind: brightKind(kept, hu, columns, spacingMm, levels), pixels: kept, levelHu };
+}
+
+/** A disc fills its ellipse of inertia; a ring, an arc or a line of this fill or less is a strut. */
+const MOST_FILL = 0.75;
+/** A strut may be straight: this many times as long as wide, and no wider than blur makes a thin thing. */
+const LEAST_ASPECT = 2.5;
+const THIN_BLURS = 1.5;
+
+/** Struts are thin and bent or long; calcium is compact. Decided by the shape of the contour, and by a dip in its middle. */
+function brightKind(
+  pixels: readonly number[],
+  hu: Float64Array,
+  columns: number,
+  [acrossMm, downMm]: readonly [number, number],
+  levels: EdgeLevels,
+): EdgeKind {
+  let [sumX, sumY, sumXX, sumYY, sumXY, peak] = [0, 0, 0, 0, 0, -Infinity];
+  for (const at of pixels) {
+    const [x, y] = [(at % columns) * acrossMm, Math.floor(at / columns) * downMm];
+    sumX += x;
+    sumY += y;
+    sumXX += x * x;
+    sumYY += y * y;
+    sumXY += x * y;
+    peak = Math.max(peak, hu[at] as number);
+  }
+  const n = pixels.length;
+  const [x, y] = [sumX / n, sumY / n];
+  // Each pixel adds the variance of its own square.
+  const xx = sumXX / n - x * x + (acrossMm * acrossMm) / 12;
+  const yy = sumYY / n - y * y + (downMm * downMm) / 12;
+  const xy = sumXY / n - x * y;
+  const spread = Math.sqrt(((xx - yy) / 2) ** 2 + xy * xy);
+  const [long, short] = [(xx + yy) / 2 + spread, Math.max(1e-9, (xx + yy) / 2 - spread)];
+  // The area of an even ellipse is 4π√(λ₁λ₂), its half axes are 2√λ.
+  const fill = (n * acrossMm * downMm) / (4 * Math.PI * Math.sqrt(long * short));
+  if (fill <= MOST_FILL) return 'strut';
+  const middle = hu[Math.round(y / downMm) * columns + Math.round(x / acrossMm)] as number;
+  const isHollow = middle < peak - 0.5 * (levels.peakHu - levels.lumenHu) && n * acrossMm * downMm > 4 * levels.blurMm ** 2;
+  const isThin = 4 * Math.sqrt(short) <= THIN_BLURS * levels.blurMm;
+  const isLong = Math.sqrt(long / short) >= LEAST_ASPECT;
+  return isHollow || (isThin && isLong) ? 'strut' : 'calcium';
+}
+
+function extentMm(
+  pixels: readonly number[],
+  { columns }: EdgeWindow,
+  [acrossMm, downMm]: readonly [number, number],
+): number {
+  let [left, right, top, bottom] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (const at of pixels) {
+    const [row, column] = [Math.floor(at / columns), at % columns];
+    left = Math.min(left, column);
+    right = Math.max(right, column);
+    top = Math.min(top, row);
+    bottom = Math.max(bottom, row);
+  }
+  return Math.hypot((right - left) * acrossMm, (bottom - top) * downMm);
+}
+
+/** Sets of pixels that hang together by sides or corners. */
+function components(
+  { columns, rows, hu }: EdgeWindow,
+  isIn: (at: number) => boolean,
+): readonly (readonly number[])[] {
+  let seen: Uint8Array | undefined;
+  const found: number[][] = [];
+  for (let start = 0; start < hu.length; start++) {
+    if (!isIn(start) || seen?.[start] === 1) continue;
+    seen ??= new Uint8Array(hu.length);
+    seen[start] = 1;
+    const pixels = [start];
+    for (let next = 0; next < pixels.length; next++) {
+      const at = pixels[next] as number;
+      const [row, column] = [Math.floor(at / columns), at % columns];
+      for (let r = Math.max(0, row - 1); r <= Math.min(rows - 1, row + 1); r++)
+        for (let c = Math.max(0, column - 1); c <= Math.min(columns - 1, column + 1); c++) {
+          const other = r * columns + c;
+          if (seen[other] === 1 || !isIn(other)) continue;
+          seen[other] = 1;
+          pixels.push(other);
+        }
+    }
+    found.push(pixels);
+  }
+  return found;
+}

@@ -1,0 +1,262 @@
+import type { Digest } from '../../note/life/index.js';
+import { ROLE_NAME } from '../../note/numbering.js';
+import type {
+  Evidence,
+  Note,
+  NoteContrast,
+  NoteFinding,
+  NoteRegion,
+  NoteStack,
+} from '../../note/schema.js';
+import { FLAGS, type Flag } from '../../region/index.js';
+import { cleanEdge } from './cleanEdge.js';
+import { identityFinder, REMOVED } from './cleanText.js';
+import { identifyingValues } from './identifyingValues.js';
+import { CLEAN_CHECKS, METHOD } from './method.js';
+import { makePseudonyms, noteIdOf } from './pseudonyms.js';
+import { type SafeNames, safeNames } from './safeNames.js';
+
+/** How an export without identity is made. */
+export interface Deidentification {
+  /** Secret of this export, or of a research project: the same salt gives the same new UIDs. At least 16 characters of chance. */
+  readonly salt: string;
+  readonly digest: Digest;
+}
+
+/** A note without identity, and the way back for whoever makes the export. */
+export interface DeidentifiedNote {
+  readonly note: Note;
+  /** The UID that a new one stands for; undefined for one that is not new. For looking images up: it must not be exported. */
+  readonly originalUid: (uid: string) => string | undefined;
+}
+
+/** What cleans the parts of a note. */
+interface Cleaner {
+  readonly uid: (uid: string) => string;
+  /** A sentence of the program with new UIDs; another one in its place where it told who or when. */
+  readonly sentence: (text: string) => string;
+  /** A label from a file, null where it told who or when. */
+  readonly label: (text: string | null) => string | null;
+  readonly ids: SafeNames;
+}
+
+/**
+ * A note without identity, for research: PS3.15 Annex E, basic profile, with its structured content kept and cleaned.
+ * Each field is named here, so that one that a later version adds is left out until somebody has decided on it; the
+ * compiler asks. Copied whole are texture, anatomy, visibility and shapes: numbers and fixed words only. The result is a
+ * note like any other, and says in `deidentified` what was done.
+ */
+export async function deidentifyNote(
+  note: Note,
+  { salt, digest }: Deidentification,
+): Promise<DeidentifiedNote> {
+  const { study, pair, conditions } = note;
+  const pseudonyms = await makePseudonyms(uidsOf(note), sentencesOf(note), salt, digest);
+  const tellsIdentity = identityFinder(identifyingValues(note));
+  const cleaner: Cleaner = {
+    uid: pseudonyms.uidOf,
+    sentence: (text) => (tellsIdentity(text) ? REMOVED : pseudonyms.withUids(text)),
+    label: (text) => (text === null || tellsIdentity(text) ? null : pseudonyms.withUids(text)),
+    ids: safeNames(note),
+  };
+  const { uid, ids } = cleaner;
+  const clean: Note = {
+    format: note.format,
+    version: note.version,
+    id: await noteIdOf(note.id, salt, digest),
+    software: note.software,
+    createdAt: '',
+    changedAt: '',
+    reader: '',
+    completion: note.completion,
+    verification: 'UNVERIFIED',
+    synthetic: note.synthetic,
+    study: {
+      studyInstanceUid: uid(study.studyInstanceUid),
+      patientId: null,
+      patientName: null,
+      patientBirthDate: null,
+      patientSex: null,
+      studyDate: null,
+      studyDescription: null,
+      accessionNumber: null,
+    },
+    pair: {
+      soft: cleanStack(pair.soft, cleaner),
+      sharp: pair.sharp === null ? null : cleanStack(pair.sharp, cleaner),
+      link: pair.link,
+      evidence: pair.evidence.map((one) => cleanEvidence(one, cleaner)),
+      overrides: pair.overrides.map(({ check }) => ({ check, reason: REMOVED })),
+      texture: pair.texture,
+    },
+    conditions: {
+      kvp: conditions.kvp,
+      phasePercent: conditions.phasePercent,
+      contrastAgent: null,
+      thicknessMm: conditions.thicknessMm,
+      frameOfReferenceUid:
+        conditions.frameOfReferenceUid === null ? null : uid(conditions.frameOfReferenceUid),
+    },
+    conditionsByReader: note.conditionsByReader.filter((name) => name !== 'contrastAgent'),
+    bandTable: note.bandTable,
+    densities: note.densities.map((density) => ({
+      ...density,
+      regionId: ids.idOf(density.regionId),
+      flags: density.flags.map(({ code, text }) => ({ code, text: cleaner.sentence(text) })),
+    })),
+    anatomy: note.anatomy,
+    noise: note.noise,
+    findings: note.findings.map((finding) => cleanFinding(finding, cleaner)),
+    regions: note.regions.map((region) => cleanRegion(region, cleaner)),
+    contrasts: note.contrasts.map((contrast) => cleanContrast(contrast, cleaner)),
+    edges: note.edges.map((edge) => cleanEdge(edge, { ...cleaner, id: ids.idOf(edge.id) })),
+    visibility:
+      note.visibility === null
+        ? null
+        : {
+            ...note.visibility,
+            contrastId:
+              note.visibility.contrastId === null ? null : ids.idOf(note.visibility.contrastId),
+          },
+    comment: '',
+    frames: [],
+    seal: null,
+    amendments: [],
+    deidentified: METHOD,
+  };
+  return { note: clean, originalUid: pseudonyms.originalUid };
+}
+
+function cleanStack(stack: NoteStack, { uid, label, sentence }: Cleaner): NoteStack {
+  const seriesInstanceUid = uid(stack.seriesInstanceUid);
+  return {
+    seriesInstanceUid,
+    ...(stack.phasePercent === undefined ? {} : { phasePercent: stack.phasePercent }),
+    ...(stack.maskedBelowHu === undefined ? {} : { maskedBelowHu: stack.maskedBelowHu }),
+    key: `${seriesInstanceUid}${/#\d+$/.exec(stack.key)?.[0] ?? ''}`,
+    seriesNumber: stack.seriesNumber,
+    seriesDescription: null,
+    kernelLabel: label(stack.kernelLabel),
+    pixelSpacingMm: stack.pixelSpacingMm,
+    sliceSpacingMm: stack.sliceSpacingMm,
+    thicknessMm: stack.thicknessMm,
+    slices: stack.slices,
+    unit: label(stack.unit) ?? 'not told',
+    lossy: stack.lossy,
+    findings: stack.findings.map(({ code, text }) => ({ code, text: sentence(text) })),
+  };
+}
+
+function cleanEvidence({ check, state, text }: Evidence, { sentence }: Cleaner): Evidence {
+  if (CLEAN_CHECKS.has(check)) return { check, state, text: sentence(text) };
+  return { check: sentence(check), state, text: REMOVED };
+}
+
+function cleanFinding(finding: NoteFinding, { ids }: Cleaner): NoteFinding {
+  return {
+    id: ids.idOf(finding.id),
+    segment: finding.segment,
+    kind: finding.kind,
+    nominalMm: finding.nominalMm,
+    lengthMm: finding.lengthMm,
+    overlap: finding.overlap,
+    location: '',
+    assessability: finding.assessability,
+    reason: '',
+  };
+}
+
+function cleanRegion(region: NoteRegion, cleaner: Cleaner): NoteRegion {
+  const id = cleaner.ids.idOf(region.id);
+  return {
+    id,
+    role: region.role,
+    shape: region.shape,
+    label: `${ROLE_NAME[region.role]} ${/\d+$/.exec(id)?.[0] ?? ''}`.trim(),
+    place: '',
+    findingId: region.findingId === null ? null : cleaner.ids.idOf(region.findingId),
+    quote: region.quote,
+    quoteReason: '',
+    soft: cleanValue(region.soft, cleaner),
+    sharp: cleanValue(region.sharp, cleaner),
+  };
+}
+
+function cleanValue(value: NoteRegion['soft'], cleaner: Cleaner): NoteRegion['soft'] {
+  if (value === null) return null;
+  return {
+    n: value.n,
+    meanHu: value.meanHu,
+    sdHu: value.sdHu,
+    minHu: value.minHu,
+    maxHu: value.maxHu,
+    medianHu: value.medianHu,
+    areaMm2: value.areaMm2,
+    sampledAreaMm2: value.sampledAreaMm2,
+    snr: value.snr,
+    sliceIndex: value.sliceIndex,
+    sliceOffsetMm: value.sliceOffsetMm,
+    sopInstanceUid: value.sopInstanceUid === null ? null : cleaner.uid(value.sopInstanceUid),
+    frameNumber: value.frameNumber,
+    standardErrorHu: value.standardErrorHu,
+    placementHu: value.placementHu,
+    flags: value.flags.map((flag) => cleanFlag(flag, cleaner)),
+  };
+}
+
+function cleanContrast(contrast: NoteContrast, cleaner: Cleaner): NoteContrast {
+  const { idOf } = cleaner.ids;
+  return {
+    id: idOf(contrast.id),
+    lumen: idOf(contrast.lumen),
+    wall: idOf(contrast.wall),
+    noise: contrast.noise,
+    ...(contrast.reference === undefined ? {} : { reference: idOf(contrast.reference) }),
+    formula: cleaner.sentence(contrast.formula),
+    soft: contrast.soft,
+    sharp: contrast.sharp,
+    flags: contrast.flags.map((flag) => cleanFlag(flag, cleaner)),
+  };
+}
+
+/** A flag that refuses a pair says of which patient each stack is: what it means is kept, the names are not. */
+function cleanFlag({ code, text }: Flag, { sentence }: Cleaner): Flag {
+  return code === FLAGS.notOneAcquisition('').code
+    ? { code, text: 'Not measured here: not one acquisition.' }
+    : { code, text: sentence(text) };
+}
+
+function uidsOf({ study, pair, conditions, regions, edges }: Note): readonly string[] {
+  return [
+    study.studyInstanceUid,
+    pair.soft.seriesInstanceUid,
+    pair.sharp?.seriesInstanceUid,
+    conditions.frameOfReferenceUid,
+    ...[...regions, ...edges].flatMap(({ soft, sharp }) => [
+      soft?.sopInstanceUid,
+      sharp?.sopInstanceUid,
+    ]),
+  ].filter((uid) => typeof uid === 'string');
+}
+
+/** Every text that may be kept. */
+function sentencesOf({ pair, regions, contrasts, edges }: Note): readonly string[] {
+  const stacks = [pair.soft, ...(pair.sharp === null ? [] : [pair.sharp])];
+  const flags = [
+    ...[...regions, ...edges].flatMap(({ soft, sharp }) => [
+      ...(soft?.flags ?? []),
+      ...(sharp?.flags ?? []),
+    ]),
+    ...contrasts.flatMap((contrast) => contrast.flags),
+  ];
+  return [
+    ...pair.evidence.flatMap(({ check, text }) => [check, text]),
+    ...stacks.flatMap(({ kernelLabel, unit, findings }) => [
+      kernelLabel ?? '',
+      unit,
+      ...findings.map(({ text }) => text),
+    ]),
+    ...flags.map(({ text }) => text),
+    ...contrasts.map(({ formula }) => formula),
+  ];
+}

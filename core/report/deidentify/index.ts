@@ -1,0 +1,5 @@
+export {
+  type Deidentification,
+  type DeidentifiedNote,
+  deidentifyNote,
+} from './deidentifyNote.js';

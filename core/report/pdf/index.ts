@@ -1,0 +1,2 @@
+export * from './pdfDocument.js';
+export * from './pdfParts.js';

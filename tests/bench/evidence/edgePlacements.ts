@@ -1,0 +1,160 @@
+import type { Kernel as Side } from '../../../core/note/index.js';
+import { measureSharpness } from '../../../core/pairing/sharpness.js';
+import {
+  addQuantumNoise,
+  type Kernel,
+  projectSlice,
+  reconstructPairHu,
+  seededUniform,
+  type UniformSource,
+} from '../../../core/phantom/index.js';
+import type { KernelTexture } from '../../../core/quality/index.js';
+import type { Ellipse } from '../../../core/region/index.js';
+import { EDGE_GRID, EDGE_SCAN, type EdgeScene, edgeScene, type TrueStructure } from './edgeScene.js';
+import { type ImageStack, imageStack, readFrom } from './imageStack.js';
+
+/** A phantom with strong edges, as the program sees it. */
+export interface EdgeRecipe {
+  readonly seed: number;
+  readonly photonsPerRay: number;
+  readonly kernels: Readonly<Record<Side, Kernel>>;
+}
+
+/** Both reconstructions of a noisy scene, with their measured textures. */
+export interface EdgePhantom {
+  readonly scene: EdgeScene;
+  readonly stacks: Readonly<Record<Side, ImageStack>>;
+  readonly textures: Readonly<Record<Side, KernelTexture>>;
+}
+
+/** A region at a known distance from the nearest strut or calcium. */
+export interface Placement {
+  readonly shape: Ellipse;
+  readonly distanceMm: number;
+  readonly nearest: TrueStructure;
+}
+
+/** Five slices of one scene with noise of their own: the textures are measured on all, regions lie on the middle one. */
+export async function edgePhantom(recipe: EdgeRecipe): Promise<EdgePhantom> {
+  const { seed, kernels, photonsPerRay } = recipe;
+  const scene = edgeScene(seededUniform(seed, 1));
+  const clean = projectSlice(scene.slice, EDGE_SCAN);
+  const slices = Array.from({ length: 5 }, (_, index) => {
+    const noisy = addQuantumNoise(clean, photonsPerRay, seededUniform(seed, 2, index));
+    const pair = [kernels.soft, kernels.sharp] as const;
+    const [soft, sharp] = reconstructPairHu(noisy, EDGE_SCAN, pair, EDGE_GRID);
+    return { zMm: index * 0.6, soft, sharp };
+  });
+  const stack = (side: Side): ImageStack =>
+    imageStack(
+      side,
+      EDGE_GRID,
+      slices.map((slice) => ({ zMm: slice.zMm, hu: slice[side] })),
+    );
+  const [soft, sharp] = [stack('soft'), stack('sharp')];
+  const { textures, text } = await measureSharpness(soft.stack, sharp.stack, readFrom(soft, sharp));
+  if (textures === undefined) throw new RangeError(`nothing measured: ${text}`);
+  return {
+    scene,
+    stacks: { soft, sharp },
+    textures: { soft: textures.first, sharp: textures.second },
+  };
+}
+
+/** Height of the slice that regions are placed on. */
+export const PLACED_MM = 1.2;
+
+/**
+ * An ellipse of 0.5 to 2.5 mm half axes, somewhere within 6 mm of a strut or calcium of the scene, whose border lies
+ * `least` to `most` mm from the nearest of all of them (0 where it crosses one), and 6 mm from any air.
+ */
+export function placeBeside(
+  { structures }: EdgeScene,
+  uniform: UniformSource,
+  least: number,
+  most: number,
+): Placement {
+  const dense = structures.filter(({ kind }) => kind !== 'air');
+  const air = structures.filter(({ kind }) => kind === 'air');
+  for (let attempt = 0; attempt < 20000; attempt += 1) {
+    const beside = dense[Math.floor(uniform() * dense.length)] as TrueStructure;
+    const away = (): number => 9 * (2 * uniform() - 1);
+    const [x, y] = [beside.centreMm[0] + away(), beside.centreMm[1] + away()];
+    const angle = Math.PI * uniform();
+    const a = 0.5 + 2 * uniform() ** 2;
+    const shape: Ellipse = {
+      kind: 'ellipse',
+      centreMm: [x, y, PLACED_MM],
+      u: [Math.cos(angle), Math.sin(angle), 0],
+      v: [-Math.sin(angle), Math.cos(angle), 0],
+      radiiMm: [a, a * (0.6 + 0.4 * uniform())],
+    };
+    const apart = dense.map((nearest) => ({ nearest, distanceMm: trueDistanceMm(shape, nearest) }));
+    const first = apart.reduce((best, one) => (one.distanceMm < best.distanceMm ? one : best));
+    if (first.distanceMm < least || first.distanceMm > most) continue;
+    if (air.some((one) => trueDistanceMm(shape, one) < 6)) continue;
+    return { shape, ...first };
+  }
+  throw new RangeError(`no place ${least} to ${most} mm from a structure`);
+}
+
+/**
+ * Distance of a region's border from the nearest place of a structure, mm, 0 where they meet: by 240 points on either
+ * border, good to 0.02 mm.
+ */
+export function trueDistanceMm(shape: Ellipse, structure: TrueStructure): number {
+  const turn = (structure.angleDeg * Math.PI) / 180;
+  const axes = [
+    [Math.cos(turn), Math.sin(turn)],
+    [-Math.sin(turn), Math.cos(turn)],
+  ] as const;
+  const own = pointsOf(
+    [shape.centreMm[0], shape.centreMm[1]],
+    [shape.u ?? [1, 0], shape.v ?? [0, 1]],
+    shape.radiiMm,
+  );
+  const outer = pointsOf(structure.centreMm, axes, structure.radiiMm);
+  const holds = ([x, y]: Point, radii: readonly [number, number]): boolean => {
+    const [dx, dy] = [x - structure.centreMm[0], y - structure.centreMm[1]];
+    const along = (dx * axes[0][0] + dy * axes[0][1]) / radii[0];
+    const across = (dx * axes[1][0] + dy * axes[1][1]) / radii[1];
+    return along * along + across * across <= 1;
+  };
+  const { hollowMm } = structure;
+  const isInRing = (point: Point): boolean =>
+    holds(point, structure.radiiMm) &&
+    !(hollowMm !== undefined && holds(point, [hollowMm, hollowMm]));
+  if (own.some(isInRing) || outer.some((point) => isInShape(shape, point))) return 0;
+  const borders =
+    hollowMm === undefined
+      ? outer
+      : [...outer, ...pointsOf(structure.centreMm, axes, [hollowMm, hollowMm])];
+  let nearest = Infinity;
+  for (const [x, y] of own)
+    for (const [u, v] of borders) nearest = Math.min(nearest, (x - u) ** 2 + (y - v) ** 2);
+  return Math.sqrt(nearest);
+}
+
+type Point = readonly [number, number];
+
+function isInShape({ centreMm, u = [1, 0, 0], v = [0, 1, 0], radiiMm }: Ellipse, [x, y]: Point) {
+  const [dx, dy] = [x - centreMm[0], y - centreMm[1]];
+  const along = (dx * u[0] + dy * u[1]) / radiiMm[0];
+  const across = (dx * v[0] + dy * v[1]) / radiiMm[1];
+  return along * along + across * across <= 1;
+}
+
+function pointsOf(
+  [x, y]: Point,
+  [u, v]: readonly [readonly number[], readonly number[]],
+  [a, b]: readonly [number, number],
+): readonly Point[] {
+  return Array.from({ length: 240 }, (_, index): Point => {
+    const angle = (2 * Math.PI * index) / 240;
+    const [alongU, alongV] = [a * Math.cos(angle), b * Math.sin(angle)];
+    return [
+      x + alongU * (u[0] ?? 0) + alongV * (v[0] ?? 0),
+      y + alongU * (u[1] ?? 0) + alongV * (v[1] ?? 0),
+    ];
+  });
+}
