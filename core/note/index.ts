@@ -17,6 +17,7 @@ export * from './parseNote.js';
 export * from './parsePlan.js';
 export * from './plan.js';
 export * from './planOf.js';
+export * from './quoteProposal.js';
 export * from './readJson.js';
 export * from './regions.js';
 export * from './schema.js';

@@ -36,6 +36,7 @@ export function addRegion(
     findingId: findingId ?? null,
     quote: null,
     quoteReason: '',
+    quoteBy: 'proposal',
     soft,
     sharp,
   };
@@ -47,7 +48,7 @@ export function addRegion(
 
 /** What of a region can be changed. A new shape comes with what it measures: old values of a new shape would be wrong. */
 export type RegionChange = Partial<
-  Pick<NoteRegion, 'role' | 'label' | 'place' | 'quote' | 'quoteReason'>
+  Pick<NoteRegion, 'role' | 'label' | 'place' | 'quote' | 'quoteReason' | 'quoteBy'>
 > &
   ({ readonly shape?: never } | { readonly shape: Shape; readonly values: RegionValues });
 
@@ -82,6 +83,8 @@ export function changeRegion(
     place: change.place ?? present.place,
     quote: change.quote === undefined ? present.quote : change.quote,
     quoteReason: change.quoteReason ?? present.quoteReason,
+    // Whoever states a kernel without saying so is the reader.
+    quoteBy: change.quoteBy ?? (change.quote === undefined ? present.quoteBy : 'reader'),
     ...(change.shape === undefined ? {} : { shape: change.shape, ...change.values }),
   };
   const removedContrasts = renamed ? note.contrasts.filter((c) => usesRegion(c, id)) : [];

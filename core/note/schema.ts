@@ -146,9 +146,10 @@ export const NoteRegionSchema = PlanRegionSchema.extend({
   /** Where in the finding the region lies, in the reader's words: 'in stent'. */
   place: text,
   findingId: maybeText,
-  /** Which kernel's value is quoted, and why. */
-  quote: z.enum(['soft', 'sharp', 'both']).nullable(),
+  /** Which kernel's value is quoted, why, and who says so. In earlier versions it was always the reader. */
+  quote: z.enum(['soft', 'sharp', 'both', 'neither']).nullable(),
   quoteReason: text,
+  quoteBy: z.enum(['proposal', 'reader']).default('reader'),
   soft: RegionValueSchema.nullable(),
   sharp: RegionValueSchema.nullable(),
 });

@@ -1,8 +1,9 @@
 import { type Result, refuse, success } from '../result.js';
 import { fitErrors } from './edgeLineErrors.js';
-import { binnedProfile, crossingsMm, type ProfilePoint } from './edgeLineProfile.js';
+import { binnedProfile, crossingsMm, type ProfilePoint, scatterHu } from './edgeLineProfile.js';
 import { type EdgeSamples, type FittedEdge, fitEdge } from './fitEdge.js';
 import { RISE_PER_SIGMA } from './kernelTexture.js';
+import { normalCdf } from './normalCdf.js';
 
 /**
  * One edge that a line crosses. `acrossMm` of its samples runs along the line from the middle of it, `alongMm` across
@@ -75,6 +76,9 @@ export function edgeOfLine(
   if (fitted === undefined) return no('noStep');
   const { edge, angle, turned } = fitted;
   if (edge.sigmaMm < LEAST_SIGMA_PIXELS * pixelMm) return no('narrow');
+  const profile = binnedProfile(turned, edge);
+  const doubt = doubtOf(profile, edge);
+  if (doubt === 'several') return no(doubt);
   const errors = fitErrors(turned, edge);
   const step = Math.abs(edge.stepHu);
   if (errors === undefined) return no('noisy');
@@ -85,8 +89,6 @@ export function edgeOfLine(
   const room = Math.min(atMm, lengthMm - atMm) * Math.cos(angle) - lost;
   if (room < ROOM_SIGMAS * edge.sigmaMm) return no('short');
   if (errors.sigmaMm > MOST_RELATIVE_ERROR * edge.sigmaMm) return no('noisy');
-  const profile = binnedProfile(turned, edge);
-  const doubt = doubtOf(profile, edge);
   if (doubt !== undefined) return no(doubt);
   const crossings = crossingsMm(profile, edge);
   return success({
@@ -203,7 +205,7 @@ function crossingOfLine({ offsetMm, slope, curvaturePerMm }: FittedEdge, angle: 
 }
 
 /** A side may leave its level by this part of the step, or by this many standard errors. */
-const UNEVEN_SHARE = 0.15;
+const UNEVEN_SHARE = 0.12;
 const UNEVEN_ERRORS = 4;
 /** What leaves it by more is an edge of its own. */
 const OTHER_EDGE_SHARE = 0.4;
@@ -212,24 +214,25 @@ const PIECE_MM = 0.5;
 /** Neighbouring pixels share their noise: so many count as one. */
 const PIXELS_AS_ONE = 6;
 
-/** Whether the sides of the edge are level, away from the rise itself. */
+/** Whether the profile leaves the fitted step: at its sides, where they must be level, and in the rise. */
 function doubtOf(
   profile: readonly ProfilePoint[],
-  { lowHu, stepHu, sigmaMm, residualHu }: FittedEdge,
+  { lowHu, stepHu, sigmaMm }: FittedEdge,
 ): 'several' | 'uneven' | undefined {
+  const noiseHu = scatterHu(profile);
   let worst = 0;
   const pieces = new Map<number, { n: number; sum: number }>();
   for (const { mm, hu, n } of profile) {
     if (Math.abs(mm) < 2.5 * sigmaMm) continue;
     const piece = Math.floor(mm / PIECE_MM);
     const before = pieces.get(piece) ?? { n: 0, sum: 0 };
-    const level = mm < 0 ? lowHu : lowHu + stepHu;
+    const level = lowHu + stepHu * normalCdf(mm / sigmaMm);
     pieces.set(piece, { n: before.n + n, sum: before.sum + n * (hu - level) });
   }
   for (const { n, sum } of pieces.values()) {
     if (n < PIXELS_AS_ONE) continue;
     const away = Math.abs(sum / n);
-    const error = residualHu / Math.sqrt(n / PIXELS_AS_ONE);
+    const error = noiseHu / Math.sqrt(n / PIXELS_AS_ONE);
     if (away > UNEVEN_ERRORS * error || away > OTHER_EDGE_SHARE * Math.abs(stepHu))
       worst = Math.max(worst, away / Math.abs(stepHu));
   }

@@ -6,6 +6,8 @@ export interface ProfilePoint {
   readonly mm: number;
   readonly hu: number;
   readonly n: number;
+  /** Sum of the squared differences from that mean, HU². */
+  readonly squaresHu2: number;
 }
 
 /** Steps of a profile follow the blur, within these bounds, mm. */
@@ -18,17 +20,37 @@ export function binnedProfile(
   { offsetMm, slope, curvaturePerMm, sigmaMm }: FittedEdge,
 ): readonly ProfilePoint[] {
   const stepMm = Math.min(STEP_MM[1], Math.max(STEP_MM[0], sigmaMm / STEPS_PER_SIGMA));
-  const sums = new Map<number, { t: number; hu: number; n: number }>();
+  const sums = new Map<number, { t: number; hu: number; squares: number; n: number }>();
   hu.forEach((value, index) => {
     const s = alongMm[index] as number;
     const t = (acrossMm[index] as number) - offsetMm - slope * s - curvaturePerMm * s * s;
     const bin = Math.round(t / stepMm);
-    const sum = sums.get(bin) ?? { t: 0, hu: 0, n: 0 };
-    sums.set(bin, { t: sum.t + t, hu: sum.hu + value, n: sum.n + 1 });
+    const sum = sums.get(bin) ?? { t: 0, hu: 0, squares: 0, n: 0 };
+    sums.set(bin, {
+      t: sum.t + t,
+      hu: sum.hu + value,
+      squares: sum.squares + value * value,
+      n: sum.n + 1,
+    });
   });
   return [...sums]
     .sort(([a], [b]) => a - b)
-    .map(([, sum]) => ({ mm: sum.t / sum.n, hu: sum.hu / sum.n, n: sum.n }));
+    .map(([, sum]) => ({
+      mm: sum.t / sum.n,
+      hu: sum.hu / sum.n,
+      n: sum.n,
+      squaresHu2: Math.max(0, sum.squares - (sum.hu * sum.hu) / sum.n),
+    }));
+}
+
+/** SD of pixels about the mean at their distance, HU: the noise, whatever shape the profile has. */
+export function scatterHu(profile: readonly ProfilePoint[]): number {
+  let [squares, free] = [0, 0];
+  for (const { n, squaresHu2 } of profile) {
+    squares += squaresHu2;
+    free += n - 1;
+  }
+  return free > 0 ? Math.sqrt(squares / free) : 0;
 }
 
 /** A point of the profile that noise moves by more than this part of the step tells no crossing. */

@@ -35,8 +35,8 @@ export interface EdgeValue {
   readonly flags: readonly Flag[];
 }
 
-/** An over- or undershoot that moves the crossings by more than this is told. */
-const OTHER_SHAPE = 0.25;
+/** A shape that moves the crossings by more than this part of the rise, and by more than noise does, is told. */
+const OTHER_SHAPE = 0.15;
 
 /** The slice of a stack that a line is measured on: the rule is that of regions. */
 export function findLineSlice(line: BandLine, stack: Stack): Result<FoundSlice> {
@@ -96,8 +96,9 @@ const NOT_PLAIN: Flag = {
   text: 'The profile crosses 10 and 90 % elsewhere than a plain blur would: this kernel alters edges in another way too, and the blur stated is the nearest plain one.',
 };
 
-function isPlainBlur({ riseMm, crossingsMm }: LineEdge): boolean {
-  return crossingsMm === undefined || Math.abs(crossingsMm / riseMm - 1) <= OTHER_SHAPE;
+function isPlainBlur({ riseMm, riseErrorMm, crossingsMm }: LineEdge): boolean {
+  if (crossingsMm === undefined) return true;
+  return Math.abs(crossingsMm - riseMm) <= OTHER_SHAPE * riseMm + 2 * riseErrorMm;
 }
 
 /** The profile across the edge that a line crosses, for a picture of it; the refusal says why there is none. */

@@ -1,5 +1,5 @@
-import { type KernelTexture, localNoiseShare } from '../quality/index.js';
 import type { Vec3 } from '../geometry/index.js';
+import { type KernelTexture, localNoiseShare } from '../quality/index.js';
 
 /** What tells a strong edge from lumen, tissue and noise on one kernel, HU, and over which lengths it is looked for. */
 export interface EdgeLevels {

@@ -118,7 +118,9 @@ function brightKind(
   const fill = (n * acrossMm * downMm) / (4 * Math.PI * Math.sqrt(long * short));
   if (fill <= MOST_FILL) return 'strut';
   const middle = hu[Math.round(y / downMm) * columns + Math.round(x / acrossMm)] as number;
-  const isHollow = middle < peak - 0.5 * (levels.peakHu - levels.lumenHu) && n * acrossMm * downMm > 4 * levels.blurMm ** 2;
+  const isHollow =
+    middle < peak - 0.5 * (levels.peakHu - levels.lumenHu) &&
+    n * acrossMm * downMm > 4 * levels.blurMm ** 2;
   const isThin = 4 * Math.sqrt(short) <= THIN_BLURS * levels.blurMm;
   const isLong = Math.sqrt(long / short) >= LEAST_ASPECT;
   return isHollow || (isThin && isLong) ? 'strut' : 'calcium';

@@ -41,8 +41,7 @@ export function edgeWindow(
     const start = (top + row) * grid.columns + left;
     for (let column = 0; column < columns; column++, at++) {
       const value = stored[start + column] as number;
-      const hu =
-        line === undefined ? rescaled(value, pixels) : value * line.slope + line.intercept;
+      const hu = line === undefined ? rescaled(value, pixels) : value * line.slope + line.intercept;
       const isImage =
         hu >= LOWEST_IMAGE_HU && (pixels.padding === undefined || !isPadding(value, pixels));
       raw[at] = isImage ? hu : fillHu;

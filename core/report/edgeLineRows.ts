@@ -1,4 +1,4 @@
-import { formatFixed, formatQuantity, type Quantity } from '../format/index.js';
+import { formatFixed, formatQuantity, MINUS, type Quantity } from '../format/index.js';
 import type { NoteEdge } from '../note/edgeSchema.js';
 import type { Note } from '../note/schema.js';
 import { middleOf } from '../region/index.js';
@@ -101,7 +101,7 @@ export function edgeLineRows({ edges, pair }: Note): readonly TableRow[] {
 /** Where a line runs: from, to and the width of its band; a line can be drawn again from it. */
 function placeText({ fromMm, toMm, bandMm }: NoteEdge): string {
   const point = (mm: readonly number[]): string =>
-    mm.map((part) => formatFixed(part, 2)).join(', ');
+    mm.map((part) => formatFixed(part, 2).replace(MINUS, '-')).join(', ');
   return `from (${point(fromMm)}) to (${point(toMm)}) mm, band ${formatFixed(bandMm, 1)} mm`;
 }
 

@@ -4,6 +4,7 @@ import { segmentOf } from '../note/segments.js';
 import { type Flag, isQuiet, shapeCentre } from '../region/index.js';
 import { cautionsOf } from './cautions.js';
 import { type Fact, noteFacts } from './noteFacts.js';
+import { quoteWords } from './quoteWords.js';
 import { type QuantityValue, regionQuantities } from './regionQuantities.js';
 
 /** All that an export shows of a note. Text of files and readers is raw here: each export makes it fit for its form. */
@@ -78,7 +79,7 @@ function regionRow(note: Note, region: NoteRegion): TableRow {
     role: region.role,
     ...findingCells(finding),
     place: region.place,
-    quoteReason: region.quoteReason,
+    quoteReason: quoteWords(region),
     centreMm: shapeCentre(region.shape),
     kernels: kernelsOf(note).map(({ kernel, stack }) => {
       const value = region[kernel];

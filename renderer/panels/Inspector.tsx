@@ -3,6 +3,7 @@ import {
   type FindingKind,
   type NoteFinding,
   type NoteRegion,
+  type QuoteProposal,
   SEGMENTS,
 } from '../../core/note/index.js';
 import { ROLES } from '../../core/region/index.js';
@@ -14,6 +15,8 @@ import { TextField } from './parts/TextField.js';
 export interface InspectorProps {
   readonly region: NoteRegion;
   readonly finding: NoteFinding | undefined;
+  /** What would be quoted by the rules. */
+  readonly proposal: QuoteProposal;
   readonly frozen: boolean;
   readonly actions: LedgerActions;
 }
@@ -31,13 +34,13 @@ const SEGMENT_OPTIONS: readonly ChoiceOption<string>[] = [
   })),
 ];
 
-const QUOTES: readonly ChoiceOption<'none' | 'soft' | 'sharp' | 'both'>[] = [
-  { value: 'none', text: '–' },
-  ...plainOptions(['soft', 'sharp', 'both'] as const),
-];
+const CHOSEN = ['soft', 'sharp', 'both', 'neither'] as const;
+
+type QuoteChoice = 'proposal' | 'none' | (typeof CHOSEN)[number];
 
 /** The line under the ledger in which the selected region's words are changed. */
-export function Inspector({ region, finding, frozen, actions }: InspectorProps) {
+export function Inspector(props: InspectorProps) {
+  const { region, finding, frozen, actions } = props;
   const { id } = region;
   return (
     <div class="inspector">
@@ -80,26 +83,7 @@ export function Inspector({ region, finding, frozen, actions }: InspectorProps) 
           actions.onFinding(id, { segment: value === '' ? null : Number(value) })
         }
       />
-      <Choice
-        label="Quote"
-        value={region.quote ?? 'none'}
-        options={QUOTES}
-        disabled={frozen}
-        onChange={(quote) =>
-          actions.onQuote(id, quote === 'none' ? null : quote, region.quoteReason)
-        }
-      />
-      {region.quote !== null && (
-        <TextField
-          bare
-          look="why"
-          label="Why this kernel is quoted"
-          placeholder="why"
-          value={region.quoteReason}
-          disabled={frozen}
-          onCommit={(reason) => actions.onQuote(id, region.quote, reason)}
-        />
-      )}
+      <QuoteFields region={region} proposal={props.proposal} frozen={frozen} actions={actions} />
       <button
         type="button"
         class="button icon-button"
@@ -109,5 +93,49 @@ export function Inspector({ region, finding, frozen, actions }: InspectorProps) 
         Delete<span class="visually-hidden"> {region.label}</span>
       </button>
     </div>
+  );
+}
+
+interface QuoteFieldsProps {
+  readonly region: NoteRegion;
+  readonly proposal: QuoteProposal;
+  readonly frozen: boolean;
+  readonly actions: Pick<LedgerActions, 'onQuote' | 'onProposedQuote'>;
+}
+
+/** Which kernel is quoted: as proposed, with the reason on hover, or the reader's choice with a reason of his own. */
+function QuoteFields({ region, proposal, frozen, actions }: QuoteFieldsProps) {
+  const isProposed = region.quoteBy === 'proposal';
+  const options: readonly ChoiceOption<QuoteChoice>[] = [
+    { value: 'proposal', text: `as proposed: ${proposal.quote ?? '–'}` },
+    ...plainOptions(CHOSEN),
+    { value: 'none', text: '–' },
+  ];
+  const differs = !isProposed && proposal.quote !== region.quote;
+  return (
+    <>
+      <Choice
+        label="Quote"
+        value={isProposed ? 'proposal' : (region.quote ?? 'none')}
+        options={options}
+        disabled={frozen}
+        title={`Proposed: ${proposal.quote ?? 'none'}. ${proposal.reason}`}
+        onChange={(choice) => {
+          if (choice === 'proposal') actions.onProposedQuote(region.id);
+          else actions.onQuote(region.id, choice === 'none' ? null : choice, '');
+        }}
+      />
+      {!isProposed && region.quote !== null && (
+        <TextField
+          bare
+          look="why"
+          label="Why this kernel is quoted"
+          placeholder={differs ? `why not ${proposal.quote ?? 'none'}` : 'why'}
+          value={region.quoteReason}
+          disabled={frozen}
+          onCommit={(reason) => actions.onQuote(region.id, region.quote, reason)}
+        />
+      )}
+    </>
   );
 }

@@ -1,6 +1,11 @@
 import { Fragment } from 'preact';
 import { useId, useRef } from 'preact/hooks';
-import { type NoiseSource, NoiseSourceSchema, type Note } from '../../core/note/index.js';
+import {
+  type NoiseSource,
+  NoiseSourceSchema,
+  type Note,
+  quoteProposal,
+} from '../../core/note/index.js';
 import { contrastFormula } from '../../core/region/index.js';
 import { Inspector } from './Inspector.js';
 import { LedgerContrastRow } from './LedgerContrastRow.js';
@@ -109,6 +114,7 @@ export function Ledger(props: LedgerProps) {
           key={selected.id}
           region={selected}
           finding={note.findings.find(({ id }) => id === selected.findingId)}
+          proposal={quoteProposal(note, selected)}
           frozen={props.frozen}
           actions={props}
         />

@@ -1,6 +1,7 @@
 import { formatMeanSd, formatQuantity, NO_VALUE, visibleText } from '../../core/format/index.js';
 import type { NoteContrast, NoteRegion } from '../../core/note/index.js';
 import { FLAGS, isQuiet, type RegionValue } from '../../core/region/index.js';
+import { quoteWords } from '../../core/report/quoteWords.js';
 import { RoleKey } from './parts/RoleSignView.js';
 import { FlagSign } from './parts/StateSign.js';
 
@@ -36,9 +37,11 @@ export function LedgerRegionRow({ region, contrasts, selected, onSelect }: Ledge
       <ValueCells kernel="sharp" value={region.sharp} contrast={contrast} />
       <td
         class={region.quote === null ? 'text none' : 'text'}
-        title={region.quoteReason || undefined}
+        title={quoteWords(region) || undefined}
       >
-        {region.quote ?? NO_VALUE}
+        <span class={region.quoteBy === 'proposal' ? 'proposed' : ''}>
+          {region.quote ?? NO_VALUE}
+        </span>
       </td>
     </tr>
   );

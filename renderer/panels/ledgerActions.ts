@@ -8,6 +8,8 @@ export interface LedgerActions {
   readonly onRole: (regionId: string, role: Role) => void;
   readonly onPlace: (regionId: string, place: string) => void;
   readonly onQuote: (regionId: string, quote: NoteRegion['quote'], reason: string) => void;
+  /** Takes the reader's choice of a kernel back: the proposal is in force. */
+  readonly onProposedQuote: (regionId: string) => void;
   /** Segment and kind move this region; size, assessability and reason hold for its whole finding. */
   readonly onFinding: (regionId: string, fields: FindingFields) => void;
   readonly onClearFinding: (regionId: string) => void;

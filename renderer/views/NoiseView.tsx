@@ -40,7 +40,6 @@ export function NoiseView() {
   const area = edge === undefined ? chosenArea(areas, { noiseArea }) : undefined;
   const onShow = (shown: string): void => {
     const chosen = areas.find(({ number }) => shown === `area ${number}`);
-    setArea(chosen?.number);
     const edgeId = note.edges.find(({ id }) => id === shown)?.id;
     store.change('Show edge or areas', selectRegion(edgeId));
     if (edgeId !== undefined) store.change('Go to edge', goToRegion);

@@ -67,7 +67,9 @@ export function createLedgerActions({ store, run, now }: Engine): LedgerActions 
       }
     },
     onPlace: (id, place) => region('Change place', id, { place }),
-    onQuote: (id, quote, quoteReason) => region('Change quote', id, { quote, quoteReason }),
+    onQuote: (id, quote, quoteReason) =>
+      region('Change quote', id, { quote, quoteReason, quoteBy: 'reader' }),
+    onProposedQuote: (id) => region('Quote as proposed', id, { quoteBy: 'proposal' }),
     onFinding: (id, fields) => {
       edit('Change finding', (note) => setFinding(note, id, fields, now()));
     },

@@ -269,7 +269,7 @@ function markTruth(): void {
   const truth = JSON.parse(readFileSync(join(home.path, truthFile ?? ''), 'utf8'));
   const isOnSlice = (id: string) => ['R1', 'L1', 'F1'].includes(id);
   const shapes = truth.regions.filter(({ id }: { id: string }) => isOnSlice(id));
-  const none = { soft: null, sharp: null, quote: null, quoteReason: '' };
+  const none = { soft: null, sharp: null, quote: null, quoteReason: '', quoteBy: 'proposal' as const };
   const regions = shapes.map(({ id, role, label, shape }: Note['regions'][number]) => ({
     id,
     role,

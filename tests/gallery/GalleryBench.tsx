@@ -165,6 +165,7 @@ export function GalleryBench({ state }: { readonly state: string }) {
           onRole={nothing}
           onPlace={nothing}
           onQuote={nothing}
+          onProposedQuote={nothing}
           onFinding={nothing}
           onClearFinding={nothing}
           onNoise={nothing}

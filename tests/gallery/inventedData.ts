@@ -41,6 +41,7 @@ const region = (draft: Draft): NoteRegion => ({
   findingId: null,
   quote: null,
   quoteReason: '',
+  quoteBy: 'proposal',
   ...draft,
 });
 

@@ -112,8 +112,8 @@ function ofAssessability(
 }
 
 /** The reader chose a kernel against or without the proposal, and gave no reason. */
-function isMuteChoice({ quote, quoteReason }: NoteRegion): boolean {
-  return quote !== null && quoteReason.trim() === '';
+function isMuteChoice({ quote, quoteReason, quoteBy }: NoteRegion): boolean {
+  return quoteBy === 'reader' && quote !== null && quoteReason.trim() === '';
 }
 
 function nameOf({ kind, segment }: NoteFinding): string {

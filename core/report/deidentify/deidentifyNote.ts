@@ -1,5 +1,6 @@
 import type { Digest } from '../../note/life/index.js';
 import { ROLE_NAME } from '../../note/numbering.js';
+import { quoteProposal } from '../../note/quoteProposal.js';
 import type {
   Evidence,
   Note,
@@ -107,7 +108,7 @@ export async function deidentifyNote(
     anatomy: note.anatomy,
     noise: note.noise,
     findings: note.findings.map((finding) => cleanFinding(finding, cleaner)),
-    regions: note.regions.map((region) => cleanRegion(region, cleaner)),
+    regions: note.regions.map((region) => cleanRegion(note, region, cleaner)),
     contrasts: note.contrasts.map((contrast) => cleanContrast(contrast, cleaner)),
     edges: note.edges.map((edge) => cleanEdge(edge, { ...cleaner, id: ids.idOf(edge.id) })),
     visibility:
@@ -166,7 +167,7 @@ function cleanFinding(finding: NoteFinding, { ids }: Cleaner): NoteFinding {
   };
 }
 
-function cleanRegion(region: NoteRegion, cleaner: Cleaner): NoteRegion {
+function cleanRegion(note: Note, region: NoteRegion, cleaner: Cleaner): NoteRegion {
   const id = cleaner.ids.idOf(region.id);
   return {
     id,
@@ -176,7 +177,9 @@ function cleanRegion(region: NoteRegion, cleaner: Cleaner): NoteRegion {
     place: '',
     findingId: region.findingId === null ? null : cleaner.ids.idOf(region.findingId),
     quote: region.quote,
-    quoteReason: '',
+    // A reason of the program is made anew, so that nothing else can stand in its place.
+    quoteReason: region.quoteBy === 'proposal' ? quoteProposal(note, region).reason : '',
+    quoteBy: region.quoteBy,
     soft: cleanValue(region.soft, cleaner),
     sharp: cleanValue(region.sharp, cleaner),
   };

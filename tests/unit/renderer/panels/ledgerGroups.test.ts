@@ -27,6 +27,7 @@ const region = (id: string, label: string, findingId: string | null): NoteRegion
   shape: { kind: 'ellipse', centreMm: [0, 0, 0], radiiMm: [1, 1] },
   quote: null,
   quoteReason: '',
+  quoteBy: 'proposal',
   soft: null,
   sharp: null,
 });

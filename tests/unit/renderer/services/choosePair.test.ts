@@ -82,6 +82,7 @@ describe('The note of a pair', () => {
       findingId: null,
       quote: null,
       quoteReason: '',
+      quoteBy: 'proposal',
       shape: { kind: 'ellipse', centreMm: [0, 0, 0], radiiMm: [1, 1] },
       soft: value,
       sharp: value,

@@ -56,6 +56,7 @@ describe('Leaving unmarked padding out', () => {
       findingId: null,
       quote: null,
       quoteReason: '',
+      quoteBy: 'proposal',
       soft: null,
       sharp: null,
     } as const;
