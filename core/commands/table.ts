@@ -42,7 +42,7 @@ export const COMMANDS = [
   command('edit.undo', 'Undo', 'Edit', { key: 'Mod+Z' }),
   command('edit.redo', 'Redo', 'Edit', { key: 'Mod+Shift+Z' }),
   command('edit.copyTable', 'Copy table', 'Edit', { key: 'Mod+Shift+C', separated: true }),
-  command('region.delete', 'Delete region', 'Edit', { key: 'Delete' }),
+  command('region.delete', 'Delete region or line', 'Edit', { key: 'Delete' }),
   command('edit.settings', 'Settings…', 'Edit', { key: 'Mod+,', separated: true }),
 
   command('tool.window', 'Window', 'View', { letter: 'w', group: 'tool' }),

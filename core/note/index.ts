@@ -1,3 +1,4 @@
+export * from './contrastChanges.js';
 export * from './contrasts.js';
 export * from './createNote.js';
 export * from './densities.js';

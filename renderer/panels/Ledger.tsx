@@ -102,6 +102,7 @@ export function Ledger(props: LedgerProps) {
                   contrast={contrast}
                   regions={note.regions}
                   frozen={props.frozen}
+                  onChange={props.onContrast}
                   onDelete={props.onDeleteContrast}
                 />
               ))}

@@ -1,23 +1,83 @@
 import { formatQuantity } from '../../core/format/index.js';
-import type { NoteContrast, NoteRegion } from '../../core/note/index.js';
-import { contrastText } from './ledgerGroups.js';
+import {
+  type ContrastParts,
+  type NoiseSource,
+  NoiseSourceSchema,
+  type NoteContrast,
+  type NoteRegion,
+} from '../../core/note/index.js';
+import { Choice, type ChoiceOption } from './parts/Choice.js';
 
 export interface LedgerContrastRowProps {
   readonly contrast: NoteContrast;
   readonly regions: readonly NoteRegion[];
   readonly frozen: boolean;
+  readonly onChange: (contrastId: string, change: Partial<ContrastParts>) => void;
   readonly onDelete: (contrastId: string) => void;
 }
 
-/** A contrast's row: what it is made of, its value on both kernels, and its removal. */
+const NOISES: readonly ChoiceOption<NoiseSource>[] = NoiseSourceSchema.options.map((noise) => ({
+  value: noise,
+  text: noise === 'pooled' ? 'pooled SD' : `SD of ${noise}`,
+}));
+
+/** A contrast's row: what it is made of, each part to be changed in place, its value on both kernels, its removal. */
 export function LedgerContrastRow(props: LedgerContrastRowProps) {
-  const { contrast } = props;
+  const { contrast, regions, frozen } = props;
   const reason = contrast.flags.map(({ text }) => text).join(' ') || undefined;
+  const name = (part: string): string => `${part} of contrast ${contrast.id}`;
+  const others = (id: string): readonly ChoiceOption<string>[] =>
+    regions
+      .filter((region) => region.id !== id)
+      .map(({ id, label }) => ({ value: id, text: label }));
+  const references = regions
+    .filter(({ role, id }) => role === 'reference' || id === contrast.reference)
+    .map(({ id, label }) => ({ value: id, text: label }));
+  const change = (parts: Partial<ContrastParts>): void => props.onChange(contrast.id, parts);
   return (
     <tr class="contrast">
       <th scope="row">{contrast.id}</th>
       <td class="text" colSpan={4} title={contrast.formula}>
-        {contrastText(contrast, props.regions)}
+        <Choice
+          bare
+          look="quiet"
+          label={name('Lumen')}
+          value={contrast.lumen}
+          options={others(contrast.wall)}
+          disabled={frozen}
+          onChange={(lumen) => change({ lumen })}
+        />
+        <span aria-hidden="true"> − </span>
+        <Choice
+          bare
+          look="quiet"
+          label={name('Wall')}
+          value={contrast.wall}
+          options={others(contrast.lumen)}
+          disabled={frozen}
+          onChange={(wall) => change({ wall })}
+        />
+        <span aria-hidden="true"> / </span>
+        <Choice
+          bare
+          look="quiet"
+          label={name('Noise')}
+          value={contrast.noise}
+          options={NOISES}
+          disabled={frozen}
+          onChange={(noise) => change({ noise })}
+        />
+        {contrast.noise === 'reference' && references.length > 0 && (
+          <Choice
+            bare
+            look="quiet"
+            label={name('Reference')}
+            value={contrast.reference ?? ''}
+            options={references}
+            disabled={frozen}
+            onChange={(reference) => change({ reference })}
+          />
+        )}
       </td>
       <td class="soft" title={reason}>
         {formatQuantity(contrast.soft, 'ratio')}
@@ -30,7 +90,7 @@ export function LedgerContrastRow(props: LedgerContrastRowProps) {
         <button
           type="button"
           class="button icon-button"
-          disabled={props.frozen}
+          disabled={frozen}
           onClick={() => props.onDelete(contrast.id)}
         >
           Remove<span class="visually-hidden"> contrast {contrast.id}</span>

@@ -1,4 +1,9 @@
-import type { FindingFields, NoiseSource, NoteRegion } from '../../core/note/index.js';
+import type {
+  ContrastParts,
+  FindingFields,
+  NoiseSource,
+  NoteRegion,
+} from '../../core/note/index.js';
 import type { Role } from '../../core/region/index.js';
 
 /** What can be changed in the ledger. The engine turns each into a named change of the note. */
@@ -15,5 +20,6 @@ export interface LedgerActions {
   readonly onClearFinding: (regionId: string) => void;
   readonly onNoise: (noise: NoiseSource) => void;
   readonly onNewContrast: () => void;
+  readonly onContrast: (contrastId: string, change: Partial<ContrastParts>) => void;
   readonly onDeleteContrast: (contrastId: string) => void;
 }

@@ -48,16 +48,3 @@ export function contrastsOf(
 ): readonly NoteContrast[] {
   return contrasts.filter(({ lumen }) => lumen === regionId);
 }
-
-/** What a contrast is made of, by the labels of its regions: 'Lumen 2 − Wall 1, noise of Reference 1'. */
-export function contrastText(contrast: NoteContrast, regions: readonly NoteRegion[]): string {
-  const label = (id: string | undefined) =>
-    regions.find((region) => region.id === id)?.label ?? id ?? '?';
-  const noise = {
-    lumen: `noise of ${label(contrast.lumen)}`,
-    wall: `noise of ${label(contrast.wall)}`,
-    reference: `noise of ${label(contrast.reference)}`,
-    pooled: 'noise of both, pooled',
-  }[contrast.noise];
-  return `${label(contrast.lumen)} − ${label(contrast.wall)}, ${noise}`;
-}

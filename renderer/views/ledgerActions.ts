@@ -1,6 +1,8 @@
 import {
+  changeContrast,
   changeRegion,
   clearFinding,
+  contrastChanges,
   type Note,
   removeContrast,
   setFinding,
@@ -40,6 +42,15 @@ export function createLedgerActions({ store, run, now }: Engine): LedgerActions 
     });
   };
 
+  /** Changes contrasts, and says what they were and are. */
+  const contrast = (label: string, change: (note: Note) => Result<Note>): void => {
+    const before = store.now().note;
+    const after = edit(label, change);
+    if (before === undefined || after === undefined || store.now().note !== after) return;
+    const text = contrastChanges(before, after);
+    store.change('Tell', (state) => ({ ...state, message: { tone: 'plain', text } }));
+  };
+
   return {
     onSelect: (id) => {
       store.change('Select region', selectRegion(id));
@@ -74,8 +85,11 @@ export function createLedgerActions({ store, run, now }: Engine): LedgerActions 
       edit('Change finding', (note) => setFinding(note, id, fields, now()));
     },
     onClearFinding: (id) => plain('Clear finding', (note) => clearFinding(note, id, now())),
-    onNoise: (noise) => plain('Change noise', (note) => setNoise(note, noise, now())),
+    onNoise: (noise) =>
+      contrast('Change noise', (note) => ({ ok: true, value: setNoise(note, noise, now()) })),
     onNewContrast: () => run('contrast.new'),
+    onContrast: (id, change) =>
+      contrast('Change contrast', (note) => changeContrast(note, id, change, now())),
     onDeleteContrast: (id) => plain('Delete contrast', (note) => removeContrast(note, id, now())),
   };
 }

@@ -140,7 +140,12 @@ test('a contrast gives CNR with its formula', async () => {
   await expect(dialog).toContainText('CNR = (lumen − wall) / SD of wall');
   await dialog.locator('button.primary').click();
   await expect(dialog).toBeHidden();
-  await expect(page.locator('[data-panel=ledger]')).toContainText('noise of Wall 1');
+  const row = page.locator('[data-panel=ledger] tr.contrast');
+  await expect(row.getByLabel('Noise of contrast C1')).toHaveValue('wall');
+  // Another noise is chosen in place: both values are computed anew, and the reader is told which they were.
+  await row.getByLabel('Noise of contrast C1').selectOption('pooled');
+  await expect(page.getByText(/C1: soft .* → .*, sharp .* → /)).toBeVisible();
+  await row.getByLabel('Noise of contrast C1').selectOption('wall');
 });
 
 test('finding, segment and place are chosen in the ledger', async () => {
@@ -254,7 +259,12 @@ test('deleting a region takes its contrast, and undo brings both back', async ()
   await expect(page.locator('[data-panel=ledger]')).not.toContainText('noise of Wall 1');
   await page.keyboard.press('Control+z');
   await expect(regionRow(page, 'W1')).toBeVisible();
-  await expect(page.locator('[data-panel=ledger]')).toContainText('noise of Wall 1');
+  const row = page.locator('[data-panel=ledger] tr.contrast');
+  await expect(row.getByLabel('Noise of contrast C1')).toHaveValue('wall');
+  // Another noise is chosen in place: both values are computed anew, and the reader is told which they were.
+  await row.getByLabel('Noise of contrast C1').selectOption('pooled');
+  await expect(page.getByText(/C1: soft .* → .*, sharp .* → /)).toBeVisible();
+  await row.getByLabel('Noise of contrast C1').selectOption('wall');
 });
 
 /** The places that the study's own truth file names, as marks of the saved note; the page measures them on opening. */
@@ -269,7 +279,13 @@ function markTruth(): void {
   const truth = JSON.parse(readFileSync(join(home.path, truthFile ?? ''), 'utf8'));
   const isOnSlice = (id: string) => ['R1', 'L1', 'F1'].includes(id);
   const shapes = truth.regions.filter(({ id }: { id: string }) => isOnSlice(id));
-  const none = { soft: null, sharp: null, quote: null, quoteReason: '', quoteBy: 'proposal' as const };
+  const none = {
+    soft: null,
+    sharp: null,
+    quote: null,
+    quoteReason: '',
+    quoteBy: 'proposal' as const,
+  };
   const regions = shapes.map(({ id, role, label, shape }: Note['regions'][number]) => ({
     id,
     role,

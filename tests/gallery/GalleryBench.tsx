@@ -170,6 +170,7 @@ export function GalleryBench({ state }: { readonly state: string }) {
           onClearFinding={nothing}
           onNoise={nothing}
           onNewContrast={nothing}
+          onContrast={nothing}
           onDeleteContrast={nothing}
         />
       }

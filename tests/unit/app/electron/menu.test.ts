@@ -88,7 +88,7 @@ describe('menuTemplate', () => {
       expect.arrayContaining([
         'Undo [CmdOrCtrl+Z]',
         'Redo [CmdOrCtrl+Shift+Z]',
-        'Delete region (Delete)',
+        'Delete region or line (Delete)',
         'Settings… [CmdOrCtrl+,]',
       ]),
     );

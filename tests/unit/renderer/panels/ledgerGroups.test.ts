@@ -1,11 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { NoteContrast, NoteFinding, NoteRegion } from '../../../../core/note/index.js';
-import {
-  contrastsOf,
-  contrastText,
-  groupTitle,
-  ledgerGroups,
-} from '../../../../renderer/panels/ledgerGroups.js';
+import { contrastsOf, groupTitle, ledgerGroups } from '../../../../renderer/panels/ledgerGroups.js';
 
 const finding = (id: string, segment: number | null, kind: NoteFinding['kind']): NoteFinding => ({
   id,
@@ -81,17 +76,8 @@ describe('groupTitle', () => {
 });
 
 describe('contrasts of the ledger', () => {
-  const regions = [region('L1', 'Lumen 1', null), region('R1', 'Reference 1', null)];
   it('finds those in which a region is the lumen', () => {
     const all = [contrast('C1', 'reference'), { ...contrast('C2', 'wall'), lumen: 'L9' }];
     expect(contrastsOf(all, 'L1').map(({ id }) => id)).toEqual(['C1']);
-  });
-  it('says what a contrast is made of, by label, or by identifier where the region is gone', () => {
-    expect(contrastText(contrast('C1', 'reference'), regions)).toBe(
-      'Lumen 1 − W1, noise of Reference 1',
-    );
-    expect(contrastText(contrast('C1', 'pooled'), regions)).toBe(
-      'Lumen 1 − W1, noise of both, pooled',
-    );
   });
 });
