@@ -50,6 +50,15 @@ export interface FolderLevel {
   readonly refusal?: string;
 }
 
+/** A stored note of a study, without its content. */
+export interface ListedNote {
+  readonly reader: string;
+  readonly completion: 'PARTIAL' | 'COMPLETE';
+  readonly verification: 'UNVERIFIED' | 'VERIFIED';
+  readonly changedAt: string;
+  readonly regions: number;
+}
+
 /** What a long job says while it runs, as server-sent events named 'progress', 'done' and 'failed'. */
 export interface Progress {
   readonly done: number;

@@ -92,6 +92,10 @@ export const COMMANDS = [
   command('region.keyImage', 'Key image of the region…', 'Note', { letter: 'j' }),
   command('note.open', 'Reading note…', 'Note', { key: 'Mod+I' }),
   command('note.recheck', 'Measure the note again…', 'Note'),
+  command('repeat.begin', 'Read the regions again, blind', 'Note', { separated: true }),
+  command('repeat.skip', 'Skip the region', 'Note'),
+  command('repeat.finish', 'Finish the repeat reading', 'Note'),
+  command('agreement.open', 'Agreement of readings…', 'Note'),
   command('contrast.new', 'New contrast…', 'Note', { letter: 'k' }),
 
   command('help.keys', 'Keys', 'Help', { letter: '?' }),

@@ -42,6 +42,7 @@ export function createNote(beginning: NoteBeginning): Note {
     regions: [],
     contrasts: [],
     edges: [],
+    repeats: [],
     visibility: null,
     lastNumbers: {},
     comment: '',

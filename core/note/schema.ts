@@ -9,6 +9,8 @@ import {
   PlanRegionSchema,
   StackReferenceSchema,
 } from './plan.js';
+import { RegionValueSchema } from './regionValueSchema.js';
+import { type RepeatedRegionSchema, RepeatSchema } from './repeatSchema.js';
 import { PairTextureSchema } from './textureSchema.js';
 import { VisibilitySchema } from './visibilitySchema.js';
 
@@ -19,26 +21,6 @@ const remark = z.object({ code: text, text });
 
 /** The two kernels of a pair; the note and its exports call every value by one of these. */
 export const KernelSchema = z.enum(['soft', 'sharp']);
-
-export const RegionValueSchema = z.object({
-  n: z.number().int().nonnegative(),
-  meanHu: maybeNumber,
-  sdHu: maybeNumber,
-  minHu: maybeNumber,
-  maxHu: maybeNumber,
-  medianHu: maybeNumber,
-  areaMm2: z.number(),
-  sampledAreaMm2: z.number(),
-  snr: maybeNumber,
-  sliceIndex: z.number().int().nullable(),
-  sliceOffsetMm: maybeNumber,
-  sopInstanceUid: maybeText,
-  /** Notes of earlier versions have none: their images were all single ones. */
-  frameNumber: z.number().int().positive().nullable().default(null),
-  standardErrorHu: maybeNumber,
-  placementHu: maybeNumber,
-  flags: z.array(remark),
-});
 
 /** One stack of the pair, with the labels as its files have them. */
 export const NoteStackSchema = StackReferenceSchema.extend({
@@ -189,6 +171,8 @@ export const NoteSchema = z.object({
   contrasts: z.array(NoteContrastSchema),
   /** Lines across edges; notes of earlier versions have none. */
   edges: z.array(NoteEdgeSchema).default([]),
+  /** Readings of the same regions again; notes of earlier versions have none. */
+  repeats: z.array(RepeatSchema).default([]),
   /** The smallest disc that could be seen; notes of earlier versions have none. */
   visibility: VisibilitySchema.nullable().default(null),
   /** Highest number ever given, by the letter of the identifier: a number is not used again after a removal. */
@@ -209,6 +193,8 @@ export type NoteContrast = Frozen<z.infer<typeof NoteContrastSchema>>;
 export type NoteFinding = Frozen<z.infer<typeof NoteFindingSchema>>;
 export type NoteStack = Frozen<z.infer<typeof NoteStackSchema>>;
 export type Study = Frozen<z.infer<typeof StudySchema>>;
+export type Repeat = Frozen<z.infer<typeof RepeatSchema>>;
+export type RepeatedRegion = Frozen<z.infer<typeof RepeatedRegionSchema>>;
 export type Density = Frozen<z.infer<typeof DensitySchema>>;
 export type Anatomy = Frozen<z.infer<typeof AnatomySchema>>;
 export type Amendment = Frozen<z.infer<typeof AmendmentSchema>>;

@@ -20,7 +20,9 @@ export interface NearEdge {
  * The contour of a structure is known to this share of the blur, from both sides: a thin strut's contour lies half a
  * blur before it, noise and pixels move either.
  */
-const UNCERTAIN = 0.15;
+const UNCERTAIN = 0.4;
+/** The contour is followed so far beyond a structure's pixels. */
+const MOST_BEYOND_BLURS = 0.5;
 /** The window goes on beyond what may be near, so that a strut shows its shape, in blurs and mm. */
 const BEYOND_BLURS = 1;
 const BEYOND_MM = 2;
@@ -51,7 +53,7 @@ export function nearEdges(
   const window = edgeWindow(slice, stored, bounds, levels.smoothingMm, regionHu);
   return structuresIn(window, spacingMm, levels, regionHu)
     .flatMap((structure): NearEdge[] => {
-      const distanceMm = distanceTo(structure, window, border, spacingMm);
+      const distanceMm = distanceTo(structure, window, border, spacingMm, levels.blurMm);
       if (distanceMm > reachMm) return [];
       return [{ kind: structure.kind, distanceMm, pixels: inSlice(structure, window, grid) }];
     })
@@ -78,39 +80,44 @@ function boundsAround(
   };
 }
 
-/** Distance of the structure's contour from the region, the contour found between pixels along rows and columns. */
+/**
+ * Distance of the structure's contour from the region: the contour is found between pixels along rows and columns. It
+ * may lie a little beyond the pixels that are told from lumen, where a structure borders on something dark.
+ */
 function distanceTo(
-  { pixels, levelHu }: Structure,
+  { kind, pixels, levelHu, behindBlurs }: Structure,
   { column: left, row: top, columns, rows, hu }: EdgeWindow,
   border: readonly PlaneMm[],
-  [acrossMm, downMm]: readonly [number, number],
+  spacingMm: readonly [number, number],
+  blurMm: number,
 ): number {
+  const [acrossMm, downMm] = spacingMm;
   const held = new Set(pixels);
   let nearest = Infinity;
-  const look = (x: number, y: number): void => {
-    if (nearest > 0)
-      nearest = Math.min(
-        nearest,
-        distanceFrom(border, [(left + x) * acrossMm, (top + y) * downMm]),
-      );
-  };
   pixels.forEach((at, index) => {
     const [row, column] = [Math.floor(at / columns), at % columns];
-    const value = hu[at] as number;
     const level = levelHu[index] as number;
     for (const [dx, dy] of SIDEWAYS) {
-      const [c, r] = [column + dx, row + dy];
-      if (c < 0 || r < 0 || c >= columns || r >= rows) continue;
-      const other = r * columns + c;
-      if (held.has(other)) continue;
-      const beyond = hu[other] as number;
-      // A neighbour may lie beyond its own level and not beyond this pixel's: then the contour is half way.
-      const part = (value - level) / (value - beyond);
-      const share = part >= 0 && part <= 1 ? part : 0.5;
-      look(column + dx * share, row + dy * share);
+      const steps = Math.max(1, Math.round((MOST_BEYOND_BLURS * blurMm) / (dx === 0 ? downMm : acrossMm)));
+      let value = hu[at] as number;
+      for (let step = 1; step <= steps; step++) {
+        const [c, r] = [column + dx * step, row + dy * step];
+        const other = r * columns + c;
+        if (c < 0 || r < 0 || c >= columns || r >= rows || held.has(other)) break;
+        const beyond = hu[other] as number;
+        const isCrossed = kind === 'air' ? beyond >= level : beyond <= level;
+        if (isCrossed || step === steps) {
+          const share = isCrossed ? step - 1 + (value - level) / (value - beyond) : step;
+          const x = (left + column + dx * share) * acrossMm;
+          const y = (top + row + dy * share) * downMm;
+          nearest = Math.min(nearest, distanceFrom(border, [x, y]));
+          break;
+        }
+        value = beyond;
+      }
     }
   });
-  return nearest;
+  return nearest > 0 ? nearest + behindBlurs * blurMm : 0;
 }
 
 const SIDEWAYS = [

@@ -19,12 +19,12 @@ export interface EdgeLevels {
 /** The image is smoothed with a quarter of the blur: noise falls by a third and more, edges are hardly widened. */
 const SMOOTHING_PER_BLUR = 0.25;
 /** Enhanced lumen differs by this share from vessel to vessel. Common practice, no source. */
-const LUMEN_SPREAD = 0.12;
+const LUMEN_SPREAD = 0.1;
 /** Noise alone goes so many SDs above the lumen in one of some 10,000 looks at a window, and so many anywhere. */
 const BRIGHT_SDS = 2.2;
-const PEAK_SDS = 4.5;
+const PEAK_SDS = 4.2;
 /** What is longer than so many blurs is no grain of noise. */
-const LONG_BLURS = 3;
+const LONG_BLURS = 4.5;
 /** Even areas farther away than this tell of another vessel or of bone, mm. */
 const NEAR_MM = 60;
 
@@ -44,8 +44,8 @@ export function edgeLevels(texture: KernelTexture, placeMm: Vec3): EdgeLevels | 
     blurMm: blurFwhmMm,
     smoothingMm,
     lumenHu,
-    brightHu: lumenHu + Math.max(spreadHu, BRIGHT_SDS * noiseHu),
-    peakHu: lumenHu + spreadHu + PEAK_SDS * noiseHu,
+    brightHu: lumenHu + Math.hypot(spreadHu, BRIGHT_SDS * noiseHu),
+    peakHu: lumenHu + Math.hypot(spreadHu, PEAK_SDS * noiseHu),
     longMm: LONG_BLURS * blurFwhmMm,
   };
 }

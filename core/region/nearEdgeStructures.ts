@@ -8,6 +8,8 @@ export type EdgeKind = 'strut' | 'calcium' | 'air';
 export interface Structure {
   readonly kind: EdgeKind;
   readonly pixels: readonly number[];
+  /** How far its true border lies behind its contour, in blurs: a thin thing looks as wide as the blur. */
+  readonly behindBlurs: number;
   /** Level of its contour at each of these pixels, HU: half way between it and its surroundings. */
   readonly levelHu: readonly number[];
 }
@@ -47,7 +49,7 @@ export function structuresIn(
   const air = components(window, (at) => (hu[at] as number) < AIR_HU).flatMap(
     (pixels): Structure[] =>
       pixels.some((at) => (hu[at] as number) <= AIR_SEED_HU)
-        ? [{ kind: 'air', pixels, levelHu: pixels.map(() => AIR_HU) }]
+        ? [{ kind: 'air', pixels, behindBlurs: 0, levelHu: pixels.map(() => AIR_HU) }]
         : [],
   );
   return [...bright, ...air];
@@ -74,12 +76,12 @@ function brightStructure(
   const kept: number[] = [];
   const levelHu: number[] = [];
   for (const at of pixels) {
-    const level = Math.max(levels.brightHu, (heightNear(at) + surroundHu) / 2);
-    if ((hu[at] as number) < level) continue;
+    const halfHu = (heightNear(at) + surroundHu) / 2;
+    if ((hu[at] as number) < Math.max(levels.brightHu, halfHu)) continue;
     kept.push(at);
-    levelHu.push(level);
+    levelHu.push(halfHu);
   }
-  return { kind: brightKind(kept, hu, columns, spacingMm, levels), pixels: kept, levelHu };
+  return { ...brightKind(kept, hu, columns, spacingMm, levels), pixels: kept, levelHu };
 }
 
 /** A disc fills its ellipse of inertia; a ring, an arc or a line of this fill or less is a strut. */
@@ -88,6 +90,10 @@ const MOST_FILL = 0.75;
 const LEAST_ASPECT = 2.5;
 const THIN_BLURS = 1.5;
 
+/** A bent strut is thin; what is long and straight may be a narrow grain too. */
+const BENT_BEHIND = 0.35;
+const STRAIGHT_BEHIND = 0.15;
+
 /** Struts are thin and bent or long; calcium is compact. Decided by the shape of the contour, and by a dip in its middle. */
 function brightKind(
   pixels: readonly number[],
@@ -95,7 +101,7 @@ function brightKind(
   columns: number,
   [acrossMm, downMm]: readonly [number, number],
   levels: EdgeLevels,
-): EdgeKind {
+): Pick<Structure, 'kind' | 'behindBlurs'> {
   let [sumX, sumY, sumXX, sumYY, sumXY, peak] = [0, 0, 0, 0, 0, -Infinity];
   for (const at of pixels) {
     const [x, y] = [(at % columns) * acrossMm, Math.floor(at / columns) * downMm];
@@ -116,14 +122,17 @@ function brightKind(
   const [long, short] = [(xx + yy) / 2 + spread, Math.max(1e-9, (xx + yy) / 2 - spread)];
   // The area of an even ellipse is 4π√(λ₁λ₂), its half axes are 2√λ.
   const fill = (n * acrossMm * downMm) / (4 * Math.PI * Math.sqrt(long * short));
-  if (fill <= MOST_FILL) return 'strut';
+  if (fill <= MOST_FILL) return { kind: 'strut', behindBlurs: BENT_BEHIND };
   const middle = hu[Math.round(y / downMm) * columns + Math.round(x / acrossMm)] as number;
   const isHollow =
     middle < peak - 0.5 * (levels.peakHu - levels.lumenHu) &&
     n * acrossMm * downMm > 4 * levels.blurMm ** 2;
   const isThin = 4 * Math.sqrt(short) <= THIN_BLURS * levels.blurMm;
   const isLong = Math.sqrt(long / short) >= LEAST_ASPECT;
-  return isHollow || (isThin && isLong) ? 'strut' : 'calcium';
+  if (isHollow) return { kind: 'strut', behindBlurs: BENT_BEHIND };
+  return isThin && isLong
+    ? { kind: 'strut', behindBlurs: STRAIGHT_BEHIND }
+    : { kind: 'calcium', behindBlurs: 0 };
 }
 
 function extentMm(

@@ -2,7 +2,7 @@ import { COMMANDS, type CommandId } from '../../core/commands/index.js';
 import { isMasked } from '../services/masking.js';
 import type { AppState } from '../state/appState.js';
 import { selectedLine } from '../state/lineSelectors.js';
-import { selectedRegion } from '../state/regionSelectors.js';
+import { isBlind, selectedRegion } from '../state/regionSelectors.js';
 import { linksOf } from '../state/selectors.js';
 
 /** Commands that need nothing opened. */
@@ -25,6 +25,26 @@ const HU_WINDOWS: ReadonlySet<CommandId> = new Set([
 
 const NEEDS_REGIONS: ReadonlySet<CommandId> = new Set(['region.next', 'region.previous']);
 
+/** Commands that would show something of the first reading while it is read again. */
+const TELLS_FIRST: ReadonlySet<CommandId> = new Set([
+  'export.csv',
+  'export.html',
+  'export.json',
+  'edit.copyTable',
+  'region.keyImage',
+  'region.next',
+  'region.previous',
+  'region.delete',
+  'slice.region',
+  'note.open',
+  'note.recheck',
+  'contrast.new',
+  'plot.visible',
+  'plot.bands',
+  'repeat.begin',
+  'agreement.open',
+]);
+
 /** Whether a command can be used now. */
 export function isEnabled(state: AppState, id: CommandId): boolean {
   if (ALWAYS.has(id)) return true;
@@ -32,6 +52,11 @@ export function isEnabled(state: AppState, id: CommandId): boolean {
   if (id === 'pair.choose') return (state.index?.stacks.length ?? 0) > 0;
   const { pair, note } = state;
   if (pair === undefined || note === undefined) return false;
+  if (isBlind(state) && TELLS_FIRST.has(id)) return false;
+  if (id === 'repeat.skip' || id === 'repeat.finish') return isBlind(state);
+  if (id === 'repeat.begin') {
+    return note.regions.length > 0 && note.verification !== 'VERIFIED';
+  }
   if (HU_WINDOWS.has(id)) return pair.soft.unit === 'HU';
   if (id === 'link.scroll' || id === 'link.view') {
     return pair.sharp !== undefined && state.compare.way === 'open';

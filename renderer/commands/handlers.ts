@@ -8,6 +8,7 @@ import type { CompareWay, DialogId, Message, ToolId } from '../state/appState.js
 import { setCompare, switchKernel } from '../state/changes/compare.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { removeSelected, setRole, stepSelection } from '../state/changes/regions.js';
+import { endRepeat, skipNext, startRepeat } from '../state/changes/repeat.js';
 import { fitView, scrollBy, setWindow, toggleLink } from '../state/changes/view.js';
 import { redo, undo } from '../state/history.js';
 import { noiseAreasText } from '../state/noiseSelectors.js';
@@ -155,6 +156,13 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
     'region.keyImage': dialog('keyImage'),
     'note.open': dialog('note'),
     'note.recheck': dialog('recheck'),
+    'repeat.begin': () => {
+      const { reader } = store.now().settings;
+      store.change('Begin repeat', startRepeat(reader, now()));
+    },
+    'repeat.skip': () => store.change('Skip region', skipNext(now())),
+    'repeat.finish': () => store.change('Finish repeat', endRepeat(now())),
+    'agreement.open': dialog('agreement'),
     'contrast.new': dialog('newContrast'),
     'help.keys': dialog('keys'),
     'help.numbers': dialog('numbers'),

@@ -2,6 +2,7 @@ import { hc } from 'hono/client';
 import type {
   FolderIndex,
   FolderLevel,
+  ListedNote,
   OpenFolder,
   Progress,
   RecentFolder,
@@ -66,6 +67,14 @@ export interface HostClient {
     etag: string | undefined,
     signal: AbortSignal,
   ): Promise<Result<string>>;
+  /** The notes of a study that lie on this machine, without their content. */
+  listNotes(studyInstanceUid: string, signal: AbortSignal): Promise<Result<readonly ListedNote[]>>;
+  /** Another reader's note of a study. */
+  readNoteOf(
+    studyInstanceUid: string,
+    reader: string,
+    signal: AbortSignal,
+  ): Promise<Result<KeptNote | undefined>>;
   /** The note as a PDF file, with its key images as PNG files in base64. */
   writePdf(
     note: Note,
@@ -87,6 +96,11 @@ export function createClient(origin: string, transport: Transport): HostClient {
     api.notes[':studyInstanceUid'].$url({ param: { studyInstanceUid: encoded(studyInstanceUid) } });
   // The typed client takes a last part named 'index' for the folder itself, so this one address is put together here.
   const indexUrl = (grant: string): URL => new URL(`/api/folders/${encoded(grant)}/index`, origin);
+  const readNote = async (url: URL, signal: AbortSignal): Promise<Result<KeptNote | undefined>> => {
+    const answer = await send(transport, { method: 'GET', url, signal });
+    if (answer.ok) return keptNote(answer.value);
+    return answer.refusal.code === 'no-note' ? success(undefined) : answer;
+  };
   return {
     session: (signal) => sendForJson(transport, { method: 'GET', url: api.session.$url(), signal }),
     saveSettings: (settings, signal) =>
@@ -126,10 +140,19 @@ export function createClient(origin: string, transport: Transport): HostClient {
     },
     demonstration: (onProgress, signal) =>
       followJob(transport, { method: 'POST', url: api.demonstration.$url(), signal }, onProgress),
-    readNote: async (study, signal) => {
-      const answer = await send(transport, { method: 'GET', url: noteUrl(study), signal });
-      if (answer.ok) return keptNote(answer.value);
-      return answer.refusal.code === 'no-note' ? success(undefined) : answer;
+    readNote: (study, signal) => readNote(noteUrl(study), signal),
+    listNotes: (study, signal) =>
+      sendForJson(transport, {
+        method: 'GET',
+        url: api.notes[':studyInstanceUid'].readers.$url({
+          param: { studyInstanceUid: encoded(study) },
+        }),
+        signal,
+      }),
+    readNoteOf: (study, reader, signal) => {
+      const url = noteUrl(study);
+      url.searchParams.set('reader', reader);
+      return readNote(url, signal);
     },
     writeNote: async (study, note, etag, signal) => {
       const answer = await send(transport, {

@@ -9,6 +9,7 @@ import {
   kernelOfFace,
   type PlateFace,
 } from '../state/compareSelectors.js';
+import { shownRegions } from '../state/regionSelectors.js';
 import { stackOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import type { ToolPointer } from '../tools/tool.js';
@@ -65,7 +66,7 @@ export function Plate({ face, store, machine, stored, onKey }: PlateProps) {
   };
   const state = store.state.value;
   const kernel = kernelOfFace(state, face);
-  const regions = state.note?.regions ?? [];
+  const regions = shownRegions(state);
   return (
     // biome-ignore lint/a11y/noStaticElementInteractions: keys bubble up from the image and from its list of regions
     <div

@@ -30,7 +30,8 @@ export type DialogId =
   | 'newContrast'
   | 'note'
   | 'recheck'
-  | 'keyImage';
+  | 'keyImage'
+  | 'agreement';
 
 /** The two stacks on the plates; without a sharp one a single stack is read. */
 export interface PairState {

@@ -1,7 +1,7 @@
 import type { Kernel, NoteEdge } from '../../core/note/index.js';
 import { type BandLine, findLineSlice } from '../../core/region/index.js';
 import type { AppState, LinePurpose } from './appState.js';
-import { takesMarks } from './regionSelectors.js';
+import { isBlind, takesMarks } from './regionSelectors.js';
 import { shownSlice, stackOf } from './selectors.js';
 
 /** A line of the note on the plates, whatever it is for. */
@@ -13,7 +13,10 @@ export interface MarkedLine extends BandLine {
 
 /** All lines of the note, in the order of making. */
 export function markedLines({ note }: Pick<AppState, 'note'>): readonly MarkedLine[] {
-  return (note?.edges ?? []).map((edge) => ({ ...edge, purpose: 'edge' }));
+  return (isBlind({ note }) ? [] : (note?.edges ?? [])).map((edge) => ({
+    ...edge,
+    purpose: 'edge',
+  }));
 }
 
 /** True when a line lies on the slice that a plate shows. */

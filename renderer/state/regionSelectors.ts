@@ -1,4 +1,4 @@
-import type { Kernel, NoteRegion } from '../../core/note/index.js';
+import { type Kernel, type NoteRegion, runningRepeat } from '../../core/note/index.js';
 import { findSlice, type Shape } from '../../core/region/index.js';
 import { isUnscaled, type Stack } from '../../core/stack/index.js';
 import type { AppState } from './appState.js';
@@ -38,9 +38,19 @@ export function isOnPlate(state: AppState, kernel: Kernel, shape: Shape): boolea
 
 /** The regions that lie on the slice that a plate shows, in the order of making. */
 export function regionsOn(state: AppState, kernel: Kernel): readonly NoteRegion[] {
-  return state.note?.regions.filter(({ shape }) => isOnPlate(state, kernel, shape)) ?? [];
+  return shownRegions(state).filter(({ shape }) => isOnPlate(state, kernel, shape));
+}
+
+/** Whether the first reading is hidden, because the reader reads the regions again. */
+export function isBlind({ note }: Pick<AppState, 'note'>): boolean {
+  return note !== undefined && runningRepeat(note) !== undefined;
+}
+
+/** The regions that may be shown: none of the first reading while it is read again. */
+export function shownRegions(state: Pick<AppState, 'note'>): readonly NoteRegion[] {
+  return isBlind(state) ? [] : (state.note?.regions ?? []);
 }
 
 export function selectedRegion(state: Pick<AppState, 'note' | 'selected'>): NoteRegion | undefined {
-  return state.note?.regions.find(({ id }) => id === state.selected);
+  return shownRegions(state).find(({ id }) => id === state.selected);
 }

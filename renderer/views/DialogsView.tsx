@@ -11,6 +11,7 @@ import { SettingsDialog } from '../dialogs/SettingsDialog.js';
 import { useEngine } from '../engine.js';
 import { changeSettings } from '../services/start.js';
 import { editNote } from '../state/history.js';
+import { AgreementView } from './AgreementView.js';
 import { ChoosePairView } from './ChoosePairView.js';
 import { KeyImageView } from './KeyImageView.js';
 import { keyNames } from './keyNames.js';
@@ -41,6 +42,8 @@ export function DialogsView() {
       return <NewContrastView onClose={close} />;
     case 'keyImage':
       return <KeyImageView onClose={close} />;
+    case 'agreement':
+      return <AgreementView onClose={close} />;
     case 'note':
     case 'recheck':
       return <NoteDialogView rechecks={dialog === 'recheck'} onClose={close} />;

@@ -9,7 +9,7 @@ import type { AppState } from '../state/appState.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { selectRegion } from '../state/changes/regions.js';
 import { scrollTo } from '../state/changes/view.js';
-import { selectedRegion, sliceOf } from '../state/regionSelectors.js';
+import { selectedRegion, shownRegions, sliceOf } from '../state/regionSelectors.js';
 import { linksOf } from '../state/selectors.js';
 import type { Change, Store } from '../state/store.js';
 import { useSelected } from './useSelected.js';
@@ -53,7 +53,7 @@ function rulerOf(
     softMm: positionsOf(soft),
     sharpMm: sharp === undefined || pair.link === 'index' ? undefined : positionsOf(sharp, soft),
     positionMm,
-    marks: (note?.regions ?? []).flatMap((region) => markOf(region, pair, selected)),
+    marks: shownRegions({ note }).flatMap((region) => markOf(region, pair, selected)),
     onMove: (alongMm) => store.change('Scroll', scrollOnRuler(alongMm)),
     onMark: (id) => {
       store.change('Select region', selectRegion(id));

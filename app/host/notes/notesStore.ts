@@ -1,7 +1,8 @@
-import { readFile } from 'node:fs/promises';
+import { readdir, readFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import type { Note } from '../../../core/note/index.js';
 import { type Result, refuse, success } from '../../../core/result.js';
+import type { ListedNote } from '../contract.js';
 import { fileErrorCode, fileErrorReason } from '../storage/fileError.js';
 import { removeLeftovers } from '../storage/leftovers.js';
 import { ensureOwnerFolder, writeOwnerFile } from '../storage/ownerFile.js';
@@ -38,6 +39,8 @@ export interface NotesStore {
    * (what is stored is never overwritten unread), 'note-not-written' (the disk).
    */
   save(value: unknown, condition: SaveCondition): Promise<Result<SavedNote>>;
+  /** The stored notes of a study, by reader. What can't be read is left out: its own reader is told. */
+  list(studyInstanceUid: string): Promise<readonly ListedNote[]>;
   settled(): Promise<void>;
 }
 
@@ -88,6 +91,7 @@ export function createNotes(folder: string): NotesStore {
           );
         }
       }),
+    list: (study) => queue.run(() => listed(folder, study)),
     settled: queue.settled,
   };
 }
@@ -103,6 +107,26 @@ async function readStored(place: string): Promise<Result<StoredNote>> {
     return fileErrorCode(error) === 'ENOENT'
       ? refuse('no-note', 'There is no note of this study yet.')
       : refuse('note-unreadable', `The stored note can’t be read: ${reason}.`);
+  }
+}
+
+async function listed(folder: string, studyInstanceUid: string): Promise<readonly ListedNote[]> {
+  const found: ListedNote[] = [];
+  for (const name of await namesIn(folder)) {
+    const stored = await readStored(join(folder, name));
+    if (!stored.ok || stored.value.note.study.studyInstanceUid !== studyInstanceUid) continue;
+    const { reader, completion, verification, changedAt, regions } = stored.value.note;
+    found.push({ reader, completion, verification, changedAt, regions: regions.length });
+  }
+  return found.sort((a, b) => a.reader.localeCompare(b.reader, 'en'));
+}
+
+async function namesIn(folder: string): Promise<readonly string[]> {
+  try {
+    return (await readdir(folder)).sort();
+  } catch (error) {
+    if (fileErrorCode(error) === 'ENOENT') return [];
+    throw error;
   }
 }
 

@@ -26,6 +26,9 @@ export function noteRoutes(services: Services) {
         ETag: stored.value.etag,
       });
     })
+    .get('/notes/:studyInstanceUid/readers', async (context) =>
+      context.json(await services.notes.list(context.req.param('studyInstanceUid'))),
+    )
     .put(
       '/notes/:studyInstanceUid',
       limitBody(NOTE_BODY_BYTES),

@@ -111,6 +111,7 @@ export async function deidentifyNote(
     regions: note.regions.map((region) => cleanRegion(note, region, cleaner)),
     contrasts: note.contrasts.map((contrast) => cleanContrast(contrast, cleaner)),
     edges: note.edges.map((edge) => cleanEdge(edge, { ...cleaner, id: ids.idOf(edge.id) })),
+    repeats: note.repeats.map((repeat) => cleanRepeat(repeat, cleaner)),
     visibility:
       note.visibility === null
         ? null
@@ -185,6 +186,24 @@ function cleanRegion(note: Note, region: NoteRegion, cleaner: Cleaner): NoteRegi
   };
 }
 
+/** What was drawn again stays; who did it and when does not. */
+function cleanRepeat(repeat: Note['repeats'][number], cleaner: Cleaner): Note['repeats'][number] {
+  const { idOf } = cleaner.ids;
+  return {
+    id: idOf(repeat.id),
+    startedAt: '',
+    finishedAt: repeat.finishedAt === null ? null : '',
+    reader: '',
+    regions: repeat.regions.map(({ regionId, shape, soft, sharp }) => ({
+      regionId: idOf(regionId),
+      shape,
+      soft: cleanValue(soft, cleaner),
+      sharp: cleanValue(sharp, cleaner),
+    })),
+    skipped: repeat.skipped.map(idOf),
+  };
+}
+
 function cleanValue(value: NoteRegion['soft'], cleaner: Cleaner): NoteRegion['soft'] {
   if (value === null) return null;
   return {
@@ -229,28 +248,34 @@ function cleanFlag({ code, text }: Flag, { sentence }: Cleaner): Flag {
     : { code, text: sentence(text) };
 }
 
-function uidsOf({ study, pair, conditions, regions, edges }: Note): readonly string[] {
+function uidsOf({ study, pair, conditions, regions, edges, repeats }: Note): readonly string[] {
   return [
     study.studyInstanceUid,
     pair.soft.seriesInstanceUid,
     pair.sharp?.seriesInstanceUid,
     conditions.frameOfReferenceUid,
-    ...[...regions, ...edges].flatMap(({ soft, sharp }) => [
-      soft?.sopInstanceUid,
-      sharp?.sopInstanceUid,
-    ]),
+    ...[...regions, ...edges, ...repeats.flatMap((repeat) => repeat.regions)].flatMap(
+      ({ soft, sharp }) => [soft?.sopInstanceUid, sharp?.sopInstanceUid],
+    ),
   ].filter((uid) => typeof uid === 'string');
 }
 
 /** Every text that may be kept. */
-function sentencesOf({ pair, regions, contrasts, edges }: Note): readonly string[] {
+function sentencesOf({
+  pair,
+  regions,
+  contrasts,
+  edges,
+  repeats,
+  densities,
+}: Note): readonly string[] {
   const stacks = [pair.soft, ...(pair.sharp === null ? [] : [pair.sharp])];
   const flags = [
-    ...[...regions, ...edges].flatMap(({ soft, sharp }) => [
-      ...(soft?.flags ?? []),
-      ...(sharp?.flags ?? []),
-    ]),
+    ...[...regions, ...edges, ...repeats.flatMap((repeat) => repeat.regions)].flatMap(
+      ({ soft, sharp }) => [...(soft?.flags ?? []), ...(sharp?.flags ?? [])],
+    ),
     ...contrasts.flatMap((contrast) => contrast.flags),
+    ...densities.flatMap((density) => density.flags),
   ];
   return [
     ...pair.evidence.flatMap(({ check, text }) => [check, text]),

@@ -10,8 +10,8 @@ export interface SafeNames {
 const OWN_ID = /^[A-Z]\d{1,6}$/;
 
 /** Identifiers of regions, contrasts and findings that can't be anybody's name. */
-export function safeNames({ regions, contrasts, findings, edges }: Note): SafeNames {
-  const ids = [...regions, ...contrasts, ...findings, ...edges].map(({ id }) => id);
+export function safeNames({ regions, contrasts, findings, edges, repeats }: Note): SafeNames {
+  const ids = [...regions, ...contrasts, ...findings, ...edges, ...repeats].map(({ id }) => id);
   const foreign = [...new Set(ids.filter((id) => !OWN_ID.test(id)))];
   return {
     idOf: (id) => {

@@ -7,13 +7,16 @@ import {
 import type { Role, Shape } from '../../../core/region/index.js';
 import type { AppState } from '../appState.js';
 import { editNote } from '../history.js';
+import { isBlind, selectedRegion, shownRegions } from '../regionSelectors.js';
 import type { Change } from '../store.js';
 import { removeSelectedEdge } from './edges.js';
+import { placeRepeated } from './repeat.js';
 
 /** Puts a new region into the note and selects it. */
 export function placeRegion(role: Role, shape: Shape, values: RegionValues, now: string): Change {
   return (state) => {
     if (state.note === undefined) return state;
+    if (isBlind(state)) return placeRepeated(shape, values, now)(state);
     const added = addRegion(state.note, { role, shape, ...values }, now);
     const edited = editNote(`Mark ${added.region.label}`, () => added.note)(state);
     return { ...edited, selected: added.region.id, draft: undefined, openOutline: undefined };
@@ -40,7 +43,7 @@ export function reshapeRegion(
 /** Removes the selected region; the message says which contrasts went with it. */
 export function removeSelected(now: string): Change {
   return (state) => {
-    const region = state.note?.regions.find(({ id }) => id === state.selected);
+    const region = selectedRegion(state);
     if (state.note === undefined || region === undefined) return removeSelectedEdge(now)(state);
     const { note, removedContrasts } = removeRegion(state.note, region.id, now);
     const edited = editNote(`Delete ${region.label}`, () => note)(state);
@@ -72,7 +75,7 @@ export function selectRegion(id: string | undefined): Change {
 /** Selects the next or the previous region in the order of making; from none, the first or the last. */
 export function stepSelection(step: 1 | -1): Change {
   return (state) => {
-    const ids = state.note?.regions.map(({ id }) => id) ?? [];
+    const ids = shownRegions(state).map(({ id }) => id);
     if (ids.length === 0) return state;
     const at = state.selected === undefined ? -1 : ids.indexOf(state.selected);
     const next = at < 0 ? (step > 0 ? 0 : ids.length - 1) : (at + step + ids.length) % ids.length;

@@ -60,6 +60,7 @@ export function sampleNote(
     visibility: null,
     edges: [],
     contrasts: [],
+    repeats: [],
     conditionsByReader: [],
     bandTable: 'six-classes',
     densities: [],
