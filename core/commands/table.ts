@@ -35,7 +35,8 @@ export const COMMANDS = [
   command('pair.swap', 'Swap soft and sharp', 'File'),
   command('pair.mask', 'Leave unmarked padding out', 'File', { toggle: true }),
   command('folder.contents', 'Folder contents and files left out…', 'File'),
-  command('export.csv', 'Export table as CSV…', 'File', { key: 'Mod+E', separated: true }),
+  command('export.open', 'Export…', 'File', { key: 'Mod+Shift+X', separated: true }),
+  command('export.csv', 'Export table as CSV…', 'File', { key: 'Mod+E' }),
   command('export.html', 'Export page as HTML…', 'File', { key: 'Mod+Shift+E' }),
   command('export.json', 'Export note as JSON…', 'File'),
 

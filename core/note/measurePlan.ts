@@ -95,8 +95,21 @@ export function measurePlan(
       return refuse('duplicate-id', `The plan has more than one ${what} ${twice}. Name each once.`);
     }
   }
+  const sideOf = (stack: Stack, kernel: Kernel) => ({
+    stack,
+    storedOf: (sliceIndex: number) => storedOf(stack, sliceIndex),
+    noise: noise[kernel],
+  });
+  const [softSide, sharpSide] = [sideOf(soft, 'soft'), sharp && sideOf(sharp, 'sharp')];
+  const isOneSpace = notOnSharp === undefined;
   const on = (stack: Stack, { shape }: PlanRegion, kernel: Kernel) =>
-    measureRegion(shape, stack, (sliceIndex) => storedOf(stack, sliceIndex), noise[kernel]);
+    measureRegion(
+      shape,
+      stack,
+      (sliceIndex) => storedOf(stack, sliceIndex),
+      noise[kernel],
+      isOneSpace ? (kernel === 'soft' ? sharpSide : softSide) : undefined,
+    );
   const onSharp = (stack: Stack, region: PlanRegion) =>
     notOnSharp === undefined ? on(stack, region, 'sharp') : notMeasured(region.shape, notOnSharp);
   const regions = plan.regions.map(

@@ -1,6 +1,13 @@
+import type { EdgeKind } from './nearEdgeStructures.js';
 import type { Flag } from './value.js';
 
 const NO_STANDARD_ERROR = 'no-standard-error';
+
+const EDGE_NAME: Readonly<Record<EdgeKind, string>> = {
+  strut: 'A strut',
+  calcium: 'Calcium or bone',
+  air: 'Air',
+};
 
 /** What may be said of a measured value. Each sentence says what it means for the reader. */
 export const FLAGS = {
@@ -70,6 +77,30 @@ export const FLAGS = {
     code: NO_STANDARD_ERROR,
     text: 'No standard error: no pixel lies inside.',
   },
+  fewPixels: (count: number): Flag => ({
+    code: 'few-pixels',
+    text: `Only ${count} pixels inside: the SD is uncertain by more than a fifth. Make the region larger.`,
+  }),
+  belowTwoBlurs: (blurMm: number): Flag => ({
+    code: 'below-two-blurs',
+    text: `The region is narrower than twice the blur of this kernel (${blurMm.toFixed(2)} mm): its mean takes in what lies around. Make it wider; where the tissue has no room, say so beside the number.`,
+  }),
+  nearEdge: (kind: EdgeKind, distanceMm: number, blurMm: number): Flag => ({
+    code: `near-${kind}`,
+    text: `${EDGE_NAME[kind]} lies ${distanceMm < 0.05 ? 'in the region or at its border' : `about ${distanceMm.toFixed(1)} mm from the region`}, and this kernel blurs by ${blurMm.toFixed(2)} mm: the mean is not of this tissue alone. Move the region away or make it smaller.`,
+  }),
+  edgesNotSought: {
+    code: 'edges-not-sought',
+    text: 'Struts, calcium and air close by were not looked for: the blur of this kernel was not measured. Look for them yourself.',
+  },
+  sliceApart: (offsetMm: number, spacingMm: number): Flag => ({
+    code: 'slice-apart',
+    text: `The slice lies ${offsetMm.toFixed(2)} mm from the region, more than a quarter of the spacing of ${spacingMm.toFixed(2)} mm: it may show other tissue. Draw the region on a slice that lies nearer to one of the other stack.`,
+  }),
+  beyondShared: {
+    code: 'beyond-shared-field',
+    text: 'The region reaches beyond what the other stack shows: the two kernels can’t be compared here. Move it into the field that both share.',
+  },
   noPlacement: {
     code: 'no-placement',
     text: 'No placement sensitivity: moved by half a pixel or made 0.25 mm smaller, the region holds no pixel. Make it larger.',
@@ -78,5 +109,5 @@ export const FLAGS = {
 
 /** Flags that hold for every value alike: said in exports and help, not beside each number in the window. */
 export function isQuiet(flag: Flag): boolean {
-  return flag.code === FLAGS.noStandardError.code;
+  return flag.code === FLAGS.noStandardError.code || flag.code === FLAGS.edgesNotSought.code;
 }

@@ -4,8 +4,10 @@ import { isUnscaled, type Stack, type StackSlice } from '../stack/index.js';
 import { shapeArea } from './area.js';
 import { findSlice } from './findSlice.js';
 import { FLAGS } from './flags.js';
+import type { StackBeside } from './nearEdgeSearch.js';
 import { visitRuns } from './pixelsInside.js';
 import { placementSensitivity } from './placement.js';
+import { regionFlags } from './regionFlags.js';
 import type { Shape } from './shape.js';
 import { type NoiseOfStack, regionStandardError } from './standardError.js';
 import { statistics } from './statistics.js';
@@ -19,12 +21,14 @@ export type StoredOf = (sliceIndex: number) => StoredValues | undefined;
  * out, nothing resampled. What can't be had is null, and a flag says why.
  *
  * @param texture the noise of the stack's kernel, for the standard error of the mean; or why it is not known
+ * @param beside the other stack of the pair, in the same space: strong edges show best on the sharper
  */
 export function measureRegion(
   shape: Shape,
   stack: Stack,
   storedOf: StoredOf,
   texture: NoiseOfStack = FLAGS.noStandardError,
+  beside?: StackBeside,
 ): RegionValue {
   if (isUnscaled(stack)) return withoutValue(shape, null, null, null, [FLAGS.noPixelSpacing]);
   const found = findSlice(shape, stack);
@@ -38,7 +42,8 @@ export function measureRegion(
   if (stack.unit !== 'HU') {
     return withoutValue(shape, sliceIndex, offsetMm, slice, [FLAGS.notHu(stack.unit)]);
   }
-  return measureOnSlice(shape, slice, stored, { sliceIndex, offsetMm, texture });
+  const where = { stack, sliceIndex, offsetMm, texture, beside };
+  return measureOnSlice(shape, slice, stored, where);
 }
 
 /** HU of the pixels in a shape on one slice, padding left out, with what was left out. */
@@ -83,15 +88,19 @@ function copyRun(
   return next;
 }
 
+interface MeasuredWhere {
+  readonly stack: Stack;
+  readonly sliceIndex: number;
+  readonly offsetMm: number;
+  readonly texture: NoiseOfStack;
+  readonly beside: StackBeside | undefined;
+}
+
 function measureOnSlice(
   shape: Shape,
   slice: StackSlice,
   stored: StoredValues,
-  {
-    sliceIndex,
-    offsetMm,
-    texture,
-  }: { readonly sliceIndex: number; readonly offsetMm: number; readonly texture: NoiseOfStack },
+  { stack, sliceIndex, offsetMm, texture, beside }: MeasuredWhere,
 ): RegionValue {
   const { grid, acquisition } = slice.image;
   const { values, padding, overBorder } = regionValues(shape, slice, stored);
@@ -108,6 +117,10 @@ function measureOnSlice(
   if (sd === 0) flags.push(FLAGS.zeroSd);
   if (mean !== undefined && placement === undefined) flags.push(FLAGS.noPlacement);
   if (acquisition.lossy) flags.push(FLAGS.lossy);
+  if (median !== undefined) {
+    const own = { slice, stored, noise: texture };
+    flags.push(...regionFlags(shape, stack, own, { n, offsetMm, medianHu: median }, beside));
+  }
   return {
     n,
     meanHu: mean ?? null,

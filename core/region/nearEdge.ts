@@ -3,7 +3,7 @@ import type { SliceGrid } from '../geometry/index.js';
 import type { StackSlice } from '../stack/index.js';
 import { borderInPlane, distanceFrom, type PlaneMm } from './nearEdgeDistance.js';
 import type { EdgeLevels } from './nearEdgeLevels.js';
-import { type EdgeKind, type Structure, structuresIn } from './nearEdgeStructures.js';
+import { type EdgeKind, type Structure, soughtBy, structuresIn } from './nearEdgeStructures.js';
 import { type EdgeWindow, edgeWindow, type PixelBounds } from './nearEdgeWindow.js';
 import type { Shape } from './shape.js';
 
@@ -20,7 +20,7 @@ export interface NearEdge {
  * The contour of a structure is known to this share of the blur, from both sides: a thin strut's contour lies half a
  * blur before it, noise and pixels move either.
  */
-const UNCERTAIN = 0.4;
+const UNCERTAIN = 0.45;
 /** The contour is followed so far beyond a structure's pixels. */
 const MOST_BEYOND_BLURS = 0.5;
 /** The window goes on beyond what may be near, so that a strut shows its shape, in blurs and mm. */
@@ -50,7 +50,9 @@ export function nearEdges(
   const border = borderInPlane(shape, grid);
   const reachMm = (1 + UNCERTAIN) * withinMm;
   const bounds = boundsAround(border, reachMm + BEYOND_BLURS * levels.blurMm + BEYOND_MM, grid);
-  const window = edgeWindow(slice, stored, bounds, levels.smoothingMm, regionHu);
+  const sought = soughtBy(levels, regionHu);
+  const window = edgeWindow(slice, stored, bounds, levels.smoothingMm, regionHu, sought);
+  if (window === undefined) return [];
   return structuresIn(window, spacingMm, levels, regionHu)
     .flatMap((structure): NearEdge[] => {
       const distanceMm = distanceTo(structure, window, border, spacingMm, levels.blurMm);
@@ -98,7 +100,10 @@ function distanceTo(
     const [row, column] = [Math.floor(at / columns), at % columns];
     const level = levelHu[index] as number;
     for (const [dx, dy] of SIDEWAYS) {
-      const steps = Math.max(1, Math.round((MOST_BEYOND_BLURS * blurMm) / (dx === 0 ? downMm : acrossMm)));
+      const steps = Math.max(
+        1,
+        Math.round((MOST_BEYOND_BLURS * blurMm) / (dx === 0 ? downMm : acrossMm)),
+      );
       let value = hu[at] as number;
       for (let step = 1; step <= steps; step++) {
         const [c, r] = [column + dx * step, row + dy * step];

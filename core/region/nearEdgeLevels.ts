@@ -22,7 +22,7 @@ const SMOOTHING_PER_BLUR = 0.25;
 const LUMEN_SPREAD = 0.1;
 /** Noise alone goes so many SDs above the lumen in one of some 10,000 looks at a window, and so many anywhere. */
 const BRIGHT_SDS = 2.2;
-const PEAK_SDS = 4.2;
+const PEAK_SDS = 4.6;
 /** What is longer than so many blurs is no grain of noise. */
 const LONG_BLURS = 4.5;
 /** Even areas farther away than this tell of another vessel or of bone, mm. */
@@ -56,8 +56,9 @@ function brightestNear({ places = [] }: KernelTexture, placeMm: Vec3): number | 
   for (const { centreMm: at, meanHu } of places) {
     if (meanHu === undefined) continue;
     any = Math.max(any, meanHu);
-    const apart = Math.hypot(at[0] - placeMm[0], at[1] - placeMm[1], at[2] - placeMm[2]);
-    if (apart <= NEAR_MM) near = Math.max(near, meanHu);
+    const squared =
+      (at[0] - placeMm[0]) ** 2 + (at[1] - placeMm[1]) ** 2 + (at[2] - placeMm[2]) ** 2;
+    if (squared <= NEAR_MM * NEAR_MM) near = Math.max(near, meanHu);
   }
   if (any === -Infinity) return undefined;
   return near === -Infinity ? any : near;

@@ -1,5 +1,5 @@
 import type { EdgeLevels } from './nearEdgeLevels.js';
-import type { EdgeWindow } from './nearEdgeWindow.js';
+import type { EdgeWindow, Sought } from './nearEdgeWindow.js';
 
 /** What a strong edge is the edge of. Bone counts as calcium. */
 export type EdgeKind = 'strut' | 'calcium' | 'air';
@@ -23,6 +23,11 @@ const AIR_SEED_HU = -600;
 /** The brightest pixel within this many blurs is the height of a structure at a place. */
 const HEIGHT_BLURS = 0.75;
 
+/** What may hold a structure at all. A region that is air itself lies at no edge of air. */
+export function soughtBy({ brightHu }: EdgeLevels, regionHu: number): Sought {
+  return { aboveHu: brightHu, belowHu: regionHu < AIR_HU ? -Infinity : AIR_HU };
+}
+
 /**
  * Bright structures and air in a smoothed window. A bright structure is a connected set of pixels above the enhanced
  * lumen, with a peak that noise does not reach, or a length that it does not. Its border at a place is the contour
@@ -37,16 +42,15 @@ export function structuresIn(
   regionHu: number,
 ): readonly Structure[] {
   const { hu } = window;
-  const isBright = (at: number): boolean => (hu[at] as number) > levels.brightHu;
+  const { aboveHu, belowHu } = soughtBy(levels, regionHu);
+  const isBright = (at: number): boolean => (hu[at] as number) > aboveHu;
   const bright = components(window, isBright).flatMap((pixels): Structure[] => {
     const isStrong =
       pixels.some((at) => (hu[at] as number) >= levels.peakHu) ||
       extentMm(pixels, window, spacingMm) >= levels.longMm;
     return isStrong ? [brightStructure(pixels, window, spacingMm, levels, regionHu)] : [];
   });
-  // A region that is air itself lies at no edge of air.
-  if (regionHu < AIR_HU) return bright;
-  const air = components(window, (at) => (hu[at] as number) < AIR_HU).flatMap(
+  const air = components(window, (at) => (hu[at] as number) < belowHu).flatMap(
     (pixels): Structure[] =>
       pixels.some((at) => (hu[at] as number) <= AIR_SEED_HU)
         ? [{ kind: 'air', pixels, behindBlurs: 0, levelHu: pixels.map(() => AIR_HU) }]
@@ -91,7 +95,7 @@ const LEAST_ASPECT = 2.5;
 const THIN_BLURS = 1.5;
 
 /** A bent strut is thin; what is long and straight may be a narrow grain too. */
-const BENT_BEHIND = 0.35;
+const BENT_BEHIND = 0.3;
 const STRAIGHT_BEHIND = 0.15;
 
 /** Struts are thin and bent or long; calcium is compact. Decided by the shape of the contour, and by a dip in its middle. */
@@ -102,7 +106,7 @@ function brightKind(
   [acrossMm, downMm]: readonly [number, number],
   levels: EdgeLevels,
 ): Pick<Structure, 'kind' | 'behindBlurs'> {
-  let [sumX, sumY, sumXX, sumYY, sumXY, peak] = [0, 0, 0, 0, 0, -Infinity];
+  let [sumX, sumY, sumXX, sumYY, sumXY, sumHu] = [0, 0, 0, 0, 0, 0];
   for (const at of pixels) {
     const [x, y] = [(at % columns) * acrossMm, Math.floor(at / columns) * downMm];
     sumX += x;
@@ -110,7 +114,7 @@ function brightKind(
     sumXX += x * x;
     sumYY += y * y;
     sumXY += x * y;
-    peak = Math.max(peak, hu[at] as number);
+    sumHu += hu[at] as number;
   }
   const n = pixels.length;
   const [x, y] = [sumX / n, sumY / n];
@@ -124,9 +128,7 @@ function brightKind(
   const fill = (n * acrossMm * downMm) / (4 * Math.PI * Math.sqrt(long * short));
   if (fill <= MOST_FILL) return { kind: 'strut', behindBlurs: BENT_BEHIND };
   const middle = hu[Math.round(y / downMm) * columns + Math.round(x / acrossMm)] as number;
-  const isHollow =
-    middle < peak - 0.5 * (levels.peakHu - levels.lumenHu) &&
-    n * acrossMm * downMm > 4 * levels.blurMm ** 2;
+  const isHollow = middle < sumHu / n - (levels.peakHu - levels.lumenHu) / 2;
   const isThin = 4 * Math.sqrt(short) <= THIN_BLURS * levels.blurMm;
   const isLong = Math.sqrt(long / short) >= LEAST_ASPECT;
   if (isHollow) return { kind: 'strut', behindBlurs: BENT_BEHIND };

@@ -20,33 +20,45 @@ export interface PixelBounds {
   readonly bottom: number;
 }
 
+/** What is looked for in a window: nothing is smoothed where no pixel lies beyond these. */
+export interface Sought {
+  readonly aboveHu: number;
+  readonly belowHu: number;
+}
+
 /**
  * Cuts a rectangle out of a slice and smooths it with a Gaussian, `smoothingMm` its standard deviation along rows and
  * columns alike, whatever the pixels' sides are. Padding, and what is no image, counts as `fillHu`: it is no edge. At
  * the border of the rectangle the last pixel goes on.
+ *
+ * @returns undefined where no pixel lies beyond what is sought: smoothing makes none that does
  */
 export function edgeWindow(
   { image: { grid, pixels } }: StackSlice,
   stored: StoredValues,
-  bounds: PixelBounds,
+  { left, right, top, bottom }: PixelBounds,
   smoothingMm: number,
   fillHu: number,
-): EdgeWindow {
-  const { left, top } = bounds;
-  const columns = Math.max(0, bounds.right - left + 1);
-  const rows = Math.max(0, bounds.bottom - top + 1);
+  sought: Sought,
+): EdgeWindow | undefined {
+  const columns = Math.max(0, right - left + 1);
+  const rows = Math.max(0, bottom - top + 1);
   const raw = new Float64Array(columns * rows);
+  const { padding } = pixels;
   const line = pixels.modalityLut === undefined ? pixels.rescale : undefined;
+  let [least, most] = [Infinity, -Infinity];
   for (let row = 0, at = 0; row < rows; row++) {
     const start = (top + row) * grid.columns + left;
     for (let column = 0; column < columns; column++, at++) {
       const value = stored[start + column] as number;
-      const hu = line === undefined ? rescaled(value, pixels) : value * line.slope + line.intercept;
-      const isImage =
-        hu >= LOWEST_IMAGE_HU && (pixels.padding === undefined || !isPadding(value, pixels));
-      raw[at] = isImage ? hu : fillHu;
+      let hu = line === undefined ? rescaled(value, pixels) : value * line.slope + line.intercept;
+      if (hu < LOWEST_IMAGE_HU || (padding !== undefined && isPadding(value, pixels))) hu = fillHu;
+      if (hu < least) least = hu;
+      if (hu > most) most = hu;
+      raw[at] = hu;
     }
   }
+  if (most <= sought.aboveHu && least >= sought.belowHu) return undefined;
   const hu = smoothed(raw, columns, rows, smoothingMm, grid);
   return { column: left, row: top, columns, rows, hu };
 }
@@ -58,18 +70,18 @@ function smoothed(
   smoothingMm: number,
   { pixelSpacingMm }: SliceGrid,
 ): Float64Array {
-  const across = gaussianTaps(smoothingMm / pixelSpacingMm[1]);
-  const down = gaussianTaps(smoothingMm / pixelSpacingMm[0]);
   const along = new Float64Array(raw.length);
-  for (let row = 0; row < rows; row++) convolve(raw, along, row * columns, 1, columns, across);
+  const across = gaussianTaps(smoothingMm / pixelSpacingMm[1]);
+  for (let row = 0; row < rows; row++) smoothRow(raw, along, row * columns, columns, across);
   const both = new Float64Array(raw.length);
+  const down = gaussianTaps(smoothingMm / pixelSpacingMm[0]);
   for (let row = 0; row < rows; row++) addRows(along, both, row, columns, rows, down);
   return both;
 }
 
 /** One half of the taps, the middle one first; they sum to 1 with the other half. */
 function gaussianTaps(sigmaPixels: number): Float64Array {
-  const reach = Math.ceil(2.5 * sigmaPixels);
+  const reach = Math.ceil(2 * sigmaPixels);
   const taps = Float64Array.from({ length: reach + 1 }, (_, n) =>
     n === 0 ? 1 : Math.exp(-(n * n) / (2 * sigmaPixels * sigmaPixels)),
   );
@@ -77,23 +89,22 @@ function gaussianTaps(sigmaPixels: number): Float64Array {
   return taps.map((tap) => tap / sum);
 }
 
-function convolve(
+function smoothRow(
   from: Float64Array,
   to: Float64Array,
   start: number,
-  step: number,
-  count: number,
+  columns: number,
   taps: Float64Array,
 ): void {
-  const reach = taps.length - 1;
-  for (let at = 0; at < count; at++) {
-    let sum = (taps[0] as number) * (from[start + at * step] as number);
-    for (let n = 1; n <= reach; n++) {
-      const before = from[start + Math.max(0, at - n) * step] as number;
-      const after = from[start + Math.min(count - 1, at + n) * step] as number;
-      sum += (taps[n] as number) * (before + after);
+  const last = start + columns - 1;
+  for (let at = start; at <= last; at++) {
+    let sum = (taps[0] as number) * (from[at] as number);
+    for (let n = 1; n < taps.length; n++) {
+      const before = Math.max(at - n, start);
+      const after = Math.min(at + n, last);
+      sum += (taps[n] as number) * ((from[before] as number) + (from[after] as number));
     }
-    to[start + at * step] = sum;
+    to[at] = sum;
   }
 }
 
@@ -107,16 +118,16 @@ function addRows(
   taps: Float64Array,
 ): void {
   const start = row * columns;
-  for (let n = 0; n < taps.length; n++) {
+  const middle = taps[0] as number;
+  for (let column = 0; column < columns; column++)
+    to[start + column] = middle * (from[start + column] as number);
+  for (let n = 1; n < taps.length; n++) {
     const tap = taps[n] as number;
     const before = Math.max(0, row - n) * columns;
     const after = Math.min(rows - 1, row + n) * columns;
-    for (let column = 0; column < columns; column++) {
-      const values =
-        n === 0
-          ? (from[start + column] as number)
-          : (from[before + column] as number) + (from[after + column] as number);
-      to[start + column] = (to[start + column] as number) + tap * values;
-    }
+    for (let column = 0; column < columns; column++)
+      to[start + column] =
+        (to[start + column] as number) +
+        tap * ((from[before + column] as number) + (from[after + column] as number));
   }
 }

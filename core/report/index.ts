@@ -7,6 +7,7 @@ export * from './exportFileName.js';
 export * from './identityStatement.js';
 export * from './measurementTable.js';
 export * from './noteFacts.js';
+export * from './pictureHtml.js';
 export * from './regionQuantities.js';
 export * from './spreadsheetCell.js';
 export * from './sr/index.js';

@@ -3,6 +3,7 @@ import type { Kernel, Note, NoteContrast, NoteFinding, NoteRegion } from '../not
 import { segmentOf } from '../note/segments.js';
 import { type Flag, isQuiet, shapeCentre } from '../region/index.js';
 import { cautionsOf } from './cautions.js';
+import { densityQuantities } from './densityQuantities.js';
 import { type Fact, noteFacts } from './noteFacts.js';
 import { quoteWords } from './quoteWords.js';
 import { type QuantityValue, regionQuantities } from './regionQuantities.js';
@@ -83,18 +84,29 @@ function regionRow(note: Note, region: NoteRegion): TableRow {
     centreMm: shapeCentre(region.shape),
     kernels: kernelsOf(note).map(({ kernel, stack }) => {
       const value = region[kernel];
+      // Density is read on the soft kernel.
+      const density =
+        kernel === 'soft'
+          ? note.densities.find(({ regionId }) => regionId === region.id)
+          : undefined;
       return {
         kernel,
         kernelLabel: stack.kernelLabel,
         seriesInstanceUid: stack.seriesInstanceUid,
         quoted: region.quote === kernel || region.quote === 'both',
-        quantities: value === null ? [] : regionQuantities(value, stack.unit),
+        quantities:
+          value === null
+            ? []
+            : [...regionQuantities(value, stack.unit), ...densityQuantities(density)],
         sliceIndex: value?.sliceIndex ?? null,
         slices: stack.slices,
         sliceOffsetMm: value?.sliceOffsetMm ?? null,
         sopInstanceUid: value?.sopInstanceUid ?? null,
         frameNumber: value?.frameNumber ?? null,
-        flags: value === null ? ['Not measured on this kernel.'] : spoken(value.flags),
+        flags:
+          value === null
+            ? ['Not measured on this kernel.']
+            : spoken([...value.flags, ...(density?.flags ?? [])]),
       };
     }),
     flags: [],

@@ -1,7 +1,9 @@
 import { formatFixed, formatPosition } from '../format/index.js';
 import type { Note } from '../note/schema.js';
+import { densityHtml } from './densityHtml.js';
 import { edgeLineHtml } from './edgeLineHtml.js';
 import { escapeHtml } from './escapeHtml.js';
+import { lifeHtml } from './lifeHtml.js';
 import {
   type KernelValues,
   type MeasurementTable,
@@ -9,20 +11,21 @@ import {
   type TableRow,
 } from './measurementTable.js';
 import { PAGE_STYLE } from './pageStyle.js';
+import { type PagePictures, pictureHtml } from './pictureHtml.js';
 import { flagsText } from './wideTable.js';
 
 /**
- * One page that needs nothing else: no script, no picture, no address. The policy in it forbids all of them, so that
- * text from a file could do no harm even if it were not escaped.
+ * One page that needs nothing else: no script, no address, and no picture but those that it holds itself. The policy in
+ * it forbids all others, so that text from a file could do no harm even if it were not escaped.
  */
-export function toHtml(note: Note): string {
+export function toHtml(note: Note, pictures: PagePictures = new Map()): string {
   const table = measurementTable(note);
   const title = `Measurements, ${note.study.patientId ?? 'patient ID not stated'}`;
   return `<!doctype html>
 <html lang="en">
 <head>
 <meta charset="utf-8">
-<meta http-equiv="Content-Security-Policy" content="default-src 'none'; style-src 'unsafe-inline'">
+<meta http-equiv="Content-Security-Policy" content="default-src 'none'; style-src 'unsafe-inline'${pictures.size > 0 ? '; img-src data:' : ''}">
 <meta name="viewport" content="width=device-width">
 <title>${escapeHtml(title)}</title>
 <style>${PAGE_STYLE}</style>
@@ -34,7 +37,7 @@ ${cautions(table)}
 ${regions(table)}
 <h2>Contrasts</h2>
 ${contrasts(table)}
-${edgeLineHtml(note)}<h2>Where the numbers come from</h2>
+${densityHtml(table)}${edgeLineHtml(note)}${pictureHtml(table, pictures)}${lifeHtml(note)}<h2>Where the numbers come from</h2>
 ${facts(table)}
 ${cautions(table)}
 ${banner(table)}</body>
@@ -63,6 +66,7 @@ const REGION_COLUMNS = [
   'area',
   'sampled area',
   'SNR',
+  'standard error',
   'placement',
 ];
 
@@ -78,7 +82,7 @@ function regions({ rows, remarks }: MeasurementTable): string {
 <thead><tr><th scope="col">Region</th><th scope="col">Kernel</th>${heads.join('')}<th scope="col" class="number">Slice</th><th scope="col">Quoted</th></tr></thead>
 ${ofRegions.map(regionBody).join('\n')}
 </table>
-<p class="small">Mean: sum / n. SD: sample SD, divisor n − 1. n: pixels with their centre inside, edge included. Area: of the shape; sampled area: n times the area of a pixel. SNR: mean / SD of the same region. Placement: largest change of the mean when the region moves by half a pixel in eight directions. Slices are counted from 1.${remarks.map((text) => ` ${escapeHtml(text)}`).join('')}</p>`;
+<p class="small">Mean: sum / n. SD: sample SD, divisor n − 1. n: pixels with their centre inside, edge included. Area: of the shape; sampled area: n times the area of a pixel. SNR: mean / SD of the same region. Standard error: of the mean, from the autocorrelation of the noise on that kernel. Placement: largest change of the mean when the region moves by half a pixel in eight directions or its edge by 0.25 mm. Slices are counted from 1.${remarks.map((text) => ` ${escapeHtml(text)}`).join('')}</p>`;
 }
 
 function regionBody(row: TableRow): string {

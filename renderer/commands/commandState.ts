@@ -27,6 +27,7 @@ const NEEDS_REGIONS: ReadonlySet<CommandId> = new Set(['region.next', 'region.pr
 
 /** Commands that would show something of the first reading while it is read again. */
 const TELLS_FIRST: ReadonlySet<CommandId> = new Set([
+  'export.open',
   'export.csv',
   'export.html',
   'export.json',

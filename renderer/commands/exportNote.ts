@@ -1,5 +1,5 @@
 import type { Note } from '../../core/note/index.js';
-import { toClipboardHtml, toCsv, toHtml, toTsv } from '../../core/report/index.js';
+import { exportFileName, toClipboardHtml, toCsv, toHtml, toTsv } from '../../core/report/index.js';
 import type { Shell } from '../host/shell.js';
 import type { Message } from '../state/appState.js';
 
@@ -7,13 +7,13 @@ export type ExportKind = 'csv' | 'html' | 'json';
 
 const WRITERS: Readonly<Record<ExportKind, (note: Note) => string>> = {
   csv: toCsv,
-  html: toHtml,
+  html: (note) => toHtml(note),
   json: (note) => `${JSON.stringify(note, null, 2)}\n`,
 };
 
 /** Saves an export under a name without anything of the patient; what to tell the reader. */
 export async function exportNote(note: Note, kind: ExportKind, shell: Shell): Promise<Message> {
-  const name = `reading-note-${note.changedAt.slice(0, 10)}.${kind}`;
+  const name = exportFileName(note, kind);
   const bytes = new TextEncoder().encode(WRITERS[kind](note));
   const saved = await shell.saveFile(name, bytes);
   if (!saved) return { tone: 'plain', text: 'Nothing was exported.' };

@@ -86,6 +86,7 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
       void bench.turnMask();
     },
     'folder.contents': dialog('contents'),
+    'export.open': dialog('export'),
     'export.csv': save('csv'),
     'export.html': save('html'),
     'export.json': save('json'),

@@ -31,7 +31,8 @@ export type DialogId =
   | 'note'
   | 'recheck'
   | 'keyImage'
-  | 'agreement';
+  | 'agreement'
+  | 'export';
 
 /** The two stacks on the plates; without a sharp one a single stack is read. */
 export interface PairState {

@@ -13,6 +13,7 @@ import { changeSettings } from '../services/start.js';
 import { editNote } from '../state/history.js';
 import { AgreementView } from './AgreementView.js';
 import { ChoosePairView } from './ChoosePairView.js';
+import { ExportView } from './ExportView.js';
 import { KeyImageView } from './KeyImageView.js';
 import { keyNames } from './keyNames.js';
 import { NoteDialogView } from './NoteDialogView.js';
@@ -42,6 +43,8 @@ export function DialogsView() {
       return <NewContrastView onClose={close} />;
     case 'keyImage':
       return <KeyImageView onClose={close} />;
+    case 'export':
+      return <ExportView onClose={close} />;
     case 'agreement':
       return <AgreementView onClose={close} />;
     case 'note':

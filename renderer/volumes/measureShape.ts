@@ -20,6 +20,9 @@ interface Remembered {
   readonly volume: Volume;
   readonly stored: StoredSlice | undefined;
   readonly noise: NoiseOfStack;
+  /** The other stack's slice at the shape, and its noise: edges close by are looked for on the sharper. */
+  readonly besideStored: StoredSlice | undefined;
+  readonly besideNoise: NoiseOfStack | undefined;
   readonly value: RegionValue;
 }
 
@@ -36,7 +39,7 @@ export function createMeasureShape(
 ): MeasureShape {
   const memory = new WeakMap<Shape, Remembered[]>();
 
-  const onVolume = (shape: Shape, volume: Volume): RegionValue | null => {
+  const onVolume = (shape: Shape, volume: Volume, other?: Volume): RegionValue | null => {
     const found = findSlice(shape, volume.stack);
     const index = found.ok ? found.value.sliceIndex : undefined;
     const stored = index === undefined ? undefined : volume.slice(index);
@@ -48,20 +51,40 @@ export function createMeasureShape(
       if (before?.noise !== noise) volume.ask(index);
       return before?.value ?? null;
     }
+    const besideStored = other && storedAt(shape, other);
+    const besideNoise = other && noiseOf(other);
+    // The other slice may have been dropped since: what was found on it still holds.
     const same = known.find(
-      (entry) => entry.volume === volume && entry.stored === stored && entry.noise === noise,
+      (entry) =>
+        entry.volume === volume &&
+        entry.stored === stored &&
+        entry.noise === noise &&
+        entry.besideNoise === besideNoise &&
+        (entry.besideStored === besideStored || besideStored === undefined),
     );
     if (same !== undefined) return same.value;
-    const value = measureRegion(shape, volume.stack, (slice) => volume.slice(slice), noise);
+    const beside = other &&
+      besideNoise && {
+        stack: other.stack,
+        storedOf: (slice: number) => other.slice(slice),
+        noise: besideNoise,
+      };
+    const storedOf = (slice: number) => volume.slice(slice);
+    const value = measureRegion(shape, volume.stack, storedOf, noise, beside);
     memory.set(shape, [
       ...known.filter((entry) => entry.volume !== volume),
-      { volume, stored, noise, value },
+      { volume, stored, noise, besideStored, besideNoise, value },
     ]);
     return value;
   };
 
   return (shape, { soft, sharp }) => ({
-    soft: onVolume(shape, soft),
-    sharp: sharp === undefined ? null : onVolume(shape, sharp),
+    soft: onVolume(shape, soft, sharp),
+    sharp: sharp === undefined ? null : onVolume(shape, sharp, soft),
   });
+}
+
+function storedAt(shape: Shape, volume: Volume): StoredSlice | undefined {
+  const found = findSlice(shape, volume.stack);
+  return found.ok ? volume.slice(found.value.sliceIndex) : undefined;
 }

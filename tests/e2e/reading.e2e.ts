@@ -13,6 +13,7 @@ import {
   waitForSaved,
   watchPage,
 } from './support/bench.js';
+import { diptych, exportFromWindow, FORMS, textOf } from './support/exports.js';
 import { type RunningShell, startShell, temporaryHome } from './support/shell.js';
 
 /** The default start: no folder, so the demonstration study is made and opened. The tests go on from each other. */
@@ -176,6 +177,20 @@ async function hingeNumbers(): Promise<Quantities> {
   return { soft: await all('soft'), sharp: await all('sharp') };
 }
 
+function notePath(): string {
+  const notes = join(home.path, 'data', 'notes');
+  const [folder] = readdirSync(notes);
+  return join(notes, folder ?? '', 'note.json');
+}
+
+/** The folder of the demonstration study. */
+function studyFolder(): string {
+  const truth = readdirSync(home.path, { recursive: true, encoding: 'utf8' }).find((name) =>
+    name.endsWith('truth.json'),
+  );
+  return join(home.path, truth ?? '', '..');
+}
+
 function savedNote(): Note {
   const notes = join(home.path, 'data', 'notes');
   const [folder] = readdirSync(notes);
@@ -267,8 +282,50 @@ test('deleting a region takes its contrast, and undo brings both back', async ()
   await row.getByLabel('Noise of contrast C1').selectOption('wall');
 });
 
-/** The places that the study's own truth file names, as marks of the saved note; the page measures them on opening. */
-function markTruth(): void {
+/** Which finding the places of the truth file belong to. */
+const FINDING_OF: Readonly<Record<string, string>> = {
+  L1: 'D1',
+  W1: 'D1',
+  P1: 'D2',
+  P2: 'D3',
+  R1: 'D4',
+};
+
+const FINDINGS = [
+  {
+    id: 'D1',
+    segment: 7,
+    kind: 'stent',
+    nominalMm: 3,
+    lengthMm: 8,
+    overlap: false,
+    assessability: 'limited',
+    reason: 'struts bloom on the soft kernel',
+  },
+  {
+    id: 'D2',
+    segment: 6,
+    kind: 'non-calcified plaque',
+    nominalMm: null,
+    assessability: 'assessable',
+    reason: '',
+  },
+  {
+    id: 'D3',
+    segment: 6,
+    kind: 'calcified plaque',
+    nominalMm: null,
+    assessability: 'limited',
+    reason: 'blooming',
+  },
+  { id: 'D4', segment: null, kind: 'reference', nominalMm: null, assessability: null, reason: '' },
+] as const;
+
+/**
+ * The places that the study's own truth file names, as marks of the saved note: those of one slice, or all that a full
+ * reading needs. The page measures them on opening.
+ */
+function markTruth(wanted: readonly string[] = ['R1', 'L1', 'F1']): void {
   const notes = join(home.path, 'data', 'notes');
   const [folder = ''] = readdirSync(notes);
   const path = join(notes, folder, 'note.json');
@@ -277,8 +334,7 @@ function markTruth(): void {
     name.endsWith('truth.json'),
   );
   const truth = JSON.parse(readFileSync(join(home.path, truthFile ?? ''), 'utf8'));
-  const isOnSlice = (id: string) => ['R1', 'L1', 'F1'].includes(id);
-  const shapes = truth.regions.filter(({ id }: { id: string }) => isOnSlice(id));
+  const shapes = truth.regions.filter(({ id }: { id: string }) => wanted.includes(id));
   const none = {
     soft: null,
     sharp: null,
@@ -290,23 +346,24 @@ function markTruth(): void {
     id,
     role,
     shape,
-    label: `${role[0]?.toUpperCase()}${role.slice(1)} 1`,
+    label: `${role[0]?.toUpperCase()}${role.slice(1)} ${id.slice(1)}`,
     place: label,
-    findingId: id === 'L1' ? 'D1' : null,
+    findingId: FINDING_OF[id] ?? null,
     ...none,
   }));
-  const stent = {
-    id: 'D1',
-    segment: 7,
-    kind: 'stent',
-    nominalMm: 3,
-    assessability: 'limited',
-    reason: 'struts bloom on the soft kernel',
-  };
+  const findings = FINDINGS.filter(({ id }) =>
+    regions.some(({ findingId }: { findingId: string | null }) => findingId === id),
+  );
   const contrasts = [
-    { id: 'C1', lumen: 'L1', wall: 'F1', noise: 'reference', reference: 'R1' },
+    {
+      id: 'C1',
+      lumen: 'L1',
+      wall: wanted.includes('W1') ? 'W1' : 'F1',
+      noise: 'reference',
+      reference: 'R1',
+    },
   ].map((plan) => ({ ...plan, formula: '', soft: null, sharp: null, flags: [] }));
-  writeFileSync(path, JSON.stringify({ ...note, regions, findings: [stent], contrasts }));
+  writeFileSync(path, JSON.stringify({ ...note, regions, findings, contrasts }));
 }
 
 test('the window shows a stent on both kernels, at two sizes', async () => {
@@ -333,4 +390,51 @@ test('the window shows a stent on both kernels, at two sizes', async () => {
   await page.setViewportSize({ width: 1440, height: 900 });
   await page.screenshot({ path: process.env.DIPTYCH_SCREENSHOT ?? 'test-results/window-1440.png' });
   await expect(sharpPlate(page)).toBeVisible();
+});
+
+test('a full reading is verified and exported in all forms, and the command line gives the same numbers', async () => {
+  test.setTimeout(240_000);
+  await page.goto('about:blank');
+  markTruth(['R1', 'L1', 'W1', 'P1', 'P2']);
+  await page.goto(shell.address);
+  await waitForPair(page);
+  await expect
+    .poll(() => savedNote().regions.every(({ sharp }) => sharp?.standardErrorHu != null), {
+      timeout: 60_000,
+    })
+    .toBe(true);
+  await expect.poll(() => savedNote().densities.length).toBe(2);
+  await page.keyboard.press('Control+i');
+  const dialog = page.getByRole('dialog', { name: 'Reading note' });
+  await dialog.getByLabel('Completion').selectOption('complete');
+  await dialog.getByLabel('Your name').fill('R. Example');
+  await dialog.getByRole('button', { name: 'Verify and freeze the note' }).click();
+  await expect(dialog).toContainText('By R. Example');
+  await expect.poll(() => savedNote().verification).toBe('VERIFIED');
+  await dialog.getByRole('button', { name: 'Close', exact: true }).click();
+
+  const study = studyFolder();
+  const note = join(home.path, 'note.json');
+  writeFileSync(note, readFileSync(notePath()));
+  const recheck = JSON.parse(diptych(['recheck', note, '--in', study, '--json'], home.path));
+  expect(recheck).toMatchObject({ holds: true, seal: 'intact', values: [], frames: [] });
+
+  await page.keyboard.press('Control+Shift+X');
+  for (const { words, form, flags } of FORMS) {
+    const ours = join(home.path, `window.${form}`);
+    const theirs = join(home.path, `line.${form}`);
+    writeFileSync(ours, await exportFromWindow(page, words));
+    const images = ['html', 'pdf', 'sr'].includes(form) ? ['--in', study] : [];
+    diptych(['export', note, '--as', form, '--to', theirs, ...flags, ...images], home.path);
+    if (form === 'json') expect(JSON.parse(textOf(form, ours) ?? '')).toEqual(savedNote());
+    else expect(textOf(form, theirs)?.split('\n'), words).toEqual(textOf(form, ours)?.split('\n'));
+  }
+  // Without identity neither name nor identifier of the patient is left.
+  await page
+    .getByRole('dialog', { name: 'Export' })
+    .getByRole('radio', { name: /^Without identity/ })
+    .check();
+  const clean = (await exportFromWindow(page, 'CSV, long')).toString('utf8');
+  expect(clean).not.toContain(savedNote().study.patientId ?? 'none');
+  expect(clean).toContain(savedNote().regions[0]?.soft?.meanHu?.toFixed(1) ?? 'none');
 });

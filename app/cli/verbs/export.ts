@@ -8,11 +8,15 @@ import { fileErrorReason } from '../../host/storage/fileError.js';
 import { writeOwnerFile } from '../../host/storage/ownerFile.js';
 import { deidentifyForExport } from '../deidentifyForExport.js';
 import { EXPORT_FORMS, type ExportInput } from '../exportForms.js';
+import { keyImages } from '../keyImages.js';
 import { nearest } from '../nearest.js';
 import { readTextFile } from '../readTextFile.js';
 import type { Verb, VerbArguments, VerbContext } from '../verb.js';
 
 const FORM_NAMES = Object.keys(EXPORT_FORMS);
+/** Forms that hold something of the images. */
+const WITH_IMAGES: ReadonlySet<string> = new Set(['html', 'pdf', 'sr']);
+const WITH_PICTURES: ReadonlySet<string> = new Set(['html', 'pdf']);
 
 /** `export NOTE --as FORM --to FILE`: writes an export of a note. */
 export const exportVerb: Verb = {
@@ -27,7 +31,11 @@ export const exportVerb: Verb = {
       help: 'file to write; one that is there is replaced',
     },
     { name: 'wide', help: 'with csv: one line a region, both kernels side by side' },
-    { name: 'in', value: 'DIR', help: 'with sr: folder with the images, for the contours' },
+    {
+      name: 'in',
+      value: 'DIR',
+      help: 'folder with the images: contours for sr, key images for html and pdf',
+    },
     { name: 'deidentify', help: 'without identity, for research: names, dates, texts, UIDs' },
     {
       name: 'salt',
@@ -86,7 +94,9 @@ function unknownForm(form: string): Result<never> {
 /** Options that would have no effect are a misunderstanding, and are told. */
 function misuseOf({ values, switches }: VerbArguments, form: string): string | undefined {
   if (switches.has('wide') && form !== 'csv') return '--wide goes with --as csv only.';
-  if (values.in !== undefined && form !== 'sr') return '--in goes with --as sr only.';
+  if (values.in !== undefined && !WITH_IMAGES.has(form)) {
+    return '--in goes with --as html, pdf and sr only.';
+  }
   if (values.salt !== undefined && !switches.has('deidentify')) {
     return '--salt goes with --deidentify only.';
   }
@@ -107,25 +117,33 @@ async function readNote(path: string): Promise<Result<ReadNote>> {
   return note.ok ? success({ note: note.value, source: json.value }) : note;
 }
 
-/** The note with or without identity, and what is looked up for it in the images. */
+/** The note with or without identity, and what is made for it from the images. */
 async function prepare(
   { note, source }: ReadNote,
   { values, switches }: VerbArguments,
-  { cwd, job }: VerbContext,
+  context: VerbContext,
 ): Promise<Result<{ readonly note: Note; readonly input: ExportInput }>> {
+  const { cwd, job } = context;
   const folder =
     values.in === undefined ? undefined : await indexFolder(resolve(cwd, values.in), job);
   if (folder && !folder.ok) return folder;
-  const images = folder && imageLookup(folder.value.stacks);
-  if (!switches.has('deidentify')) {
-    return success({ note, input: { source, ...(images && { images }) } });
-  }
   const saltFile = values.salt === undefined ? undefined : resolve(cwd, values.salt);
-  const clean = await deidentifyForExport(note, saltFile);
-  if (!clean.ok) return clean;
-  const { note: cleanNote, originalUid } = clean.value;
+  const clean = switches.has('deidentify') ? await deidentifyForExport(note, saltFile) : undefined;
+  if (clean && !clean.ok) return clean;
+  const exported = clean?.value.note ?? note;
+  const pictures =
+    folder && WITH_PICTURES.has(values.as ?? '')
+      ? await keyImages(exported, note, folder.value, context)
+      : undefined;
+  if (pictures && !pictures.ok) return pictures;
+  const lookup = folder && imageLookup(folder.value.stacks);
+  const images = lookup && clean ? renamedLookup(lookup, clean.value.originalUid) : lookup;
   return success({
-    note: cleanNote,
-    input: images ? { images: renamedLookup(images, originalUid) } : {},
+    note: exported,
+    input: {
+      ...(clean === undefined && { source }),
+      ...(images && { images }),
+      ...(pictures && { pictures: pictures.value }),
+    },
   });
 }

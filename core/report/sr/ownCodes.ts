@@ -18,6 +18,7 @@ export const OWN = {
   sampledArea: own('SAMPLEDAREA', 'Number of pixels inside times the area of a pixel'),
   standardError: own('STDERR', 'Standard error of the mean, by noise alone'),
   placement: own('PLACEMENT', 'Placement sensitivity of the mean'),
+  bandShare: own('BANDSHARE', 'Share of pixels in a density band'),
   formula: own('FORMULA', 'Formula'),
   kernel: own('KERNEL', 'Kernel of the pair'),
   soft: own('SOFT', 'Soft kernel'),

@@ -1,4 +1,5 @@
 import { MINUS } from '../../format/index.js';
+import { BAND_SHARE } from '../densityQuantities.js';
 import type { KernelValues } from '../measurementTable.js';
 import { printedAs } from '../regionQuantities.js';
 import { dcm } from './code.js';
@@ -11,7 +12,9 @@ import { QUANTITY_CODES, unitCode } from './quantityCodes.js';
 export function valuesItems(values: KernelValues): readonly ContentItem[] {
   const sd = values.quantities.find(({ quantity }) => quantity === 'SD')?.value;
   return values.quantities.map(({ quantity, value, unit, formula }) => {
-    const code = QUANTITY_CODES[quantity];
+    const code =
+      QUANTITY_CODES[quantity] ??
+      (quantity.startsWith(BAND_SHARE) ? { name: OWN.bandShare } : undefined);
     if (code === undefined) throw new RangeError(`no code for quantity: ${quantity}`);
     return numberItem({
       relationship: 'CONTAINS',

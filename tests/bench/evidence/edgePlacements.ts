@@ -10,7 +10,13 @@ import {
 } from '../../../core/phantom/index.js';
 import type { KernelTexture } from '../../../core/quality/index.js';
 import type { Ellipse } from '../../../core/region/index.js';
-import { EDGE_GRID, EDGE_SCAN, type EdgeScene, edgeScene, type TrueStructure } from './edgeScene.js';
+import {
+  EDGE_GRID,
+  EDGE_SCAN,
+  type EdgeScene,
+  edgeScene,
+  type TrueStructure,
+} from './edgeScene.js';
 import { type ImageStack, imageStack, readFrom } from './imageStack.js';
 
 /** A phantom with strong edges, as the program sees it. */

@@ -119,10 +119,7 @@ export function edgeScene(uniform: UniformSource): EdgeScene {
     const hu = between(800, 1500);
     const angle = between(0, 2 * Math.PI);
     const away = radius + 0.1 + Math.max(...half);
-    const grain = [
-      centre[0] + away * Math.cos(angle),
-      centre[1] + away * Math.sin(angle),
-    ] as const;
+    const grain = [centre[0] + away * Math.cos(angle), centre[1] + away * Math.sin(angle)] as const;
     const reach = Math.max(away + Math.max(...half) + 0.2, radius + wall);
     add('wall', WALL_HU, FAT_HU, centre, [Math.min(5.9, reach), Math.min(5.9, reach)]);
     add('lumen', own, WALL_HU, centre, [radius, radius]);

@@ -35,17 +35,25 @@ const SOFT_TEXTURE: KernelTexture = {
   places: Array.from({ length: 100 }, (_, index) => ({
     centreMm: [(index % 10) * 10, Math.floor(index / 10) * 10, 0],
     sdHu: 9 + (index % 3),
+    meanHu: 300 + (index % 7),
   })),
 };
-const SHARP_TEXTURE: KernelTexture = { ...SOFT_TEXTURE, noiseSdHu: 40 };
+const SHARP_TEXTURE: KernelTexture = {
+  ...SOFT_TEXTURE,
+  noiseSdHu: 40,
+  riseMm: 0.8,
+  blurFwhmMm: 0.75,
+};
 
 /** Statistics of a region of 20 pixels radius on both stacks, with standard error and placement sensitivity. */
 export async function regionStatistics(): Promise<Row> {
   const [soft, sharp] = [await makeStack('2.25.7.1'), await makeStack('2.25.7.2')];
   const shape: Shape = { kind: 'ellipse', centreMm: [54, 108, 0], radiiMm: [10, 10] };
+  const besideSharp = { ...sharp, noise: SHARP_TEXTURE };
+  const besideSoft = { ...soft, noise: SOFT_TEXTURE };
   const { p50 } = await measure(() => {
-    measureRegion(shape, soft.stack, soft.storedOf, SOFT_TEXTURE);
-    measureRegion(shape, sharp.stack, sharp.storedOf, SHARP_TEXTURE);
+    measureRegion(shape, soft.stack, soft.storedOf, SOFT_TEXTURE, besideSharp);
+    measureRegion(shape, sharp.stack, sharp.storedOf, SHARP_TEXTURE, besideSoft);
   });
   return {
     work: 'region statistics on both stacks, radius 20 px, with standard error and placement',

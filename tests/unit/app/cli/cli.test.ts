@@ -219,7 +219,7 @@ describe('export', () => {
     [
       'constructor',
       'out',
-      'There is no form “constructor”. There are csv, tsv, html, json and sr.\n',
+      'There is no form “constructor”. There are csv, tsv, html, pdf, json and sr.\n',
     ],
     ['csv', 'note.json', 'The export would replace the note itself.\n'],
     ['csv', 'no/such/out', 'out can’t be written: it is not there.\n'],

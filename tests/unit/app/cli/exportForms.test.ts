@@ -55,7 +55,7 @@ describe('export', () => {
   });
 
   it.each([
-    [['--as', 'csv', '--in', '.'], 'export: --in goes with --as sr only.'],
+    [['--as', 'csv', '--in', '.'], 'export: --in goes with --as html, pdf and sr only.'],
     [['--as', 'csv', '--salt', 'salt'], '--salt goes with --deidentify only.'],
     [['--as', 'sr', '--wide'], '--wide goes with --as csv only.'],
     [['--as', 'sr', '--in', 'nowhere'], 'nowhere'],
