@@ -9,6 +9,7 @@ const REASONS: Readonly<Record<string, string>> = {
   ENFILE: 'too many files are open',
   ENOSPC: 'the disk is full',
   EDQUOT: 'the disk quota is used up',
+  EFBIG: 'a file may not grow so large here',
   EROFS: 'the disk can only be read',
   EIO: 'the disk reports a fault',
   ENAMETOOLONG: 'its name is too long',
