@@ -366,9 +366,26 @@ function markTruth(wanted: readonly string[] = ['R1', 'L1', 'F1']): void {
   writeFileSync(path, JSON.stringify({ ...note, regions, findings, contrasts }));
 }
 
+/** Leaves the page, and waits until the host has stored what it sent last. */
+async function leavePage(): Promise<void> {
+  await waitForSaved(page);
+  await page.goto('about:blank');
+  let before = '';
+  await expect
+    .poll(
+      () => {
+        const [last, now] = [before, readFileSync(notePath(), 'utf8')];
+        before = now;
+        return last === now;
+      },
+      { intervals: [500] },
+    )
+    .toBe(true);
+}
+
 test('the window shows a stent on both kernels, at two sizes', async () => {
   await expect.poll(() => savedNote().regions.length).toBe(2);
-  await page.goto('about:blank');
+  await leavePage();
   markTruth();
   await page.goto(shell.address);
   await waitForPair(page);
@@ -394,7 +411,7 @@ test('the window shows a stent on both kernels, at two sizes', async () => {
 
 test('a full reading is verified and exported in all forms, and the command line gives the same numbers', async () => {
   test.setTimeout(240_000);
-  await page.goto('about:blank');
+  await leavePage();
   markTruth(['R1', 'L1', 'W1', 'P1', 'P2']);
   await page.goto(shell.address);
   await waitForPair(page);
