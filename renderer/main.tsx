@@ -1,6 +1,7 @@
 import './style/index.css';
 import './page.css';
 import './plates/plate.css';
+import './plates/nearEdges.css';
 import { render } from 'preact';
 import { connectKeyboard } from './commands/keyboard.js';
 import { createEngine } from './engine.js';

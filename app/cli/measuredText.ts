@@ -2,6 +2,7 @@ import { formatCount, formatQuantity, visibleText } from '../../core/format/inde
 import type { MeasuredPlan } from '../../core/note/index.js';
 import { isQuiet, type RegionValue } from '../../core/region/index.js';
 import { edgesText } from './edgesText.js';
+import { profilesText } from './profilesText.js';
 import { textTable } from './textTable.js';
 
 /** A measured plan for people: tables of regions and contrasts, then every flag and reason. */
@@ -54,12 +55,15 @@ export function measuredText({
     );
   }
   if (edges.length > 0) parts.push(edgesText(edges));
+  const across = profilesText(profiles);
+  if (profiles.length > 0) parts.push(across.table);
   const remarks = [
     ...values.flatMap(({ id, kernel, value }) =>
       value.flags.filter((flag) => !isQuiet(flag)).map(({ text }) => `${id}, ${kernel}: ${text}`),
     ),
     ...contrasts.flatMap(({ id, flags }) => flags.map(({ text }) => `${id}: ${text}`)),
-    ...[...profiles, ...stents].map(({ id, reason }) => `${id}: ${reason}`),
+    ...across.remarks,
+    ...stents.map(({ id, reason }) => `${id}: ${reason}`),
   ];
   if (remarks.length > 0) parts.push(`${remarks.map(visibleText).join('\n')}\n`);
   if (parts.length === 0) return 'The plan asks for nothing.\n';

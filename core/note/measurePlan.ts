@@ -12,6 +12,7 @@ import { type Result, refuse, success } from '../result.js';
 import type { Stack } from '../stack/index.js';
 import { type MeasuredContrast, measuredContrast } from './measuredContrast.js';
 import { edgeSlices, type MeasuredEdgeLine, measureEdges } from './measureEdges.js';
+import { type MeasuredProfile, measureProfiles, profileSlices } from './measureProfiles.js';
 import type { Plan, PlanRegion } from './plan.js';
 import type { Kernel } from './schema.js';
 
@@ -33,14 +34,6 @@ export interface MeasuredRegion {
   readonly sharp: RegionValue | null;
 }
 
-/** A profile that was asked for, and why it has no values. */
-export interface MeasuredProfile {
-  readonly id: string;
-  readonly soft: null;
-  readonly sharp: null;
-  readonly reason: string;
-}
-
 /** A stent that was asked for, and why it has no values. */
 export interface MeasuredStent {
   readonly id: string;
@@ -59,7 +52,10 @@ const NOT_MEASURED: Readonly<Record<Kernel, NoiseOfStack>> = {
 
 /** Slices of a stack that the plan's regions lie on, ascending: read these before {@link measurePlan}. */
 export function slicesNeeded(plan: Plan, stack: Stack): readonly number[] {
-  const indices = new Set<number>(edgeSlices(plan.edges ?? [], stack));
+  const indices = new Set<number>([
+    ...edgeSlices(plan.edges ?? [], stack),
+    ...profileSlices(plan.profiles, stack),
+  ]);
   for (const { shape } of plan.regions) {
     const found = findSlice(shape, stack);
     if (found.ok) indices.add(found.value.sliceIndex);
@@ -128,12 +124,7 @@ export function measurePlan(
       id: contrast.id,
       ...measuredContrast(contrast, kernels, (id, kernel) => byId.get(id)?.[kernel]),
     })),
-    profiles: plan.profiles.map(({ id }) => ({
-      id,
-      soft: null,
-      sharp: null,
-      reason: 'This version does not measure profiles yet.',
-    })),
+    profiles: measureProfiles(plan.profiles, soft, sharp, storedOf, notOnSharp),
     stents: plan.stents.map(({ id }) => ({
       id,
       strutDiameterMm: null,

@@ -1,4 +1,4 @@
-import { FLAGS } from './flags.js';
+import { contrastFlags } from './contrastFlags.js';
 import type { Flag, RegionValue } from './value.js';
 
 /** Which SD is the noise of a contrast-to-noise ratio; results under different ones are not comparable. */
@@ -40,16 +40,8 @@ export function contrastValue(parts: {
   if (noise === null)
     return without('no-noise', `No contrast: no SD for the noise (${parts.noise}).`);
   if (noise === 0) return without('zero-noise', `No contrast: the noise (${parts.noise}) is zero.`);
-  const used = parts.noise === 'reference' ? [lumen, wall, parts.reference] : [lumen, wall];
-  const isLossy = used.some((value) => value?.flags.some(({ code }) => code === LOSSY.code));
-  return { value: (lumen.meanHu - wall.meanHu) / noise, flags: isLossy ? [LOSSY] : [] };
+  return { value: (lumen.meanHu - wall.meanHu) / noise, flags: contrastFlags(parts) };
 }
-
-/** The mark of a lossy image goes on to the contrast: its noise is not the scanner's. */
-const LOSSY: Flag = {
-  code: FLAGS.lossy.code,
-  text: 'The images were compressed with loss: the noise of this contrast is not the scanner’s.',
-};
 
 function noiseOf(parts: Parameters<typeof contrastValue>[0]): number | null {
   const { lumen, wall, reference, noise } = parts;

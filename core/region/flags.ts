@@ -9,6 +9,13 @@ const EDGE_NAME: Readonly<Record<EdgeKind, string>> = {
   air: 'Air',
 };
 
+/** Its distance is known to half a blur or so: what seems to lie a little farther may lie within one. */
+function edgePlace(distanceMm: number, blurMm: number): string {
+  if (distanceMm < 0.05) return 'lies in the region or at its border, within';
+  const place = `is about ${distanceMm.toFixed(1)} mm away`;
+  return distanceMm <= blurMm ? `${place}, within` : `${place}, perhaps within`;
+}
+
 /** What may be said of a measured value. Each sentence says what it means for the reader. */
 export const FLAGS = {
   sliceMissing: {
@@ -83,11 +90,11 @@ export const FLAGS = {
   }),
   belowTwoBlurs: (blurMm: number): Flag => ({
     code: 'below-two-blurs',
-    text: `The region is narrower than twice the blur of this kernel (${blurMm.toFixed(2)} mm): its mean takes in what lies around. Make it wider; where the tissue has no room, say so beside the number.`,
+    text: `Narrower than twice this kernel’s blur (${blurMm.toFixed(2)} mm): the mean takes in its surroundings. Make the region wider, or say so beside the number.`,
   }),
   nearEdge: (kind: EdgeKind, distanceMm: number, blurMm: number): Flag => ({
     code: `near-${kind}`,
-    text: `${EDGE_NAME[kind]} lies ${distanceMm < 0.05 ? 'in the region or at its border' : `about ${distanceMm.toFixed(1)} mm from the region`}, and this kernel blurs by ${blurMm.toFixed(2)} mm: the mean is not of this tissue alone. Move the region away or make it smaller.`,
+    text: `${EDGE_NAME[kind]} ${edgePlace(distanceMm, blurMm)} this kernel’s blur (${blurMm.toFixed(2)} mm): the mean is not of this tissue alone. Move the region away or make it smaller.`,
   }),
   edgesNotSought: {
     code: 'edges-not-sought',

@@ -1,5 +1,6 @@
 import type { Vec3 } from '../geometry/index.js';
 import { type KernelTexture, localNoiseShare } from '../quality/index.js';
+import { gaussianTaps } from './nearEdgeWindow.js';
 
 /** What tells a strong edge from lumen, tissue and noise on one kernel, HU, and over which lengths it is looked for. */
 export interface EdgeLevels {
@@ -18,11 +19,13 @@ export interface EdgeLevels {
 
 /** The image is smoothed with a quarter of the blur: noise falls by a third and more, edges are hardly widened. */
 const SMOOTHING_PER_BLUR = 0.25;
+/** A narrower Gaussian than this falls between the pixels and smooths nothing. */
+const LEAST_SMOOTHING_PIXELS = 0.6;
 /** Enhanced lumen differs by this share from vessel to vessel. Common practice, no source. */
-const LUMEN_SPREAD = 0.1;
+const LUMEN_SPREAD = 0.09;
 /** Noise alone goes so many SDs above the lumen in one of some 10,000 looks at a window, and so many anywhere. */
-const BRIGHT_SDS = 2.2;
-const PEAK_SDS = 4.6;
+const BRIGHT_SDS = 1.8;
+const PEAK_SDS = 4.3;
 /** What is longer than so many blurs is no grain of noise. */
 const LONG_BLURS = 4.5;
 /** Even areas farther away than this tell of another vessel or of bone, mm. */
@@ -32,13 +35,22 @@ const NEAR_MM = 60;
  * Levels for a place, from the even areas of the pair; undefined where the blur was not measured, or where the even
  * areas do not tell their means (notes of earlier versions).
  */
-export function edgeLevels(texture: KernelTexture, placeMm: Vec3): EdgeLevels | undefined {
+export function edgeLevels(
+  texture: KernelTexture,
+  placeMm: Vec3,
+  spacingMm: readonly [number, number],
+): EdgeLevels | undefined {
   const { blurFwhmMm } = texture;
   const lumenHu = brightestNear(texture, placeMm);
   if (blurFwhmMm === null || lumenHu === undefined) return undefined;
-  const smoothingMm = SMOOTHING_PER_BLUR * blurFwhmMm;
+  const smoothingMm = Math.max(
+    SMOOTHING_PER_BLUR * blurFwhmMm,
+    LEAST_SMOOTHING_PIXELS * Math.min(...spacingMm),
+  );
   const noiseHu =
-    texture.noiseSdHu * localNoiseShare(texture, placeMm) * noiseLeft(texture, smoothingMm);
+    texture.noiseSdHu *
+    localNoiseShare(texture, placeMm) *
+    noiseLeft(texture, smoothingMm, spacingMm);
   const spreadHu = LUMEN_SPREAD * Math.max(0, lumenHu);
   return {
     blurMm: blurFwhmMm,
@@ -64,16 +76,39 @@ function brightestNear({ places = [] }: KernelTexture, placeMm: Vec3): number | 
   return near === -Infinity ? any : near;
 }
 
+/** Directions in a quarter turn over which the smoothing is averaged. */
+const DIRECTIONS = 4;
+
 /**
- * Share of the noise SD that a Gaussian smoothing leaves: √(∫P·H² f df / ∫P f df), H = exp(−2π²s²f²) its transfer
- * function, from the measured spectrum.
+ * Share of the noise SD that the smoothing leaves: √(∫P·H² f df / ∫P f df) from the measured spectrum, H the transfer
+ * function of the very taps along rows and columns.
  */
-function noiseLeft({ frequencyPerMm, powerHu2Mm2 }: KernelTexture, smoothingMm: number): number {
+function noiseLeft(
+  { frequencyPerMm, powerHu2Mm2 }: KernelTexture,
+  smoothingMm: number,
+  [acrossMm, downMm]: readonly [number, number],
+): number {
+  const [across, down] = [gaussianTaps(smoothingMm / acrossMm), gaussianTaps(smoothingMm / downMm)];
   let [left, all] = [0, 0];
-  frequencyPerMm.forEach((frequency, ring) => {
+  for (let ring = 0; ring < frequencyPerMm.length; ring++) {
+    const frequency = frequencyPerMm[ring] as number;
     const power = (powerHu2Mm2[ring] ?? 0) * frequency;
-    all += power;
-    left += power * Math.exp(-4 * (Math.PI * smoothingMm * frequency) ** 2);
-  });
+    for (let direction = 0; direction < DIRECTIONS; direction++) {
+      const angle = ((direction + 0.5) * Math.PI) / (2 * DIRECTIONS);
+      const passed =
+        transfer(across, acrossMm * frequency * Math.cos(angle)) *
+        transfer(down, downMm * frequency * Math.sin(angle));
+      all += power;
+      left += power * passed * passed;
+    }
+  }
   return all > 0 ? Math.sqrt(left / all) : 1;
+}
+
+/** Transfer function of symmetrical taps at a frequency in cycles per pixel. */
+function transfer(taps: Float64Array, perPixel: number): number {
+  let sum = taps[0] as number;
+  for (let n = 1; n < taps.length; n++)
+    sum += 2 * (taps[n] as number) * Math.cos(2 * Math.PI * n * perPixel);
+  return sum;
 }

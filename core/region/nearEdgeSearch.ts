@@ -2,13 +2,14 @@ import type { StoredValues } from '../dicom/index.js';
 import type { Stack, StackSlice } from '../stack/index.js';
 import { isUnscaled } from '../stack/index.js';
 import { findSlice } from './findSlice.js';
-import type { StoredOf } from './measureRegion.js';
+import { regionValues, type StoredOf } from './measureRegion.js';
 import { type NearEdge, nearEdges } from './nearEdge.js';
 import { edgeLevels } from './nearEdgeLevels.js';
 import { shapeCentre } from './plane.js';
 import { reachesOver } from './reachesOver.js';
 import type { Shape } from './shape.js';
 import type { NoiseOfStack } from './standardError.js';
+import { statistics } from './statistics.js';
 
 /** The other stack of a pair, in the same space. */
 export interface StackBeside {
@@ -54,9 +55,28 @@ export function edgesNear(
       ? sliceBeside(shape, beside)
       : undefined;
   const { slice, stored, noise } = other ?? own;
-  const levels = 'code' in noise ? undefined : edgeLevels(noise, shapeCentre(shape));
+  const [downMm, acrossMm] = slice.image.grid.pixelSpacingMm;
+  const levels =
+    'code' in noise ? undefined : edgeLevels(noise, shapeCentre(shape), [acrossMm, downMm]);
   if (levels === undefined) return undefined;
   return { slice, withinMm, edges: nearEdges(shape, slice, stored, levels, withinMm, regionHu) };
+}
+
+/** The same for a stack: on the slice that the region is measured on there, with its median. */
+export function edgesNearOn(
+  shape: Shape,
+  { stack, storedOf, noise }: StackBeside,
+  beside?: StackBeside,
+): FoundEdges | undefined {
+  const found = findSlice(shape, stack);
+  if (!found.ok || stack.unit !== 'HU' || isUnscaled(stack)) return undefined;
+  const slice = stack.slices[found.value.sliceIndex];
+  const stored = storedOf(found.value.sliceIndex);
+  if (slice === undefined || stored === undefined) return undefined;
+  const { median } = statistics(regionValues(shape, slice, stored).values);
+  return median === undefined
+    ? undefined
+    : edgesNear(shape, { slice, stored, noise }, median, beside);
 }
 
 function blurOf(noise: NoiseOfStack): number | undefined {

@@ -43,18 +43,22 @@ export function structuresIn(
 ): readonly Structure[] {
   const { hu } = window;
   const { aboveHu, belowHu } = soughtBy(levels, regionHu);
-  const isBright = (at: number): boolean => (hu[at] as number) > aboveHu;
-  const bright = components(window, isBright).flatMap((pixels): Structure[] => {
+  const [above, below]: [number[], number[]] = [[], []];
+  for (let at = 0; at < hu.length; at++) {
+    const value = hu[at] as number;
+    if (value > aboveHu) above.push(at);
+    else if (value < belowHu) below.push(at);
+  }
+  const bright = components(window, above).flatMap((pixels): Structure[] => {
     const isStrong =
       pixels.some((at) => (hu[at] as number) >= levels.peakHu) ||
       extentMm(pixels, window, spacingMm) >= levels.longMm;
     return isStrong ? [brightStructure(pixels, window, spacingMm, levels, regionHu)] : [];
   });
-  const air = components(window, (at) => (hu[at] as number) < belowHu).flatMap(
-    (pixels): Structure[] =>
-      pixels.some((at) => (hu[at] as number) <= AIR_SEED_HU)
-        ? [{ kind: 'air', pixels, behindBlurs: 0, levelHu: pixels.map(() => AIR_HU) }]
-        : [],
+  const air = components(window, below).flatMap((pixels): Structure[] =>
+    pixels.some((at) => (hu[at] as number) <= AIR_SEED_HU)
+      ? [{ kind: 'air', pixels, behindBlurs: 0, levelHu: pixels.map(() => AIR_HU) }]
+      : [],
   );
   return [...bright, ...air];
 }
@@ -153,30 +157,32 @@ function extentMm(
   return Math.hypot((right - left) * acrossMm, (bottom - top) * downMm);
 }
 
-/** Sets of pixels that hang together by sides or corners. */
+/** Sets of these pixels that hang together by sides or corners. */
 function components(
   { columns, rows, hu }: EdgeWindow,
-  isIn: (at: number) => boolean,
+  members: readonly number[],
 ): readonly (readonly number[])[] {
-  let seen: Uint8Array | undefined;
-  const found: number[][] = [];
-  for (let start = 0; start < hu.length; start++) {
-    if (!isIn(start) || seen?.[start] === 1) continue;
-    seen ??= new Uint8Array(hu.length);
-    seen[start] = 1;
+  if (members.length === 0) return [];
+  const waiting = new Uint8Array(hu.length);
+  for (const at of members) waiting[at] = 1;
+  return members.flatMap((start): readonly number[][] => {
+    if (waiting[start] !== 1) return [];
+    waiting[start] = 0;
     const pixels = [start];
     for (let next = 0; next < pixels.length; next++) {
       const at = pixels[next] as number;
-      const [row, column] = [Math.floor(at / columns), at % columns];
-      for (let r = Math.max(0, row - 1); r <= Math.min(rows - 1, row + 1); r++)
-        for (let c = Math.max(0, column - 1); c <= Math.min(columns - 1, column + 1); c++) {
+      const row = Math.floor(at / columns);
+      const column = at - row * columns;
+      const [firstRow, lastRow] = [Math.max(0, row - 1), Math.min(rows - 1, row + 1)];
+      const [first, last] = [Math.max(0, column - 1), Math.min(columns - 1, column + 1)];
+      for (let r = firstRow; r <= lastRow; r++)
+        for (let c = first; c <= last; c++) {
           const other = r * columns + c;
-          if (seen[other] === 1 || !isIn(other)) continue;
-          seen[other] = 1;
+          if (waiting[other] !== 1) continue;
+          waiting[other] = 0;
           pixels.push(other);
         }
     }
-    found.push(pixels);
-  }
-  return found;
+    return [pixels];
+  });
 }

@@ -79,8 +79,8 @@ function smoothed(
   return both;
 }
 
-/** One half of the taps, the middle one first; they sum to 1 with the other half. */
-function gaussianTaps(sigmaPixels: number): Float64Array {
+/** One half of the taps of a Gaussian, the middle one first; they sum to 1 with the other half. */
+export function gaussianTaps(sigmaPixels: number): Float64Array {
   const reach = Math.ceil(2 * sigmaPixels);
   const taps = Float64Array.from({ length: reach + 1 }, (_, n) =>
     n === 0 ? 1 : Math.exp(-(n * n) / (2 * sigmaPixels * sigmaPixels)),

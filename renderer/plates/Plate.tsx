@@ -19,6 +19,7 @@ import { AlternateSwitch } from './AlternateSwitch.js';
 import { DifferenceScale } from './DifferenceScale.js';
 import { FoldEdge } from './FoldEdge.js';
 import { layersOf, type Stored } from './layers.js';
+import { NearEdges } from './NearEdges.js';
 import { NoiseAreas } from './NoiseAreas.js';
 import { PlateCanvas } from './PlateCanvas.js';
 import { PlateLabels } from './PlateLabels.js';
@@ -118,6 +119,7 @@ export function Plate({ face, store, machine, stored, onKey }: PlateProps) {
           />
         ))}
         {state.noiseAreas && <NoiseAreas kernel={kernel} store={store} />}
+        <NearEdges kernel={kernel} store={store} stored={stored} />
         <PlateOverlay kernel={kernel} store={store} />
         <PlateLabels face={face} store={store} />
         {layers.map((layer) => {

@@ -2,6 +2,7 @@ import { availableParallelism } from 'node:os';
 import { fileURLToPath } from 'node:url';
 import { isMainThread, parentPort, Worker, workerData } from 'node:worker_threads';
 import { evidenceCases } from './evidence/cases.js';
+import { reportEdges } from './evidence/edgeReport.js';
 import { type JudgedCase, judgeCase } from './evidence/judge.js';
 import { reportObserver } from './evidence/observerReport.js';
 import type { ProjectionCache } from './evidence/phantomPair.js';
@@ -95,6 +96,8 @@ if (isMainThread) {
   if (!isCovered) process.exitCode = 1;
   const isSeen = await reportObserver((line) => process.stdout.write(`${line}\n`));
   if (!isSeen) process.exitCode = 1;
+  const isFlagged = await reportEdges((line) => process.stdout.write(`${line}\n`));
+  if (!isFlagged) process.exitCode = 1;
 } else {
   await judgeScene(workerData as Task, (one) => parentPort?.postMessage(one));
 }

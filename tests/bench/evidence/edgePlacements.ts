@@ -24,6 +24,8 @@ export interface EdgeRecipe {
   readonly seed: number;
   readonly photonsPerRay: number;
   readonly kernels: Readonly<Record<Side, Kernel>>;
+  /** Rings of struts have this to 800 HU·mm. */
+  readonly leastStrutHuMm: number;
 }
 
 /** Both reconstructions of a noisy scene, with their measured textures. */
@@ -37,13 +39,13 @@ export interface EdgePhantom {
 export interface Placement {
   readonly shape: Ellipse;
   readonly distanceMm: number;
-  readonly nearest: TrueStructure;
+  readonly kind: TrueStructure['kind'];
 }
 
 /** Five slices of one scene with noise of their own: the textures are measured on all, regions lie on the middle one. */
 export async function edgePhantom(recipe: EdgeRecipe): Promise<EdgePhantom> {
-  const { seed, kernels, photonsPerRay } = recipe;
-  const scene = edgeScene(seededUniform(seed, 1));
+  const { seed, kernels, photonsPerRay, leastStrutHuMm } = recipe;
+  const scene = edgeScene(seededUniform(seed, 1), leastStrutHuMm);
   const clean = projectSlice(scene.slice, EDGE_SCAN);
   const slices = Array.from({ length: 5 }, (_, index) => {
     const noisy = addQuantumNoise(clean, photonsPerRay, seededUniform(seed, 2, index));
@@ -86,24 +88,46 @@ export function placeBeside(
     const beside = dense[Math.floor(uniform() * dense.length)] as TrueStructure;
     const away = (): number => 9 * (2 * uniform() - 1);
     const [x, y] = [beside.centreMm[0] + away(), beside.centreMm[1] + away()];
-    const angle = Math.PI * uniform();
-    const a = 0.5 + 2 * uniform() ** 2;
-    const shape: Ellipse = {
-      kind: 'ellipse',
-      centreMm: [x, y, PLACED_MM],
-      u: [Math.cos(angle), Math.sin(angle), 0],
-      v: [-Math.sin(angle), Math.cos(angle), 0],
-      radiiMm: [a, a * (0.6 + 0.4 * uniform())],
-    };
+    const shape = ellipseAt(uniform, x, y);
     if (!couldBeWithin(shape, beside, most)) continue;
     const distanceMm = trueDistanceMm(shape, beside);
     if (distanceMm < least || distanceMm > most) continue;
     const others = dense.filter((one) => one !== beside && couldBeWithin(shape, one, distanceMm));
     if (others.some((one) => trueDistanceMm(shape, one) < distanceMm)) continue;
     if (air.some((one) => couldBeWithin(shape, one, 6) && trueDistanceMm(shape, one) < 6)) continue;
-    return { shape, distanceMm, nearest: beside };
+    return { shape, distanceMm, kind: beside.kind };
   }
   throw new RangeError(`no place ${least} to ${most} mm from a structure`);
+}
+
+/** Such an ellipse anywhere, farther than `least` mm from each strut, calcium and air. */
+export function placeAway(
+  { structures }: EdgeScene,
+  uniform: UniformSource,
+  least: number,
+): Placement {
+  for (let attempt = 0; attempt < 5000; attempt += 1) {
+    const away = (): number => 42 * (2 * uniform() - 1);
+    const shape = ellipseAt(uniform, away(), away());
+    const [x, y] = shape.centreMm;
+    if (Math.hypot(x, y) > 48) continue;
+    const near = structures.filter((one) => couldBeWithin(shape, one, least));
+    if (near.some((one) => trueDistanceMm(shape, one) < least)) continue;
+    return { shape, distanceMm: least, kind: 'air' };
+  }
+  throw new RangeError(`no place ${least} mm from all structures`);
+}
+
+function ellipseAt(uniform: UniformSource, x: number, y: number): Ellipse {
+  const angle = Math.PI * uniform();
+  const a = 0.5 + 2 * uniform() ** 2;
+  return {
+    kind: 'ellipse',
+    centreMm: [x, y, PLACED_MM],
+    u: [Math.cos(angle), Math.sin(angle), 0],
+    v: [-Math.sin(angle), Math.cos(angle), 0],
+    radiiMm: [a, a * (0.6 + 0.4 * uniform())],
+  };
 }
 
 /** False when the circles around both are farther apart than that. */

@@ -38,8 +38,6 @@ export interface EdgeScene {
   readonly slice: SceneSlice;
   readonly structures: readonly TrueStructure[];
   readonly lumenHu: number;
-  /** Centres and radii of lumens without strut or calcium. */
-  readonly plain: readonly (readonly [number, number, number])[];
 }
 
 /** Chambers whose even blood tells the level of the lumen, and whose edges tell the blur. */
@@ -64,14 +62,13 @@ const LUNG = { centreMm: [58, 2] as const, radiiMm: [16, 22] as const, angleDeg:
 
 /**
  * A round body with chambers and a lung at its side, and seven vessels in fat: three with a ring of a strut of
- * 200 to 800 HU·mm, three with calcium in the wall, one plain. All sizes, places and HU are drawn.
+ * `leastStrutHuMm` to 800 HU·mm, three with calcium in the wall, one plain. All sizes, places and HU are drawn.
  */
-export function edgeScene(uniform: UniformSource): EdgeScene {
+export function edgeScene(uniform: UniformSource, leastStrutHuMm: number): EdgeScene {
   const between = (low: number, high: number): number => low + (high - low) * uniform();
   const lumenHu = between(280, 450);
   const insets: Inset[] = [];
   const structures: TrueStructure[] = [{ kind: 'air', size: LUNG_HU, ...LUNG }];
-  const plain: [number, number, number][] = [];
   const add = (
     name: string,
     hu: number,
@@ -92,7 +89,7 @@ export function edgeScene(uniform: UniformSource): EdgeScene {
     if (index < 3) {
       const inner = between(1.125, 2);
       const thick = 0.1;
-      const mass = between(200, 800);
+      const mass = between(leastStrutHuMm, 800);
       const strutHu = WALL_HU + mass / thick;
       const outer = inner + thick;
       add('wall', WALL_HU, FAT_HU, centre, [outer + wall, outer + wall]);
@@ -112,7 +109,6 @@ export function edgeScene(uniform: UniformSource): EdgeScene {
     if (index === 6) {
       add('wall', WALL_HU, FAT_HU, centre, [radius + wall, radius + wall]);
       add('lumen', own, WALL_HU, centre, [radius, radius]);
-      plain.push([...centre, radius]);
       return;
     }
     const half = [between(0.5, 1.4), between(0.4, 1)] as const;
@@ -143,6 +139,5 @@ export function edgeScene(uniform: UniformSource): EdgeScene {
     },
     structures,
     lumenHu,
-    plain,
   };
 }

@@ -92,9 +92,9 @@ describe('measurePlan', () => {
       }),
     );
     if (!result.ok) throw new Error(result.refusal.text);
-    expect(result.value.profiles).toEqual([
-      { id: 'X1', soft: null, sharp: null, reason: 'This version does not measure profiles yet.' },
-    ]);
+    // The line lies beside the fixture’s image.
+    expect(result.value.profiles).toMatchObject([{ id: 'X1', soft: { visibleWidthMm: null } }]);
+    expect(result.value.profiles[0]?.soft.flags).toHaveLength(1);
     expect(result.value.stents).toEqual([
       {
         id: 'S1',
