@@ -27,6 +27,13 @@ export function Bands({ label, density, tableId, frozen, onTable }: BandsProps) 
         <p class="empty">The slice of this region is not read yet, or holds no HU.</p>
       ) : (
         <>
+          {density.flags.length > 0 && (
+            <ul class="band-flags">
+              {density.flags.map(({ code, text }) => (
+                <li key={code}>{text}</li>
+              ))}
+            </ul>
+          )}
           <table class="data-table" aria-label={`Density of ${label} by bands, soft kernel`}>
             <tbody>
               {table.bands.map(({ name }, band) => (
@@ -48,11 +55,6 @@ export function Bands({ label, density, tableId, frozen, onTable }: BandsProps) 
               )}
             </tbody>
           </table>
-          <ul class="band-flags">
-            {density.flags.map(({ code, text }) => (
-              <li key={code}>{text}</li>
-            ))}
-          </ul>
           <p class="source">{table.source}</p>
         </>
       )}
@@ -74,17 +76,6 @@ function Band({ name, edges, share, areaMm2 }: BandProps) {
         {name}
         <span class="edges">{edges}</span>
       </th>
-      <td class="bar" aria-hidden="true">
-        <svg
-          width="100%"
-          height={8}
-          preserveAspectRatio="none"
-          viewBox="0 0 100 8"
-          aria-hidden="true"
-        >
-          <rect class="band-bar" x={0} y={0} width={100 * share} height={8} />
-        </svg>
-      </td>
       <td class="number">{formatFixed(100 * share, 1)} %</td>
       <td class="number">{formatFixed(areaMm2, 1)} mm²</td>
     </tr>
