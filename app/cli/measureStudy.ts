@@ -21,6 +21,8 @@ export interface MeasuredStudy {
   readonly measured: MeasuredPlan;
   /** Why nothing was measured on the sharp stack. */
   readonly notOnSharp: Flag | undefined;
+  /** Noise of both kernels, or why it is not known. */
+  readonly noise: Readonly<Record<Kernel, NoiseOfStack>>;
   /** The slices that the plan's regions lie on, decoded. */
   readonly read: ReadonlyMap<Stack, ReadSlices>;
 }
@@ -56,7 +58,7 @@ export async function measureStudy(
     notOnSharp,
     noise,
   );
-  return measured.ok ? success({ measured: measured.value, notOnSharp, read }) : measured;
+  return measured.ok ? success({ measured: measured.value, notOnSharp, noise, read }) : measured;
 }
 
 /** The noise of both kernels, for the standard errors; or why it can't be had. */

@@ -2,6 +2,7 @@ import {
   type FrameDigest,
   type Kernel,
   type MeasuredPlan,
+  measuredDensities,
   measurePlan,
   type Note,
   planOf,
@@ -11,6 +12,7 @@ import {
   amendNote,
   type ChangedFrame,
   type ChangedNumber,
+  changedDensities,
   changedFrames,
   changedNumbers,
   checkSeal,
@@ -89,6 +91,14 @@ export function createNoteLife({ store, client, bench, now, signal }: NoteLifeOp
     );
   };
 
+  const densitiesOf = (note: Note, read: ReadonlyMap<Stack, Slices>): Note['densities'] => {
+    const { pair } = store.now();
+    if (pair === undefined) return [];
+    const storedOf = (index: number) => read.get(pair.soft)?.get(index);
+    const noise = noiseOfKernel(store.now(), 'soft');
+    return measuredDensities(note, { soft: pair.soft, storedOf, noise });
+  };
+
   /** The note as it stands in its file, once everything is written. */
   const asStored = async (note: Note): Promise<Result<unknown>> => {
     await bench.autosave.settled();
@@ -159,7 +169,10 @@ export function createNoteLife({ store, client, bench, now, signal }: NoteLifeOp
       const stored = await asStored(note.value);
       return success({
         seal: stored.ok ? await checkSeal(stored.value, pageDigest) : 'not sealed',
-        values: changedNumbers(note.value, fresh.value),
+        values: [
+          ...changedNumbers(note.value, fresh.value),
+          ...changedDensities(note.value, densitiesOf(note.value, read)),
+        ],
         frames: changedFrames(note.value.frames, found),
       });
     },

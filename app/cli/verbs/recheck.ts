@@ -1,8 +1,16 @@
 import { resolve } from 'node:path';
-import { type Note, parseNote, planOf, readJson, selectStack } from '../../../core/note/index.js';
+import {
+  measuredDensities,
+  type Note,
+  parseNote,
+  planOf,
+  readJson,
+  selectStack,
+} from '../../../core/note/index.js';
 import {
   type ChangedFrame,
   type ChangedNumber,
+  changedDensities,
   changedFrames,
   changedNumbers,
   checkSeal,
@@ -56,7 +64,16 @@ that are missing or whose pixels changed since the note was verified. Exit code 
     }
     const study = await measureStudy(planOf(note.value), folder.value, { soft, sharp }, context);
     if (!study.ok) return study;
-    const differing = changedNumbers(note.value, study.value.measured);
+    const { measured, noise, read } = study.value;
+    const densities = measuredDensities(note.value, {
+      soft,
+      storedOf: (index) => read.get(soft)?.stored.get(index),
+      noise: noise.soft,
+    });
+    const differing = [
+      ...changedNumbers(note.value, measured),
+      ...changedDensities(note.value, densities),
+    ];
     const frames = changedFrames(note.value.frames, await digestsOf(study.value));
     const holds = differing.length === 0 && frames.length === 0 && seal !== 'changed';
     return outcome({ holds, seal, values: differing, frames, missing });

@@ -4,5 +4,6 @@ export * from './canonicalJson.js';
 export * from './completeness.js';
 export * from './frameDigests.js';
 export * from './recheck.js';
+export * from './recheckDensities.js';
 export * from './seal.js';
 export * from './verify.js';

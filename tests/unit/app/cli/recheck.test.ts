@@ -150,3 +150,37 @@ describe('recheck', () => {
     expect(code).toBe(0);
   });
 });
+
+describe('recheck of plaque density', () => {
+  it('names the band whose count no longer holds', async () => {
+    const note = richNote();
+    const plaque = note.regions.find(({ role }) => role === 'plaque');
+    const n = plaque?.soft?.n ?? 0;
+    const density = {
+      regionId: plaque?.id ?? '',
+      table: 'six-classes',
+      n,
+      pixels: [1, n - 1, 0, 0, 0, 0],
+      unassigned: 0,
+      pixelAreaMm2: 0.125,
+      flags: [],
+    };
+    const { code, document } = await recheck({ ...note, densities: [density] });
+    expect(code).toBe(1);
+    // The fixture’s soft values are 100 + column: all of them fibro-fatty.
+    expect(document.values).toEqual([
+      expect.objectContaining({
+        id: plaque?.id,
+        quantity: 'pixels of low attenuation',
+        before: 1,
+        now: 0,
+      }),
+      expect.objectContaining({
+        id: plaque?.id,
+        quantity: 'pixels of fibro-fatty',
+        before: n - 1,
+        now: n,
+      }),
+    ]);
+  });
+});
