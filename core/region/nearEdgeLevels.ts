@@ -22,9 +22,9 @@ const SMOOTHING_PER_BLUR = 0.25;
 /** A narrower Gaussian than this falls between the pixels and smooths nothing. */
 const LEAST_SMOOTHING_PIXELS = 0.6;
 /** Enhanced lumen differs by this share from vessel to vessel. Common practice, no source. */
-const LUMEN_SPREAD = 0.09;
+const LUMEN_SPREAD = 0.12;
 /** Noise alone goes so many SDs above the lumen in one of some 10,000 looks at a window, and so many anywhere. */
-const BRIGHT_SDS = 1.8;
+const BRIGHT_SDS = 1.9;
 const PEAK_SDS = 4.3;
 /** What is longer than so many blurs is no grain of noise. */
 const LONG_BLURS = 4.5;

@@ -99,7 +99,7 @@ const LEAST_ASPECT = 2.5;
 const THIN_BLURS = 1.5;
 
 /** A bent strut is thin; what is long and straight may be a narrow grain too. */
-const BENT_BEHIND = 0.3;
+const BENT_BEHIND = 0.35;
 const STRAIGHT_BEHIND = 0.15;
 
 /** Struts are thin and bent or long; calcium is compact. Decided by the shape of the contour, and by a dip in its middle. */

@@ -55,7 +55,10 @@ export function annuliOf(window: KernelWindow, axis: VesselAxis, reachMm: number
   );
   return {
     radiusMm: kept.map((index) => index * ANNULUS_MM),
-    meanHu: Float64Array.from(kept, (index) => (sums[index] as number) / (weights[index] as number)),
+    meanHu: Float64Array.from(
+      kept,
+      (index) => (sums[index] as number) / (weights[index] as number),
+    ),
     waves: kept.map((index) => wavesOf(shares[index] as Float64Array, weights[index] as number)),
     slices: window.slices.length,
   };

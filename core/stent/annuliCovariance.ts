@@ -34,7 +34,9 @@ export function annuliCovariance(
   const covariance = places.map(() => new Float64Array(places.length));
   const noisy = places.map(({ kernel, waves }) => {
     const amplitude = apodisation.kernels[kernel]?.amplitude as Float64Array;
-    return waves.map((wave, f) => wave * (amplitude[f] as number) * Math.sqrt(RING_AREAS[f] as number));
+    return waves.map(
+      (wave, f) => wave * (amplitude[f] as number) * Math.sqrt(RING_AREAS[f] as number),
+    );
   });
   places.forEach(({ kernel }, row) => {
     for (let column = 0; column <= row; column += 1) {
@@ -67,8 +69,29 @@ export function annuliCovariance(
         return error * sum;
       }),
     );
+  annuli.forEach((_, own) => {
+    const endError = apodisation.kernels[own]?.endError as Float64Array;
+    for (const shape of [...OWN_SHAPES, endError])
+      addMode(
+        covariance,
+        places.map(({ kernel, waves }) => {
+          if (kernel !== own) return 0;
+          let sum = 0;
+          for (let f = 0; f < waves.length; f += 1)
+            sum += (waves[f] as number) * (spectrum[f] as number) * (shape[f] as number);
+          return sum;
+        }),
+      );
+  });
   return covariance;
 }
+
+/** Each kernel's W may be wrong by this for itself, in bands of this width, per mm. */
+const OWN_ERROR = 0.012;
+const OWN_STEP_PER_MM = 0.15;
+const OWN_SHAPES = Array.from({ length: 8 }, (_, band) =>
+  FREQUENCIES.map((f) => OWN_ERROR * Math.max(0, 1 - Math.abs(f / OWN_STEP_PER_MM - band - 1))),
+);
 
 /** Shapes of a relative error of W over the frequencies, with their size. */
 function responseErrors({ scaleError, bands }: Apodisation) {

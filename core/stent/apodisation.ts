@@ -11,6 +11,8 @@ export interface Apodised {
   readonly response: Float64Array;
   /** √(NPS) at {@link FREQUENCIES}, HU·mm: c·√f·W. */
   readonly amplitude: Float64Array;
+  /** What W is wrong by where its end is wrong by one standard error. */
+  readonly endError: Float64Array;
 }
 
 /** All kernels of a fit, with how well their noise tells them. */
@@ -38,6 +40,8 @@ const LOW_RING_ERROR = 0.3;
 const LOW_RING_PER_MM = 0.09;
 /** Error of a ring's root relative to the highest root: rounding, spill. */
 const FLOOR_ERROR = 0.008;
+const LAST_RINGS_PER_MM = 0.1;
+const LAST_RINGS_ERROR = 0.04;
 /** W of a plain reconstruction falls from 1; more than this above it is another thing. */
 const MOST_RESPONSE = 1.25;
 /** Noise that has more power at low frequencies than f·W² allows by this factor is not of that kind. */
@@ -45,7 +49,10 @@ const MOST_LOW_POWER = 2.2;
 /** Mean misfit of the rings' roots, relative, beyond which the spectra don't look like f·W² of one scale. */
 const MOST_MISFIT = 0.1;
 
-const KNOWN = new WeakMap<KernelTexture, { with: KernelTexture | undefined; found: Result<Apodisation> }>();
+const KNOWN = new WeakMap<
+  KernelTexture,
+  { with: KernelTexture | undefined; found: Result<Apodisation> }
+>();
 
 /**
  * The apodisation of each kernel from its noise power spectrum: filtered back projection makes NPS = c²·f·W(f)²
@@ -88,7 +95,9 @@ function ringsOf({ frequencyPerMm, powerHu2Mm2, areas }: KernelTexture): Rings {
       ringError(at, areas),
       LOW_RING_ERROR * Math.exp(-at / LOW_RING_PER_MM),
     );
-    return Math.max(1e-9, relative * value + FLOOR_ERROR * highest);
+    // What the border of an area spills beyond the highest frequency of the grid comes back to the last rings.
+    const back = at > (f.at(-1) as number) - LAST_RINGS_PER_MM ? LAST_RINGS_ERROR : 0;
+    return Math.max(1e-9, relative * value + (FLOOR_ERROR + back) * highest);
   });
   return { f, root, error };
 }
@@ -104,16 +113,23 @@ function computed(textures: readonly KernelTexture[]): Result<Apodisation> {
   if (all.some(({ f, root }) => f.length < LEAST_RINGS || !(Math.max(...root) > 0)))
     return refuse('not-linear', 'The noise tells too few frequencies to know the kernels by.');
   const fit = fittedWindows(all);
-  if (fit === undefined || !(Math.min(...fit.misfits) <= MOST_MISFIT) || !(Math.max(...fit.misfits) <= 1.5 * MOST_MISFIT))
+  if (
+    fit === undefined ||
+    !(Math.min(...fit.misfits) <= MOST_MISFIT) ||
+    !(Math.max(...fit.misfits) <= 1.5 * MOST_MISFIT)
+  )
     return refuse(
       'not-linear',
       'The noise does not look like that of filtered back projection: the blur of the kernels can’t be told from it.',
     );
   const { scale } = fit;
-  const kernels = fit.responses.map((response): Apodised => ({
-    response,
-    amplitude: response.map((w, index) => scale * w * Math.sqrt(FREQUENCIES[index] as number)),
-  }));
+  const kernels = fit.responses.map(
+    ({ response, endError }): Apodised => ({
+      response,
+      endError,
+      amplitude: response.map((w, index) => scale * w * Math.sqrt(FREQUENCIES[index] as number)),
+    }),
+  );
   if (textures.some((texture, k) => !looksLinear(texture, kernels[k] as Apodised)))
     return refuse(
       'not-linear',
@@ -130,7 +146,10 @@ function computed(textures: readonly KernelTexture[]): Result<Apodisation> {
 interface FittedWindows {
   readonly scale: number;
   readonly scaleError: number;
-  readonly responses: readonly Float64Array[];
+  readonly responses: readonly {
+    readonly response: Float64Array;
+    readonly endError: Float64Array;
+  }[];
   /** Of each kernel, root mean square of the rings' relative misfit where its root is not small. */
   readonly misfits: readonly number[];
 }
@@ -141,6 +160,11 @@ const SHAPE_BOUNDS: readonly Bounds[] = [
   { low: -60, high: 20 },
   { low: 0.3, high: 1.6 },
 ];
+
+/** The end lies about where the last ring stands out; SD of that, per mm. */
+const END_SD_PER_MM = 0.12;
+/** Rings tell an end to about this, per mm. */
+const END_ERROR_PER_MM = 0.02;
 
 /** One scale and four numbers of form for each kernel. */
 function fittedWindows(all: readonly Rings[]): FittedWindows | undefined {
@@ -160,6 +184,7 @@ function fittedWindows(all: readonly Rings[]): FittedWindows | undefined {
           ...roots.map((value, k) => (value - (root[k] as number)) / (error[k] as number)),
           // Keeps the form smooth where the rings don't tell it.
           (point[3 + 4 * kernel] as number) / 8,
+          ((point[4 + 4 * kernel] as number) - (start[4 + 4 * kernel] as number)) / END_SD_PER_MM,
         ];
       }),
     );
@@ -181,7 +206,8 @@ function fittedWindows(all: readonly Rings[]): FittedWindows | undefined {
   return {
     scale,
     scaleError: Math.sqrt(fit.covariance[0]?.[0] ?? 1),
-    responses: corrected.map(({ response }) => response),
+    responses: corrected,
+
     misfits: corrected.map(({ misfit }) => misfit),
   };
 }
@@ -199,23 +225,24 @@ function amplitudeAt(point: Float64Array, kernel: number): Float64Array {
 }
 
 /** Rings whose root is below this part of the highest correct nothing. */
-const LEAST_ROOT = 0.1;
+const LEAST_ROOT = 0.25;
 
 /** The form times a smooth factor that brings it to the rings. */
 function correctedResponse(
   point: Float64Array,
   kernel: number,
   { f, root }: Rings,
-): { readonly response: Float64Array; readonly misfit: number } {
+): { readonly response: Float64Array; readonly endError: Float64Array; readonly misfit: number } {
   const response = responseAt(point, kernel);
+  const later = Float64Array.from(point);
+  later[4 + 4 * kernel] = (later[4 + 4 * kernel] as number) + END_ERROR_PER_MM;
   const roots = shownRoots(amplitudeAt(point, kernel), f);
   const highest = Math.max(...root);
   const used = f.flatMap((_, k) =>
     (f[k] as number) > 0.2 && (root[k] as number) > LEAST_ROOT * highest ? [k] : [],
   );
   const ratio = used.map((k) => (root[k] as number) / Math.max(1e-9, roots[k] as number));
-  const at = (index: number): number =>
-    ratio[Math.min(ratio.length - 1, Math.max(0, index))] ?? 1;
+  const at = (index: number): number => ratio[Math.min(ratio.length - 1, Math.max(0, index))] ?? 1;
   const smooth = ratio.map((_, k) => (at(k - 1) + 2 * at(k) + at(k + 1)) / 4);
   const ratios = used.map((k, index) => ({ f: f[k] as number, ratio: smooth[index] as number }));
   const misfit = Math.sqrt(
@@ -223,6 +250,7 @@ function correctedResponse(
   );
   return {
     response: response.map((w, index) => w * factorAt(ratios, FREQUENCIES[index] as number)),
+    endError: responseAt(later, kernel).map((w, index) => w - (response[index] as number)),
     misfit,
   };
 }

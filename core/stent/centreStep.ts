@@ -50,9 +50,7 @@ export function centreWeights(
       }),
     ),
   );
-  return lower === undefined
-    ? undefined
-    : { kernels: apodisation.kernels.length, count, lower };
+  return lower === undefined ? undefined : { kernels: apodisation.kernels.length, count, lower };
 }
 
 /**

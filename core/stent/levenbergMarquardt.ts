@@ -20,7 +20,7 @@ export interface LeastSquares {
   readonly steps: number;
 }
 
-const MOST_STEPS = 40;
+const MOST_STEPS = 60;
 /** A step that gains less than this ends the search: far below what one standard error makes, 1. */
 const LEAST_GAIN = 1e-4;
 
@@ -69,7 +69,10 @@ function finished(
   bounds: readonly Bounds[],
   steps: number,
 ): LeastSquares | undefined {
-  const fixed = bounds.map(({ low, high }) => low === high);
+  const fixed = bounds.map(({ low, high }, k) => {
+    const slope = slopes[k] as Float64Array;
+    return low === high || dot(slope, slope) === 0;
+  });
   const matrix = slopes.map((a, i) =>
     Float64Array.from(slopes, (b, j) => (fixed[i] || fixed[j] ? (i === j ? 1e12 : 0) : dot(a, b))),
   );
@@ -85,7 +88,10 @@ function freeParameters(
 ): readonly number[] {
   return bounds.flatMap(({ low, high }, k) => {
     if (low === high) return [];
-    const downhill = -dot(slopes[k] as Float64Array, residuals);
+    const slope = slopes[k] as Float64Array;
+    // What changes nothing here can't be sought.
+    if (dot(slope, slope) === 0) return [];
+    const downhill = -dot(slope, residuals);
     const value = point[k] as number;
     return (value <= low && downhill < 0) || (value >= high && downhill > 0) ? [] : [k];
   });

@@ -44,7 +44,8 @@ export function backwardSolve(lower: readonly Float64Array[], b: Float64Array): 
 /** x of A·x = b for a symmetric positive A. Throws for another: the caller has made it positive. */
 export function solveSymmetric(matrix: readonly Float64Array[], b: Float64Array): Float64Array {
   const lower = cholesky(matrix);
-  if (lower === undefined) throw new RangeError(`invalid matrix: not positive, ${matrix.length} rows`);
+  if (lower === undefined)
+    throw new RangeError(`invalid matrix: not positive, ${matrix.length} rows`);
   return backwardSolve(lower, forwardSolve(lower, b));
 }
 

@@ -1,5 +1,12 @@
 import type { StoredValues } from '../dicom/index.js';
-import { cross, gridNormal, normalise, patientToPixel, subtract, type Vec3 } from '../geometry/index.js';
+import {
+  cross,
+  gridNormal,
+  normalise,
+  patientToPixel,
+  subtract,
+  type Vec3,
+} from '../geometry/index.js';
 import { isPadding, LOWEST_IMAGE_HU, rescaled } from '../intensity/index.js';
 import { type Result, refuse, success } from '../result.js';
 import type { StackSlice } from '../stack/index.js';
@@ -62,7 +69,10 @@ export function profileSamples(
         return isPadding(one, pixels) || rescaledHu < LOWEST_IMAGE_HU ? Number.NaN : rescaledHu;
       });
       if (value === undefined)
-        return refuse('over-border', 'The line reaches over the border of the image: move it inside.');
+        return refuse(
+          'over-border',
+          'The line reaches over the border of the image: move it inside.',
+        );
       if (Number.isNaN(value))
         return refuse('padding-inside', 'Padding lies in the band: move the line into the image.');
       sum += value;

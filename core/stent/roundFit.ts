@@ -94,17 +94,23 @@ function triedRadii(
     .map(({ parameters }) => parameters);
 }
 
-/** One search with a covariance that belongs to the start. */
-function fitOnce(
+/**
+ * One search with a covariance that belongs to the start, or with one that is given.
+ *
+ * @param measured the annular means, where others than those of the images are to be fitted
+ */
+export function fitOnce(
   annuli: readonly Annuli[],
   uncertainty: Uncertainty,
   start: StentParameters,
   fixed: Partial<StentParameters>,
+  measured = Float64Array.from(annuli.flatMap(({ meanHu }) => Array.from(meanHu))),
+  given?: readonly Float64Array[],
 ): RoundFit | undefined {
   const begin = { ...start, ...fixed };
-  const lower = cholesky(annuliCovariance(annuli, stentSpectrum(begin).value, uncertainty));
+  const lower =
+    given ?? cholesky(annuliCovariance(annuli, stentSpectrum(begin).value, uncertainty));
   if (lower === undefined) return undefined;
-  const measured = Float64Array.from(annuli.flatMap(({ meanHu }) => Array.from(meanHu)));
   const bounds = PARAMETERS.map((name): Bounds => {
     const value = fixed[name];
     const single = name === 'levelHu' && annuli.length < 2 ? 0 : value;
@@ -136,7 +142,10 @@ function weighted(
     const [mean, sd] = EXPECTED[name] ?? [0, 0];
     return sd > 0 ? [{ k, mean, sd }] : [];
   });
-  const extended = (values: Float64Array, extra: (k: number, mean: number, sd: number) => number) => {
+  const extended = (
+    values: Float64Array,
+    extra: (k: number, mean: number, sd: number) => number,
+  ) => {
     const whitened = forwardSolve(lower, values);
     const all = new Float64Array(whitened.length + expected.length);
     all.set(whitened);

@@ -1,6 +1,7 @@
 import { type Annuli, annuliOf } from './annuli.js';
 import type { Uncertainty } from './annuliCovariance.js';
 import { centreStep, centreWeights } from './centreStep.js';
+import { leaningApodisation } from './leaningApodisation.js';
 import { modelProfiles } from './modelProfile.js';
 import { fitRound, type RoundFit } from './roundFit.js';
 import { type StentParameters, stentSpectrum } from './stentModel.js';
@@ -26,6 +27,8 @@ export interface SliceCentre {
 const BEYOND_MM = 2.2;
 const REACH_MM = [3.3, 4.5] as const;
 const ROUNDS = 4;
+/** Turns where size and place are nearly known. */
+const LATER_ROUNDS = 2;
 /** A centre moves no farther than this at once, mm. */
 const MOST_MOVE_MM = 0.4;
 /** Heights of two kernels nearer than this are one, mm. */
@@ -40,18 +43,28 @@ export function searchStent(
   start: VesselAxis,
   uncertainty: Uncertainty,
   startRadiusMm?: number,
+  startParameters?: StentParameters,
 ): FoundStent | undefined {
   let axis = start;
-  let parameters: StentParameters | undefined;
+  let parameters = startParameters;
+  const rounds = startParameters === undefined ? ROUNDS : LATER_ROUNDS;
   let centres: readonly SliceCentre[] = [];
-  for (let round = 0; round < ROUNDS; round += 1) {
+  for (let round = 0; round < rounds; round += 1) {
     const reachMm = reachOf(parameters?.radiusMm ?? startRadiusMm ?? 1.6);
     const annuli = windows.map((window) => annuliOf(window, axis, reachMm));
-    const fit = fitRound(annuli, uncertainty, round === 1 ? undefined : parameters);
+    const leaning = {
+      ...uncertainty,
+      apodisation: leaningApodisation(uncertainty.apodisation, axis),
+    };
+    const fit = fitRound(
+      annuli,
+      leaning,
+      round === 1 && startParameters === undefined ? undefined : parameters,
+    );
     if (fit === undefined) return undefined;
-    if (round === ROUNDS - 1) return { axis, round: fit, annuli, centres };
+    if (round === rounds - 1) return { axis, round: fit, annuli, centres };
     parameters = fit.parameters;
-    const moved = movedAxis(windows, axis, parameters, uncertainty);
+    const moved = movedAxis(windows, axis, parameters, leaning);
     if (moved === undefined) return undefined;
     axis = moved.axis;
     centres = moved.centres;

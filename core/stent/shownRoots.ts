@@ -10,10 +10,7 @@ const AREA_MM = 12;
  * What a noise spectrum of these amplitudes, √NPS at {@link FREQUENCIES}, comes out as at the rings of a texture, as
  * √(NPS/f). An area of side L shows each wave as L·sinc²(L·Δf), and a ring takes in its neighbourhood.
  */
-export function shownRoots(
-  amplitude: Float64Array,
-  rings: readonly number[],
-): Float64Array {
+export function shownRoots(amplitude: Float64Array, rings: readonly number[]): Float64Array {
   const spread = spreadOf(amplitude.map((one) => one * one));
   return Float64Array.from(rings, (f) => {
     const place = f / STEP_PER_MM - 0.5;
@@ -61,7 +58,5 @@ function spreadMatrix(): readonly Float64Array[] {
     }
     return (AREA_MM * STEP_PER_MM * sum) / 5;
   };
-  return Array.from(FREQUENCIES, (f) =>
-    FREQUENCIES.map((from) => seen(f - from) + seen(f + from)),
-  );
+  return Array.from(FREQUENCIES, (f) => FREQUENCIES.map((from) => seen(f - from) + seen(f + from)));
 }

@@ -34,12 +34,7 @@ export async function stentPair(
   const slices = STENT_HEIGHTS_MM.map((zMm, index) => {
     const clean = projectSlice(sceneAt(zMm), STENT_SCAN);
     const noisy = addQuantumNoise(clean, photonsPerRay, seededUniform(seed, 2, index));
-    const [soft, sharp] = reconstructPairHu(
-      noisy,
-      STENT_SCAN,
-      [kernels.soft, kernels.sharp],
-      grid,
-    );
+    const [soft, sharp] = reconstructPairHu(noisy, STENT_SCAN, [kernels.soft, kernels.sharp], grid);
     return { zMm, soft, sharp };
   });
   const stack = (side: 'soft' | 'sharp'): ImageStack =>

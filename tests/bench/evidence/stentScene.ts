@@ -106,9 +106,7 @@ export function stentSlice(
     }),
   );
   return {
-    painted: [
-      { name: 'body', hu: TISSUE_HU, centreMm: [0, 0], radiiMm: [58, 58], angleDeg: 0 },
-    ],
+    painted: [{ name: 'body', hu: TISSUE_HU, centreMm: [0, 0], radiiMm: [58, 58], angleDeg: 0 }],
     insets: [...chambers, ...stents.flatMap((stent) => vessel(stent, zMm))],
   };
 }

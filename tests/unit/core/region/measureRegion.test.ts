@@ -181,7 +181,7 @@ describe('measureRegion', () => {
       4,
       -17,
       // Half a millimetre wide, it can't be made 0.25 mm smaller on each side.
-      ['no-standard-error', 'padding-inside', 'no-placement'],
+      ['no-standard-error', 'padding-inside', 'no-placement', 'few-pixels', 'edges-not-sought'],
     ]);
   });
 

@@ -1,0 +1,10 @@
+export * from './apodisation.js';
+export * from './findStentCentre.js';
+export * from './fitStent.js';
+export * from './measureProfile.js';
+export * from './profileSamples.js';
+export * from './profileShape.js';
+export * from './refusals.js';
+export * from './sectors.js';
+export * from './stentFit.js';
+export type { StoredOfStack } from './windows.js';

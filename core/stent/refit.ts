@@ -1,0 +1,55 @@
+import { normalSource, type UniformSource } from '../phantom/index.js';
+import type { Uncertainty } from './annuliCovariance.js';
+import { fitOnce, roundModel } from './roundFit.js';
+import type { FoundStent } from './searchStent.js';
+
+/** Standard errors by refitting. */
+export interface Refitted {
+  readonly strutDiameterMm: number;
+  readonly lumenHu: number;
+  readonly refits: number;
+}
+
+/**
+ * Fits again to what the fitted model shows, each time with other noise, drawn from the covariance of the means: their
+ * scatter is a standard error that knows how bent the model is. The place of the axis is held.
+ *
+ * @returns undefined where fewer than half come to an end
+ */
+export function refitWithNoise(
+  { round, annuli }: FoundStent,
+  uncertainty: Uncertainty,
+  uniform: UniformSource,
+  refits: number,
+): Refitted | undefined {
+  const normal = normalSource(uniform);
+  const { value } = roundModel(annuli, uncertainty, round.parameters);
+  const diameters: number[] = [];
+  const lumens: number[] = [];
+  for (let refit = 0; refit < refits; refit += 1) {
+    const draws = Float64Array.from(value, () => normal());
+    const noisy = value.map((mean, row) => {
+      const line = round.lower[row] as Float64Array;
+      let sum = mean;
+      for (let k = 0; k <= row; k += 1) sum += (line[k] as number) * (draws[k] as number);
+      return sum;
+    });
+    const again = fitOnce(annuli, uncertainty, round.parameters, {}, noisy, round.lower);
+    if (again === undefined) continue;
+    diameters.push(2 * again.parameters.radiusMm);
+    lumens.push(again.parameters.lumenHu);
+  }
+  if (diameters.length < refits / 2 || diameters.length < 2) return undefined;
+  return {
+    strutDiameterMm: spreadOf(diameters),
+    lumenHu: spreadOf(lumens),
+    refits: diameters.length,
+  };
+}
+
+function spreadOf(values: readonly number[]): number {
+  const mean = values.reduce((sum, value) => sum + value, 0) / values.length;
+  return Math.sqrt(
+    values.reduce((sum, value) => sum + (value - mean) ** 2, 0) / (values.length - 1),
+  );
+}
