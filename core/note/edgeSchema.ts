@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { BAND_MM } from '../region/edgeSamples.js';
 import type { Frozen } from './frozen.js';
+import { QuoteBySchema, QuoteSchema } from './quoteSchema.js';
 
 const maybeNumber = z.number().nullable();
 const point = z.tuple([z.number(), z.number(), z.number()]);
@@ -34,6 +35,10 @@ export const EdgeValueSchema = z.object({
 export const NoteEdgeSchema = PlanEdgeSchema.extend({
   /** Name shown to the reader: 'Edge 1'. */
   label: z.string(),
+  /** Which kernel's width is quoted; earlier versions said nothing, so that the proposal holds. */
+  quote: QuoteSchema.default(null),
+  quoteReason: z.string().default(''),
+  quoteBy: QuoteBySchema.default('proposal'),
   soft: EdgeValueSchema.nullable(),
   sharp: EdgeValueSchema.nullable(),
 });

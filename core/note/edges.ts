@@ -2,6 +2,8 @@ import type { BandLine, EdgeValue } from '../region/index.js';
 import { type Result, refuse, success } from '../result.js';
 import type { NoteEdge } from './edgeSchema.js';
 import { nextNumber, rememberedNumbers } from './numbering.js';
+import { edgeQuote } from './quoteProposal.js';
+import type { Quoted } from './quoteSchema.js';
 import type { Note } from './schema.js';
 import { touched } from './touched.js';
 
@@ -23,7 +25,19 @@ export function addEdge(
 ): { readonly note: Note; readonly edge: NoteEdge } {
   const { id, number, lastNumbers } = nextNumber(note, EDGE_LETTER);
   const { fromMm, toMm, bandMm } = line;
-  const edge: NoteEdge = { id, label: `Edge ${number}`, fromMm, toMm, bandMm, soft, sharp };
+  const { quote, reason: quoteReason } = edgeQuote({ soft, sharp });
+  const edge: NoteEdge = {
+    id,
+    label: `Edge ${number}`,
+    fromMm,
+    toMm,
+    bandMm,
+    quote,
+    quoteReason,
+    quoteBy: 'proposal',
+    soft,
+    sharp,
+  };
   return { note: touched(note, { edges: [...note.edges, edge], lastNumbers }, now), edge };
 }
 
@@ -40,6 +54,19 @@ export function changeEdge(
   const edge: NoteEdge = { ...present, fromMm, toMm, bandMm, soft, sharp };
   const edges = note.edges.map((other) => (other.id === id ? edge : other));
   return success({ note: touched(note, { edges }, now), edge });
+}
+
+/** Takes the reader's choice of the kernel to quote for an edge line, or gives it back to the proposal. */
+export function changeEdgeQuote(
+  note: Note,
+  id: string,
+  change: Partial<Quoted>,
+  now: string,
+): Result<Note> {
+  const present = note.edges.find((edge) => edge.id === id);
+  if (present === undefined) return refuse('unknown-edge', `The note has no edge line ${id}.`);
+  const edges = note.edges.map((other) => (other.id === id ? { ...present, ...change } : other));
+  return success(touched(note, { edges }, now));
 }
 
 /** Removes an edge line; its number is not used again. */

@@ -9,6 +9,7 @@ import {
   PlanRegionSchema,
   StackReferenceSchema,
 } from './plan.js';
+import { QuoteBySchema, QuotedSchema } from './quoteSchema.js';
 import { RegionValueSchema } from './regionValueSchema.js';
 import { type RepeatedRegionSchema, RepeatSchema } from './repeatSchema.js';
 import { PairTextureSchema } from './textureSchema.js';
@@ -129,9 +130,8 @@ export const NoteRegionSchema = PlanRegionSchema.extend({
   place: text,
   findingId: maybeText,
   /** Which kernel's value is quoted, why, and who says so. In earlier versions it was always the reader. */
-  quote: z.enum(['soft', 'sharp', 'both', 'neither']).nullable(),
-  quoteReason: text,
-  quoteBy: z.enum(['proposal', 'reader']).default('reader'),
+  ...QuotedSchema.shape,
+  quoteBy: QuoteBySchema.default('reader'),
   soft: RegionValueSchema.nullable(),
   sharp: RegionValueSchema.nullable(),
 });

@@ -1,4 +1,4 @@
-import { withProposedQuotes } from './quoteProposal.js';
+import { withProposedQuotes } from './quoteInForce.js';
 import type { Note } from './schema.js';
 import { renewedVisibility } from './visibilityOf.js';
 
@@ -8,5 +8,5 @@ import { renewedVisibility } from './visibilityOf.js';
  */
 export function touched(note: Note, changes: Partial<Note>, now: string): Note {
   const next: Note = { ...note, ...changes, verification: 'UNVERIFIED', changedAt: now };
-  return { ...next, visibility: renewedVisibility(next), regions: withProposedQuotes(next) };
+  return { ...next, visibility: renewedVisibility(next), ...withProposedQuotes(next) };
 }

@@ -50,7 +50,7 @@ export const FLAGS = {
   zeroSd: { code: 'zero-sd', text: 'The SD is zero: no SNR.' },
   lossy: {
     code: 'lossy',
-    text: 'The image was compressed with loss: SD and SNR are not the scanner’s.',
+    text: 'The image was compressed with loss: SD and SNR are not the scanner’s. Measure on images without loss, or say so beside the number.',
   },
   positionsNotComparable: {
     code: 'positions-not-comparable',

@@ -4,8 +4,11 @@ import type { Shape } from './shape.js';
 /** A place in the plane of a slice, mm along its rows and its columns from the first pixel. */
 export type PlaneMm = readonly [number, number];
 
-/** Sides of the polygon that stands for an ellipse: it lies within 0.3 % of the radius. */
-const SIDES = 40;
+/** Corners of a circle of 40 sides: as an ellipse it lies within 0.3 % of the radius. */
+const CORNERS: readonly PlaneMm[] = Array.from({ length: 40 }, (_, side) => {
+  const angle = (2 * Math.PI * side) / 40;
+  return [Math.cos(angle), Math.sin(angle)];
+});
 
 /** The border of a shape in the plane of a slice: a closed polygon. */
 export function borderInPlane(shape: Shape, grid: SliceGrid): readonly PlaneMm[] {
@@ -18,14 +21,9 @@ export function borderInPlane(shape: Shape, grid: SliceGrid): readonly PlaneMm[]
   const u = shape.u ?? grid.rowDirection;
   const v = shape.v ?? grid.columnDirection;
   const [a, b] = shape.radiiMm;
-  return Array.from({ length: SIDES }, (_, side): PlaneMm => {
-    const angle = (2 * Math.PI * side) / SIDES;
-    const [alongU, alongV] = [a * Math.cos(angle), b * Math.sin(angle)];
-    return [
-      x + alongU * dot(u, grid.rowDirection) + alongV * dot(v, grid.rowDirection),
-      y + alongU * dot(u, grid.columnDirection) + alongV * dot(v, grid.columnDirection),
-    ];
-  });
+  const [uAcross, uDown] = [a * dot(u, grid.rowDirection), a * dot(u, grid.columnDirection)];
+  const [vAcross, vDown] = [b * dot(v, grid.rowDirection), b * dot(v, grid.columnDirection)];
+  return CORNERS.map(([c, s]) => [x + c * uAcross + s * vAcross, y + c * uDown + s * vDown]);
 }
 
 /** Distance of a place from a closed polygon, mm: 0 inside. */

@@ -33,9 +33,11 @@ export function edgeLineHtml(note: Note): string {
         values.sliceIndex === null ? '–' : `${values.sliceIndex + 1} of ${values.slices}`;
       return `<tr>${first}<td>${escapeHtml(name)}</td>${cells.join('')}<td class="number">${escapeHtml(slice)}</td></tr>`;
     });
-    const remarks = row.kernels.flatMap(({ kernel, flags }) =>
-      flags.map((text) => escapeHtml(`${kernel}: ${text}`)),
+    const quote = row.quote.sentence === '' ? [] : [escapeHtml(row.quote.sentence)];
+    const flags = row.kernels.flatMap((of) =>
+      of.flags.map((text) => escapeHtml(`${of.kernel}: ${text}`)),
     );
+    const remarks = [...quote, ...flags];
     const remark =
       remarks.length === 0
         ? ''

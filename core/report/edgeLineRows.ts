@@ -1,8 +1,10 @@
 import { formatFixed, formatQuantity, MINUS, type Quantity } from '../format/index.js';
 import type { NoteEdge } from '../note/edgeSchema.js';
+import { edgeQuoteInForce } from '../note/quoteInForce.js';
 import type { Note } from '../note/schema.js';
 import { middleOf } from '../region/index.js';
 import type { KernelValues, TableRow } from './measurementTable.js';
+import { quoteCells } from './quoteCells.js';
 import type { QuantityValue } from './regionQuantities.js';
 
 type EdgeNumbers = NonNullable<NoteEdge['soft']>;
@@ -58,6 +60,9 @@ const DEFINITIONS: readonly {
   },
 ];
 
+/** Names of an edge line's quantities, in the order of the tables. */
+export const EDGE_QUANTITIES: readonly string[] = DEFINITIONS.map(({ quantity }) => quantity);
+
 /** The edge lines of a note as rows of the long table. */
 export function edgeLineRows({ edges, pair }: Note): readonly TableRow[] {
   const stacks = [
@@ -75,7 +80,7 @@ export function edgeLineRows({ edges, pair }: Note): readonly TableRow[] {
     assessability: '',
     reason: '',
     place: placeText(edge),
-    quoteReason: '',
+    quote: quoteCells(edgeQuoteInForce(edge)),
     centreMm: middleOf(edge),
     kernels: stacks.map(({ kernel, stack }): KernelValues => {
       const value = edge[kernel];
@@ -83,7 +88,7 @@ export function edgeLineRows({ edges, pair }: Note): readonly TableRow[] {
         kernel,
         kernelLabel: stack.kernelLabel,
         seriesInstanceUid: stack.seriesInstanceUid,
-        quoted: false,
+        quoted: edge.quote === kernel || edge.quote === 'both',
         quantities: value === null ? [] : quantitiesOf(value),
         sliceIndex: value?.sliceIndex ?? null,
         slices: stack.slices,

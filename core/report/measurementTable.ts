@@ -1,11 +1,12 @@
 import { formatQuantity } from '../format/index.js';
+import { regionQuote } from '../note/quoteInForce.js';
 import type { Kernel, Note, NoteContrast, NoteFinding, NoteRegion } from '../note/schema.js';
 import { segmentOf } from '../note/segments.js';
 import { type Flag, isQuiet, shapeCentre } from '../region/index.js';
 import { cautionsOf } from './cautions.js';
 import { densityQuantities } from './densityQuantities.js';
 import { type Fact, noteFacts } from './noteFacts.js';
-import { quoteWords } from './quoteWords.js';
+import { NO_QUOTE, type QuoteCells, quoteCells } from './quoteCells.js';
 import { type QuantityValue, regionQuantities } from './regionQuantities.js';
 
 /** All that an export shows of a note. Text of files and readers is raw here: each export makes it fit for its form. */
@@ -31,7 +32,7 @@ export interface TableRow {
   readonly assessability: string;
   readonly reason: string;
   readonly place: string;
-  readonly quoteReason: string;
+  readonly quote: QuoteCells;
   /** Centre of the ellipse, or mean of the outline's points: LPS, mm. */
   readonly centreMm: readonly [number, number, number] | null;
   readonly kernels: readonly KernelValues[];
@@ -80,7 +81,7 @@ function regionRow(note: Note, region: NoteRegion): TableRow {
     role: region.role,
     ...findingCells(finding),
     place: region.place,
-    quoteReason: quoteWords(region),
+    quote: quoteCells(regionQuote(note, region)),
     centreMm: shapeCentre(region.shape),
     kernels: kernelsOf(note).map(({ kernel, stack }) => {
       const value = region[kernel];
@@ -128,7 +129,7 @@ function contrastRow(note: Note, contrast: NoteContrast): TableRow {
     role: '',
     ...findingCells(finding),
     place: lumen?.place ?? '',
-    quoteReason: '',
+    quote: NO_QUOTE,
     centreMm: null,
     kernels: kernelsOf(note).map(({ kernel, stack }) => ({
       kernel,

@@ -137,7 +137,7 @@ function remarkLine(row: TableRow, columns: number): string {
   const parts = [
     row.assessability === '' ? '' : `Assessability: ${row.assessability}`,
     row.reason === '' ? '' : `Reason: ${row.reason}`,
-    row.quoteReason === '' ? '' : `Quoted because: ${row.quoteReason}`,
+    row.quote.sentence,
     ...row.kernels.map(sliceText),
     flagsText(row),
   ].filter((part) => part !== '');

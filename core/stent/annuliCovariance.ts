@@ -5,7 +5,7 @@ import { FREQUENCIES, RING_AREAS } from './frequencies.js';
 /** Noise that no power spectrum tells: rounding of the values, resampling; part of the variance of each mean. */
 const OWN_PART = 0.02;
 /** A surrounding that isn't even: SD of a bowl-shaped part at the outermost annulus, the same on both kernels, HU. */
-const BOWL_HU = 12;
+const BOWL_HU = 6;
 /** The scale sets in above this frequency: W is 1 at 0 whatever the noise tells, per mm. */
 const SCALE_FROM_PER_MM = 0.1;
 
@@ -87,7 +87,7 @@ export function annuliCovariance(
 }
 
 /** Each kernel's W may be wrong by this for itself, in bands of this width, per mm. */
-const OWN_ERROR = 0.012;
+const OWN_ERROR = 0.02;
 const OWN_STEP_PER_MM = 0.15;
 const OWN_SHAPES = Array.from({ length: 8 }, (_, band) =>
   FREQUENCIES.map((f) => OWN_ERROR * Math.max(0, 1 - Math.abs(f / OWN_STEP_PER_MM - band - 1))),

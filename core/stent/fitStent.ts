@@ -14,7 +14,7 @@ import { type ModelProfile, modelProfiles } from './modelProfile.js';
 import { refitWithNoise } from './refit.js';
 import { errorAt, refusalOf } from './refusals.js';
 import { residualMap } from './residualMap.js';
-import { roundModel } from './roundFit.js';
+import { roundMeans } from './roundProblem.js';
 import { type FoundStent, searchStent } from './searchStent.js';
 import { sectorResiduals } from './sectors.js';
 import type { Estimated, FittedStent, KernelResult } from './stentFit.js';
@@ -220,7 +220,7 @@ function kernelResults(
   storedOf: StoredOfStack,
   noises: readonly number[],
 ): readonly KernelResult[] {
-  const model = roundModel(found.annuli, leaning, found.round.parameters).value;
+  const model = roundMeans(found.annuli, leaning.apodisation, found.round.parameters);
   let taken = 0;
   return kernels.flatMap(({ stack }, kernel) => {
     const annuli = found.annuli[kernel];

@@ -1,7 +1,9 @@
 import { normalSource, type UniformSource } from '../phantom/index.js';
 import type { Uncertainty } from './annuliCovariance.js';
-import { fitOnce, roundModel } from './roundFit.js';
+import { fitOnce } from './roundFit.js';
+import { EXPECTATIONS, roundMeans } from './roundProblem.js';
 import type { FoundStent } from './searchStent.js';
+import { listOf, type StentParameters } from './stentModel.js';
 
 /** Standard errors by refitting. */
 export interface Refitted {
@@ -23,7 +25,7 @@ export function refitWithNoise(
   refits: number,
 ): Refitted | undefined {
   const normal = normalSource(uniform);
-  const { value } = roundModel(annuli, uncertainty, round.parameters);
+  const value = roundMeans(annuli, uncertainty.apodisation, round.parameters);
   const diameters: number[] = [];
   const lumens: number[] = [];
   for (let refit = 0; refit < refits; refit += 1) {
@@ -34,7 +36,17 @@ export function refitWithNoise(
       for (let k = 0; k <= row; k += 1) sum += (line[k] as number) * (draws[k] as number);
       return sum;
     });
-    const again = fitOnce(annuli, uncertainty, round.parameters, {}, noisy, round.lower);
+    const again = fitOnce(
+      annuli,
+      uncertainty,
+      round.parameters,
+      {},
+      {
+        measured: noisy,
+        lower: round.lower,
+        expectedOff: expectationsAround(round.parameters, normal),
+      },
+    );
     if (again === undefined) continue;
     diameters.push(2 * again.parameters.radiusMm);
     lumens.push(again.parameters.lumenHu);
@@ -45,6 +57,15 @@ export function refitWithNoise(
     lumenHu: spreadOf(lumens),
     refits: diameters.length,
   };
+}
+
+/** The expectations as if the fitted stent were the true one and they were off by chance. */
+function expectationsAround(parameters: StentParameters, normal: () => number): Float64Array {
+  const list = listOf(parameters);
+  return Float64Array.from(
+    EXPECTATIONS,
+    ({ k, mean, sd }) => ((list[k] as number) - mean) / sd + normal(),
+  );
 }
 
 function spreadOf(values: readonly number[]): number {

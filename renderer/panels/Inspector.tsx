@@ -9,6 +9,7 @@ import {
 import { ROLES } from '../../core/region/index.js';
 import type { LedgerActions } from './ledgerActions.js';
 import { Choice, type ChoiceOption, plainOptions } from './parts/Choice.js';
+import { QuoteFields } from './parts/QuoteFields.js';
 import { RoleKey } from './parts/RoleSignView.js';
 import { TextField } from './parts/TextField.js';
 
@@ -33,10 +34,6 @@ const SEGMENT_OPTIONS: readonly ChoiceOption<string>[] = [
     text: `${number} ${abbreviation} · ${name}`,
   })),
 ];
-
-const CHOSEN = ['soft', 'sharp', 'both', 'neither'] as const;
-
-type QuoteChoice = 'proposal' | 'none' | (typeof CHOSEN)[number];
 
 /** The line under the ledger in which the selected region's words are changed. */
 export function Inspector(props: InspectorProps) {
@@ -83,7 +80,14 @@ export function Inspector(props: InspectorProps) {
           actions.onFinding(id, { segment: value === '' ? null : Number(value) })
         }
       />
-      <QuoteFields region={region} proposal={props.proposal} frozen={frozen} actions={actions} />
+      <QuoteFields
+        quoted={region}
+        label={region.label}
+        proposal={props.proposal}
+        frozen={frozen}
+        onQuote={(quote, reason) => actions.onQuote(id, quote, reason)}
+        onProposed={() => actions.onProposedQuote(id)}
+      />
       <button
         type="button"
         class="button icon-button"
@@ -93,49 +97,5 @@ export function Inspector(props: InspectorProps) {
         Delete<span class="visually-hidden"> {region.label}</span>
       </button>
     </div>
-  );
-}
-
-interface QuoteFieldsProps {
-  readonly region: NoteRegion;
-  readonly proposal: QuoteProposal;
-  readonly frozen: boolean;
-  readonly actions: Pick<LedgerActions, 'onQuote' | 'onProposedQuote'>;
-}
-
-/** Which kernel is quoted: as proposed, with the reason on hover, or the reader's choice with a reason of his own. */
-function QuoteFields({ region, proposal, frozen, actions }: QuoteFieldsProps) {
-  const isProposed = region.quoteBy === 'proposal';
-  const options: readonly ChoiceOption<QuoteChoice>[] = [
-    { value: 'proposal', text: `as proposed: ${proposal.quote ?? '–'}` },
-    ...plainOptions(CHOSEN),
-    { value: 'none', text: '–' },
-  ];
-  const differs = !isProposed && proposal.quote !== region.quote;
-  return (
-    <>
-      <Choice
-        label="Quote"
-        value={isProposed ? 'proposal' : (region.quote ?? 'none')}
-        options={options}
-        disabled={frozen}
-        title={`Proposed: ${proposal.quote ?? 'none'}. ${proposal.reason}`}
-        onChange={(choice) => {
-          if (choice === 'proposal') actions.onProposedQuote(region.id);
-          else actions.onQuote(region.id, choice === 'none' ? null : choice, '');
-        }}
-      />
-      {!isProposed && region.quote !== null && (
-        <TextField
-          bare
-          look="why"
-          label="Why this kernel is quoted"
-          placeholder={differs ? `why not ${proposal.quote ?? 'none'}` : 'why'}
-          value={region.quoteReason}
-          disabled={frozen}
-          onCommit={(reason) => actions.onQuote(region.id, region.quote, reason)}
-        />
-      )}
-    </>
   );
 }

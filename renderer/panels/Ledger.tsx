@@ -5,6 +5,7 @@ import {
   NoiseSourceSchema,
   type Note,
   quoteProposal,
+  regionQuote,
 } from '../../core/note/index.js';
 import { contrastFormula } from '../../core/region/index.js';
 import { Inspector } from './Inspector.js';
@@ -82,6 +83,7 @@ export function Ledger(props: LedgerProps) {
                     <LedgerRegionRow
                       key={region.id}
                       region={region}
+                      quote={regionQuote(note, region)}
                       contrasts={contrastsOf(note.contrasts, region.id)}
                       selected={region.id === props.selectedId}
                       onSelect={props.onSelect}

@@ -7,6 +7,7 @@ import {
   type NoteRegion,
 } from '../../core/note/index.js';
 import { Choice, type ChoiceOption } from './parts/Choice.js';
+import { FlagSign } from './parts/StateSign.js';
 
 export interface LedgerContrastRowProps {
   readonly contrast: NoteContrast;
@@ -80,6 +81,12 @@ export function LedgerContrastRow(props: LedgerContrastRowProps) {
         )}
       </td>
       <td class="soft" title={reason}>
+        {reason !== undefined && (
+          <span class="flag">
+            <FlagSign />
+            <span class="visually-hidden">{reason}</span>
+          </span>
+        )}
         {formatQuantity(contrast.soft, 'ratio')}
       </td>
       <td colSpan={2} />

@@ -1,12 +1,14 @@
 import { formatMeanSd, formatQuantity, NO_VALUE, visibleText } from '../../core/format/index.js';
-import type { NoteContrast, NoteRegion } from '../../core/note/index.js';
+import type { NoteContrast, NoteRegion, QuoteInForce } from '../../core/note/index.js';
 import { FLAGS, isQuiet, type RegionValue } from '../../core/region/index.js';
-import { quoteWords } from '../../core/report/quoteWords.js';
+import { quoteCells } from '../../core/report/quoteCells.js';
 import { RoleKey } from './parts/RoleSignView.js';
 import { FlagSign } from './parts/StateSign.js';
 
 export interface LedgerRegionRowProps {
   readonly region: NoteRegion;
+  /** Which kernel is quoted, by whom, and what the rules propose instead. */
+  readonly quote: QuoteInForce;
   /** The contrasts in which it is the lumen; the last one is shown. */
   readonly contrasts: readonly NoteContrast[];
   readonly selected: boolean;
@@ -14,7 +16,8 @@ export interface LedgerRegionRowProps {
 }
 
 /** A region's row. A click anywhere on it selects it; so does its button, for those who use the keyboard. */
-export function LedgerRegionRow({ region, contrasts, selected, onSelect }: LedgerRegionRowProps) {
+export function LedgerRegionRow(props: LedgerRegionRowProps) {
+  const { region, quote, contrasts, selected, onSelect } = props;
   const contrast = contrasts.at(-1);
   return (
     <tr
@@ -35,15 +38,25 @@ export function LedgerRegionRow({ region, contrasts, selected, onSelect }: Ledge
       <td>{formatQuantity((region.soft ?? region.sharp)?.areaMm2, 'areaMm2')}</td>
       <ValueCells kernel="soft" value={region.soft} contrast={contrast} />
       <ValueCells kernel="sharp" value={region.sharp} contrast={contrast} />
-      <td
-        class={region.quote === null ? 'text none' : 'text'}
-        title={quoteWords(region) || undefined}
-      >
-        <span class={region.quoteBy === 'proposal' ? 'proposed' : ''}>
-          {region.quote ?? NO_VALUE}
-        </span>
-      </td>
+      <QuoteCell quote={quote} />
     </tr>
+  );
+}
+
+/** The kernel that is quoted; a flag where the rules propose another one than the reader chose. */
+function QuoteCell({ quote }: { readonly quote: QuoteInForce }) {
+  const { sentence } = quoteCells(quote);
+  const told = sentence === '' ? quote.reason : sentence;
+  return (
+    <td class={quote.quote === null ? 'text none' : 'text'} title={told || undefined}>
+      <span class={quote.by === 'proposal' ? 'proposed' : ''}>{quote.quote ?? NO_VALUE}</span>
+      {quote.instead !== undefined && (
+        <span class="flag after">
+          <FlagSign />
+          <span class="visually-hidden">{told}</span>
+        </span>
+      )}
+    </td>
   );
 }
 

@@ -57,7 +57,12 @@ export function PairedReadout({ region, unit }: PairedReadoutProps) {
         </tbody>
       </table>
       {flags.length > 0 && (
-        <ul class="flags">
+        <ul
+          class="flags"
+          aria-label="Flags of this region"
+          // biome-ignore lint/a11y/noNoninteractiveTabindex: in a low window Tab brings the flags into view
+          tabIndex={0}
+        >
           {flags.map((text) => (
             <li key={text}>
               <FlagSign />

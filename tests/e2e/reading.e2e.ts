@@ -149,6 +149,21 @@ test('a contrast gives CNR with its formula', async () => {
   await row.getByLabel('Noise of contrast C1').selectOption('wall');
 });
 
+test('a kernel to quote is proposed; the reader changes it with a reason, and takes that back', async () => {
+  await regionRow(page, 'L1').click();
+  const ledger = page.locator('[data-panel=ledger]');
+  const cell = regionRow(page, 'L1').getByRole('cell').last();
+  await expect(cell).toHaveText('soft');
+  await expect(cell).toHaveAttribute('title', /^Quoted: soft kernel, as proposed\. Density: /);
+  await ledger.getByRole('combobox', { name: /^Quote/ }).selectOption('sharp');
+  await expect(cell).toContainText('The rules propose soft');
+  await ledger.getByLabel('Why this kernel is quoted, Lumen 1').fill('crisper here');
+  await page.keyboard.press('Enter');
+  await expect(cell).toHaveAttribute('title', /chosen by the reader: crisper here\./);
+  await ledger.getByRole('combobox', { name: /^Quote/ }).selectOption('proposal');
+  await expect(cell).toHaveText('soft');
+});
+
 test('finding, segment and place are chosen in the ledger', async () => {
   await regionRow(page, 'L1').click();
   const ledger = page.locator('[data-panel=ledger]');

@@ -101,7 +101,8 @@ describe.skipIf(!available)(title, () => {
       expect(document.contrasts).toHaveLength(4);
       for (const { id, soft, sharp, flags } of document.contrasts) {
         const noise = id.slice('C-'.length);
-        expect(flags).toEqual([]);
+        // Flags of its regions may stand with a contrast; none of them takes its value away.
+        expect(flags.every(({ code }: { code: string }) => !code.startsWith('no-'))).toBe(true);
         expect(Math.abs(soft - (expected.soft[noise] ?? Number.NaN))).toBeLessThan(TOLERANCE);
         expect(Math.abs(sharp - (expected.sharp[noise] ?? Number.NaN))).toBeLessThan(TOLERANCE);
       }

@@ -1,4 +1,5 @@
 import type { Role } from '../../region/roles.js';
+import type { Quoted } from '../quoteSchema.js';
 import type { FindingKind, Note, NoteFinding, NoteRegion } from '../schema.js';
 import { segmentOf } from '../segments.js';
 
@@ -55,6 +56,9 @@ function ofNote(note: Note): readonly Missing[] {
     ...contrasts
       .filter(({ soft, sharp }) => soft === null && sharp === null)
       .map(({ id }) => missing('contrast-value', `Contrast ${id} has a value on neither kernel.`)),
+    ...note.edges
+      .filter(isMuteChoice)
+      .map(({ label }) => missing('quote-reason', `Why ${label} is quoted as it is.`)),
   ];
 }
 
@@ -112,7 +116,7 @@ function ofAssessability(
 }
 
 /** The reader chose a kernel against or without the proposal, and gave no reason. */
-function isMuteChoice({ quote, quoteReason, quoteBy }: NoteRegion): boolean {
+function isMuteChoice({ quote, quoteReason, quoteBy }: Quoted): boolean {
   return quoteBy === 'reader' && quote !== null && quoteReason.trim() === '';
 }
 

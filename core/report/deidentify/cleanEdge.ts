@@ -1,4 +1,5 @@
 import type { NoteEdge } from '../../note/edgeSchema.js';
+import { edgeQuote } from '../../note/quoteProposal.js';
 
 /** An edge line without identity: its place and numbers stay, its name is made anew, its images get new UIDs. */
 export function cleanEdge(
@@ -22,6 +23,18 @@ export function cleanEdge(
       frameNumber: of.frameNumber,
       flags: of.flags.map(({ code, text }) => ({ code, text: sentence(text) })),
     };
-  const { fromMm, toMm, bandMm, soft, sharp } = edge;
-  return { id, label: `Edge ${id}`, fromMm, toMm, bandMm, soft: value(soft), sharp: value(sharp) };
+  const { fromMm, toMm, bandMm, soft, sharp, quote, quoteBy } = edge;
+  return {
+    id,
+    label: `Edge ${id}`,
+    fromMm,
+    toMm,
+    bandMm,
+    quote,
+    // As of regions: a reason of the program is made anew, one of the reader goes.
+    quoteReason: quoteBy === 'proposal' ? edgeQuote(edge).reason : '',
+    quoteBy,
+    soft: value(soft),
+    sharp: value(sharp),
+  };
 }

@@ -98,7 +98,7 @@ function remarks(row: TableRow): readonly PdfPart[] {
   const parts = [
     row.assessability === '' ? '' : `Assessability: ${row.assessability}.`,
     row.reason === '' ? '' : `Reason: ${row.reason}.`,
-    row.quoteReason === '' ? '' : `Quoted because: ${row.quoteReason}.`,
+    row.quote.sentence,
     flagsText(row),
   ].filter((part) => part !== '');
   return parts.length === 0 ? [] : [{ kind: 'small', text: parts.join(' ') }];

@@ -65,8 +65,9 @@ export function groupItem(
       ...(contrast === undefined ? [] : [textItem('CONTAINS', OWN.operands, row.label)]),
       ...(finding === undefined ? [] : findingItems(finding)),
       ...textIfAny('CONTAINS', OWN.place, row.place),
-      ...(values.quoted
-        ? [textItem('CONTAINS', OWN.quoted, row.quoteReason.trim() || 'No reason was given.')]
+      ...(values.quoted ? [textItem('CONTAINS', OWN.quoted, row.quote.sentence)] : []),
+      ...(row.quote.kernel === 'neither'
+        ? [textItem('CONTAINS', OWN.remark, row.quote.sentence)]
         : []),
       ...[...values.flags, ...row.flags].map((flag) => textItem('CONTAINS', OWN.remark, flag)),
     ],

@@ -33,7 +33,15 @@ function emptyNote(): Note {
 describe('Edge lines of a note', () => {
   it('are numbered, and a number is not used again after a removal', () => {
     const one = addEdge(emptyNote(), LINE, NONE, NOW);
-    expect(one.edge).toEqual({ id: 'E1', label: 'Edge 1', ...LINE, ...NONE });
+    expect(one.edge).toEqual({
+      id: 'E1',
+      label: 'Edge 1',
+      ...LINE,
+      quote: null,
+      quoteReason: 'No rise on either kernel.',
+      quoteBy: 'proposal',
+      ...NONE,
+    });
     const gone = removeEdge(one.note, 'E1', NOW);
     expect(gone.edges).toEqual([]);
     expect(addEdge(gone, LINE, NONE, NOW).edge.id).toBe('E2');

@@ -1,3 +1,4 @@
+import { csvParse } from 'd3';
 import { describe, expect, it } from 'vitest';
 import { addEdge, type Note } from '../../../../core/note/index.js';
 import { type EdgeValue, edgeNotMeasured } from '../../../../core/region/index.js';
@@ -54,11 +55,18 @@ describe('Edge lines in the exports', () => {
     expect(toHtml(note)).not.toContain('Edge lines');
   });
 
-  it('leave the table of regions as it is', () => {
+  it('stand in the wide table after regions and contrasts, with the kernel that is quoted', () => {
     const { note } = sampleState();
     if (note === undefined) throw new Error('no note');
-    expect(toWideCsv(noteWithEdge()).split('\r\n').length).toBe(
-      toWideCsv(note).split('\r\n').length,
+    const items = (text: string) =>
+      csvParse(text)
+        .map(({ id }) => id)
+        .filter((id) => id !== 'note');
+    expect(items(toWideCsv(noteWithEdge()))).toEqual([...items(toWideCsv(note)), 'E1']);
+    // No step was found on the sharp kernel.
+    const long = csvParse(toCsv(noteWithEdge())).filter(({ id }) => id === 'E1');
+    expect(new Set(long.map((line) => `${line.kernel} ${line.quoted} ${line.quote_by}`))).toEqual(
+      new Set(['soft yes proposal', 'sharp no proposal']),
     );
   });
 });

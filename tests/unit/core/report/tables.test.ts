@@ -1,5 +1,7 @@
 import { csvParse, tsvParseRows } from 'd3';
 import { describe, expect, it } from 'vitest';
+import { addEdge } from '../../../../core/note/index.js';
+import { type EdgeValue, edgeNotMeasured } from '../../../../core/region/index.js';
 import {
   CAUTIONS,
   SYNTHETIC_CAUTION,
@@ -8,6 +10,7 @@ import {
   toWideCsv,
 } from '../../../../core/report/index.js';
 import { pythonHas, pythonJson } from '../../../support/python.js';
+import { NOW } from '../note/noteFixture.js';
 import { richNote } from '../note/richNote.js';
 import { hostileNote } from './hostileNote.js';
 
@@ -75,6 +78,17 @@ describe('the long table (CSV)', () => {
     const quoted = lines.filter((l) => l.quoted === 'yes').map((l) => `${l.id} ${l.kernel}`);
     // L1 by the reader's choice, the others as proposed.
     expect([...new Set(quoted)]).toEqual(['L1 sharp', 'W1 soft', 'R1 soft', 'P1 soft']);
+    const words = (id: string) => {
+      const line = lines.find((l) => l.id === id);
+      return [line?.quote, line?.quote_by, line?.quote_reason];
+    };
+    expect(words('L1')).toEqual(['sharp', 'reader', 'struts']);
+    expect(words('W1')).toEqual([
+      'soft',
+      'proposal',
+      'Density: the soft kernel has less noise and less shift.',
+    ]);
+    expect(words('C1')).toEqual(['', '', '']);
   });
 
   it('ends with evidence of the pair and cautions in lines of the same shape', () => {
@@ -151,11 +165,43 @@ describe('the wide tables', () => {
     expect(Number(lines[0]?.soft_mean)).toBe(richNote().regions[0]?.soft?.meanHu);
     expect(Number(lines[4]?.sharp_cnr)).toBe(richNote().contrasts[0]?.sharp);
     expect(lines[4]?.soft_mean).toBe('');
+    expect([lines[0]?.quote, lines[0]?.quote_by, lines[0]?.quote_reason]).toEqual([
+      'sharp',
+      'reader',
+      'struts',
+    ]);
+    expect(lines[0]).not.toHaveProperty('soft_edge_rise_mm');
+  });
+
+  it('have a line and columns for edge lines where there are any, with their unit', () => {
+    const value = (riseMm: number): EdgeValue => ({
+      ...edgeNotMeasured({ code: 'no-step', text: 'No clear step.' }),
+      riseMm,
+      flags: [],
+    });
+    const { note } = addEdge(
+      richNote(),
+      { fromMm: [0, 0, 1], toMm: [4, 0, 1], bandMm: 2 },
+      { soft: value(1.25), sharp: value(0.75) },
+      NOW,
+    );
+    const line = csvParse(toWideCsv(note)).find(({ id }) => id === 'E1');
+    expect(line).toMatchObject({
+      label: 'Edge 1',
+      soft_edge_rise_mm: '1.25',
+      sharp_edge_rise_mm: '0.75',
+      soft_mean: '',
+      quote: 'sharp',
+      quote_by: 'proposal',
+    });
+    const [head, ...rows] = tsvParseRows(toTsv(note));
+    const at = head?.indexOf('Sharp edge rise, mm') ?? -1;
+    expect(rows.find(([id]) => id === 'E1')?.[at]).toBe('0.75');
   });
 
   it('carry printed digits, kernels and cautions to the clipboard', () => {
     const rows = tsvParseRows(toTsv(richNote()));
-    expect(rows[0]?.slice(0, 3)).toEqual(['ID', 'Region or contrast', 'Role']);
+    expect(rows[0]?.slice(0, 3)).toEqual(['ID', 'Region, contrast or edge line', 'Role']);
     expect(rows[0]).toContain('Soft mean, HU');
     const mean = rows[0]?.indexOf('Soft mean, HU') ?? -1;
     expect(rows[1]?.[mean]).toBe('108.0');
