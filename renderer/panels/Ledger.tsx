@@ -1,4 +1,4 @@
-import { Fragment } from 'preact';
+import { type ComponentChildren, Fragment } from 'preact';
 import { useId, useRef } from 'preact/hooks';
 import {
   type NoiseSource,
@@ -23,6 +23,8 @@ export interface LedgerProps extends LedgerActions {
   readonly selectedId: string | undefined;
   /** Verified notes are frozen: nothing can be changed. */
   readonly frozen: boolean;
+  /** The line at the foot for what is selected and is no region. */
+  readonly foot?: ComponentChildren;
 }
 
 const NOISES: readonly NoiseSource[] = NoiseSourceSchema.options;
@@ -122,6 +124,7 @@ export function Ledger(props: LedgerProps) {
           actions={props}
         />
       )}
+      {selected === undefined && props.foot}
     </section>
   );
 }

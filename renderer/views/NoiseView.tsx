@@ -1,16 +1,9 @@
 import { useMemo } from 'preact/hooks';
-import {
-  changeEdgeQuote,
-  edgeQuote,
-  type Kernel,
-  type NoteEdge,
-  type Quoted,
-} from '../../core/note/index.js';
+import type { Kernel, NoteEdge } from '../../core/note/index.js';
 import { isSealed } from '../../core/note/life/index.js';
 import type { LineEdge } from '../../core/quality/index.js';
 import { type BandLine, edgeProfile, findLineSlice } from '../../core/region/index.js';
 import { useEngine } from '../engine.js';
-import { QuoteFields } from '../panels/parts/QuoteFields.js';
 import { EdgePlot } from '../plots/EdgePlot.js';
 import { NoiseControls } from '../plots/NoiseControls.js';
 import { NoisePlot } from '../plots/NoisePlot.js';
@@ -20,7 +13,6 @@ import type { Bench } from '../services/bench.js';
 import type { AppState } from '../state/appState.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { selectRegion } from '../state/changes/regions.js';
-import { editNote } from '../state/history.js';
 import { selectedEdge } from '../state/lineSelectors.js';
 import { chosenArea, goToArea, noiseAreaRows, texturesNow } from '../state/noiseRows.js';
 import { takesMarks } from '../state/regionSelectors.js';
@@ -79,7 +71,6 @@ export function NoiseView() {
       ) : (
         <EdgeView edge={edge} />
       )}
-      {edge !== undefined && <EdgeQuote edge={edge} frozen={isSealed(note)} />}
       <NoiseTable
         rows={edge === undefined ? textureRows(textures, area) : edgeRows(edge)}
         caption={edge === undefined ? 'Noise and sharpness of both kernels' : edge.label}
@@ -103,30 +94,6 @@ function aboutNoise(
   if (assessment.kind === 'failed') return assessment.text;
   if (assessment.kind !== 'done') return 'The noise of both kernels is being measured…';
   return 'Too few uniform areas were found in both stacks to measure their noise.';
-}
-
-/** Which kernel's width of the edge is quoted. */
-function EdgeQuote({ edge, frozen }: { readonly edge: NoteEdge; readonly frozen: boolean }) {
-  const engine = useEngine();
-  const onChange = (change: Partial<Quoted>): void => {
-    const changed = editNote('Change quote', (note) => {
-      const next = changeEdgeQuote(note, edge.id, change, engine.now());
-      return next.ok ? next.value : note;
-    });
-    engine.store.change('Change quote', changed);
-  };
-  return (
-    <div class="noise-controls edge-quote">
-      <QuoteFields
-        quoted={edge}
-        label={edge.label}
-        proposal={edgeQuote(edge)}
-        frozen={frozen}
-        onQuote={(quote, quoteReason) => onChange({ quote, quoteReason, quoteBy: 'reader' })}
-        onProposed={() => onChange({ quoteBy: 'proposal' })}
-      />
-    </div>
-  );
 }
 
 /** The profile across an edge line, measured from the pixels that are there now. */

@@ -132,6 +132,21 @@ test('the lines are there again, measured, when the study is opened again', asyn
   await expectKnownBlur();
 });
 
+test('the sharp kernel is proposed for its width; the reader may choose another and take that back', async () => {
+  const foot = page.locator('[data-panel=ledger] .inspector');
+  const quote = foot.getByRole('combobox', { name: /^Quote/ });
+  await expect(foot).toContainText('Edge 2');
+  await expect(quote).toHaveValue('proposal');
+  await expect(quote).toHaveAttribute('title', /^The rules propose sharp: Edges and widths/);
+  await quote.selectOption('soft');
+  await expect(foot).toContainText('The rules propose sharp');
+  await foot.getByLabel('Why this kernel is quoted, Edge 2').fill('motion on the sharp one');
+  await page.keyboard.press('Enter');
+  await quote.selectOption('proposal');
+  await expect(foot.getByLabel('Why this kernel is quoted, Edge 2')).toHaveCount(0);
+  await waitForSaved(page);
+});
+
 test('nothing is cut off in a small window, and no rule of accessibility is broken', async () => {
   for (const shown of ['E2', 'all']) {
     await panel().getByLabel('Show').selectOption(shown);

@@ -26,7 +26,7 @@ export function QuoteFields(props: QuoteFieldsProps) {
   const isProposed = quoted.quoteBy === 'proposal';
   const proposed = proposal.quote ?? 'nothing';
   const options: readonly ChoiceOption<QuoteChoice>[] = [
-    { value: 'proposal', text: `as proposed: ${proposed}` },
+    { value: 'proposal', text: `${proposed} (proposed)` },
     ...plainOptions(CHOSEN),
     { value: 'none', text: 'nothing' },
   ];
@@ -50,7 +50,7 @@ export function QuoteFields(props: QuoteFieldsProps) {
           bare
           look="why"
           label={`Why this kernel is quoted, ${props.label}`}
-          placeholder={differs ? `why not ${proposed}?` : 'why?'}
+          placeholder="because…"
           value={quoted.quoteReason}
           disabled={frozen}
           onCommit={(reason) => props.onQuote(quoted.quote, reason)}
