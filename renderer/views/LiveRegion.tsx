@@ -2,7 +2,7 @@ import { useEffect, useState } from 'preact/hooks';
 import { useEngine } from '../engine.js';
 import { plateName } from '../plates/plateDescription.js';
 import type { AppState } from '../state/appState.js';
-import { selectedRegion } from '../state/regionSelectors.js';
+import { isBlind, selectedRegion } from '../state/regionSelectors.js';
 
 /** Something is said only after this long without a further change, ms: scrolling is not read out slice by slice. */
 const QUIET_MS = 600;
@@ -16,6 +16,8 @@ export function LiveRegion() {
     const stop = store.watch((_name, after, before) => {
       if (spoken(after) === spoken(before)) return;
       clearTimeout(timer);
+      // What was said of the first reading must not stand there while it is read again.
+      if (isBlind(after) && !isBlind(before)) setText('');
       timer = setTimeout(() => setText(spoken(store.now())), QUIET_MS);
     });
     return () => {
