@@ -87,7 +87,7 @@ export function annuliCovariance(
 }
 
 /** Each kernel's W may be wrong by this for itself, in bands of this width, per mm. */
-const OWN_ERROR = 0.02;
+const OWN_ERROR = 0.012;
 const OWN_STEP_PER_MM = 0.15;
 const OWN_SHAPES = Array.from({ length: 8 }, (_, band) =>
   FREQUENCIES.map((f) => OWN_ERROR * Math.max(0, 1 - Math.abs(f / OWN_STEP_PER_MM - band - 1))),

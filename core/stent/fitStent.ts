@@ -1,23 +1,21 @@
 import { dot, normalise, type Vec3 } from '../geometry/index.js';
 import { seededUniform } from '../phantom/index.js';
-import type { KernelTexture, PairTexture } from '../quality/index.js';
+import type { PairTexture } from '../quality/index.js';
 import { FLAGS } from '../region/index.js';
 import type { Refusal } from '../result.js';
 import { isUnscaled, type Stack } from '../stack/index.js';
 import type { Uncertainty } from './annuliCovariance.js';
 import { apodisationOf } from './apodisation.js';
-import { RADII, RADIUS_STEP_MM } from './besselTables.js';
 import { centroidAxis } from './centroid.js';
+import { kernelResults } from './kernelResults.js';
 import { leaningApodisation } from './leaningApodisation.js';
 import { independentPart, localNoise } from './localNoise.js';
 import { type ModelProfile, modelProfiles } from './modelProfile.js';
 import { refitWithNoise } from './refit.js';
 import { errorAt, refusalOf } from './refusals.js';
-import { residualMap } from './residualMap.js';
-import { roundMeans } from './roundProblem.js';
-import { type FoundStent, searchStent } from './searchStent.js';
+import { searchStent } from './searchStent.js';
 import { sectorResiduals } from './sectors.js';
-import type { Estimated, FittedStent, KernelResult } from './stentFit.js';
+import type { Estimated, FittedStent, StentKernel } from './stentFit.js';
 import { tiltDegOf, type VesselAxis } from './vesselAxis.js';
 import {
   type Frame,
@@ -32,19 +30,13 @@ import {
 export interface StentPlace {
   /** A point in the lumen, patient space; it may lie off the centre. */
   readonly centreMm: Vec3;
-  /** Inner diameter that the stent was made for: a place to start from, no part of the result. */
+  /** Inner diameter that the stent was made for: how far out is looked at first, no part of the result. */
   readonly nominalMm?: number | undefined;
-}
-
-/** One reconstruction with its measured noise. */
-export interface StentKernel {
-  readonly stack: Stack;
-  readonly texture: KernelTexture;
 }
 
 /** Struts are about this thick: from a nominal inner diameter to the middle of them, mm (common practice, no source). */
 const STRUT_MM = 0.1;
-const REFITS = 16;
+const REFITS = 12;
 /** The local noise is taken into the weights within these factors of the variance. */
 const NOISE_FACTOR = [0.5, 4] as const;
 /** Planes of two kernels may lean against each other by this. */
@@ -208,54 +200,6 @@ export function fitStentOn(
     },
     slicesMm: (windows[0] as KernelWindow).slices.map(({ zMm }) => zMm),
   };
-}
-
-function kernelResults(
-  kernels: readonly StentKernel[],
-  windows: readonly KernelWindow[],
-  frame: Frame,
-  found: FoundStent,
-  leaning: Uncertainty,
-  profiles: readonly ModelProfile[],
-  storedOf: StoredOfStack,
-  noises: readonly number[],
-): readonly KernelResult[] {
-  const model = roundMeans(found.annuli, leaning.apodisation, found.round.parameters);
-  let taken = 0;
-  return kernels.flatMap(({ stack }, kernel) => {
-    const annuli = found.annuli[kernel];
-    const profile = profiles[kernel];
-    const nearest = windows[kernel]?.slices.toSorted(
-      (a, b) => Math.abs(a.zMm) - Math.abs(b.zMm),
-    )[0];
-    const slice = stack.slices[nearest?.sliceIndex ?? -1];
-    const stored = storedOf(stack, nearest?.sliceIndex ?? -1);
-    if (
-      annuli === undefined ||
-      profile === undefined ||
-      nearest === undefined ||
-      slice === undefined ||
-      stored === undefined
-    )
-      return [];
-    const from = taken;
-    taken += annuli.meanHu.length;
-    return [
-      {
-        profile: {
-          radiusMm: annuli.radiusMm,
-          measuredHu: Array.from(annuli.meanHu),
-          modelHu: Array.from(model.subarray(from, taken)),
-        },
-        model: {
-          radiusMm: Array.from({ length: RADII }, (_, index) => index * RADIUS_STEP_MM),
-          hu: Array.from(profile.hu),
-        },
-        residual: residualMap(slice, nearest.sliceIndex, stored, frame, found.axis, profile),
-        noiseSdHu: noises[kernel] ?? 0,
-      },
-    ];
-  });
 }
 
 function directionOf({ u, v, normal }: Frame, { drift }: VesselAxis): Vec3 {

@@ -20,7 +20,8 @@ export interface LeastSquares {
   readonly steps: number;
 }
 
-const MOST_STEPS = 60;
+/** Where a search that has not come to an end is left. */
+export const MOST_STEPS = 60;
 /** A step that gains less than this ends the search: far below what one standard error makes, 1. */
 const LEAST_GAIN = 1e-4;
 
@@ -28,7 +29,8 @@ const LEAST_GAIN = 1e-4;
  * Least squares by the method of Levenberg 1944 and Marquardt 1963 (doi 10.1137/0111030) with analytic derivatives; steps are cut
  * at the bounds. Parameters whose bounds are equal stay as they are.
  *
- * @returns undefined where the equations can't be solved or the search doesn't end
+ * @returns undefined where the equations can't be solved; a search that has not ended after {@link MOST_STEPS} says so
+ *   by its number of steps
  */
 export function levenbergMarquardt(
   model: (point: Float64Array) => Linearised,
@@ -59,7 +61,7 @@ export function levenbergMarquardt(
     damping = Math.max(1e-9, damping / 8);
     if (gain < LEAST_GAIN && damping < 1) return finished(point, here, squares, bounds, step);
   }
-  return undefined;
+  return finished(point, here, squares, bounds, MOST_STEPS);
 }
 
 function finished(

@@ -32,7 +32,7 @@ const MOST_OFF_AXIS_ERRORS = 4;
 /** A lumen holds no less and no more than this, HU. */
 const LUMEN_HU = [-100, 850] as const;
 /** Standard errors above these are no measurement: mm of diameter and HU of lumen. */
-const MOST_ERRORS = [0.15, 60] as const;
+const MOST_ERRORS = [0.15, 35] as const;
 
 const text = {
   tilt: (degrees: number) =>

@@ -8,7 +8,7 @@ import { axisAt, distanceFrom, type VesselAxis } from './vesselAxis.js';
 import { type Frame, inPatient } from './windows.js';
 
 /** Half side of the map, mm. */
-const HALF_SIDE_MM = 5;
+const HALF_SIDE_MM = 4;
 
 /** Image minus model on the pixels of one slice around the axis. */
 export function residualMap(

@@ -1,6 +1,11 @@
 import type { Annuli } from './annuli.js';
 import { annuliCovariance, type Uncertainty } from './annuliCovariance.js';
-import { type Bounds, type LeastSquares, levenbergMarquardt } from './levenbergMarquardt.js';
+import {
+  type Bounds,
+  type LeastSquares,
+  levenbergMarquardt,
+  MOST_STEPS,
+} from './levenbergMarquardt.js';
 import { cholesky } from './linear.js';
 import { roundProblem } from './roundProblem.js';
 import {
@@ -42,7 +47,7 @@ const START: Omit<StentParameters, 'radiusMm'> = {
   levelHu: 0,
 };
 /** Radii that are tried first, with all else that isn't linear held. */
-const TRIED_MM = [0.95, 1.1, 1.25, 1.4, 1.55, 1.7, 1.85, 2, 2.15, 2.3, 2.45];
+const TRIED_MM = [0.95, 1.13, 1.31, 1.49, 1.67, 1.85, 2.03, 2.21, 2.39];
 const HELD: readonly (keyof StentParameters)[] = ['radiusMm', 'wallWidthMm', 'blurSigmaMm'];
 
 /**
@@ -55,7 +60,8 @@ export function fitRound(
   start?: StentParameters,
   fixed: Partial<StentParameters> = {},
 ): RoundFit | undefined {
-  const starts = start === undefined ? triedRadii(annuli, uncertainty, fixed) : [start];
+  if (start !== undefined) return fitOnce(annuli, uncertainty, start, fixed);
+  const starts = triedRadii(annuli, uncertainty, fixed);
   const fits = starts.flatMap((one) => {
     const first = fitOnce(annuli, uncertainty, one, fixed);
     return first === undefined ? [] : [first];
@@ -117,7 +123,7 @@ export function fitOnce(
     other?.expectedOff,
   );
   const fit = levenbergMarquardt(problem, listOf(begin), bounds);
-  if (fit === undefined) return undefined;
+  if (fit === undefined || fit.steps >= MOST_STEPS) return undefined;
   const { residuals } = problem(fit.point);
   const meanSquares = residuals
     .subarray(0, measured.length)

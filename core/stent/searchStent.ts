@@ -31,6 +31,9 @@ const ROUNDS = 4;
 const LATER_ROUNDS = 2;
 /** A centre moves no farther than this at once, mm. */
 const MOST_MOVE_MM = 0.4;
+const FAR_MOVE_MM = 0.12;
+/** An axis that moves less than this has come to rest, mm: a tenth of its error. */
+const NO_MOVE_MM = 0.002;
 /** Heights of two kernels nearer than this are one, mm. */
 const SAME_HEIGHT_MM = 0.05;
 
@@ -49,6 +52,7 @@ export function searchStent(
   let parameters = startParameters;
   const rounds = startParameters === undefined ? ROUNDS : LATER_ROUNDS;
   let centres: readonly SliceCentre[] = [];
+  let again = false;
   for (let round = 0; round < rounds; round += 1) {
     const reachMm = reachOf(parameters?.radiusMm ?? startRadiusMm ?? 1.6);
     const annuli = windows.map((window) => annuliOf(window, axis, reachMm));
@@ -56,16 +60,18 @@ export function searchStent(
       ...uncertainty,
       apodisation: leaningApodisation(uncertainty.apodisation, axis),
     };
-    const fit = fitRound(
-      annuli,
-      leaning,
-      round === 1 && startParameters === undefined ? undefined : parameters,
-    );
+    const fit = fitRound(annuli, leaning, again ? undefined : parameters);
     if (fit === undefined) return undefined;
     if (round === rounds - 1) return { axis, round: fit, annuli, centres };
     parameters = fit.parameters;
     const moved = movedAxis(windows, axis, parameters, leaning);
     if (moved === undefined) return undefined;
+    // Sizes that were found around another place may be those of another minimum: all are tried once more.
+    const [before, after] = [axis.centre, moved.axis.centre];
+    const lengthMm = Math.hypot(after[0] - before[0], after[1] - before[1]);
+    if (lengthMm < NO_MOVE_MM && round > 0)
+      return { axis, round: fit, annuli, centres: moved.centres };
+    again = lengthMm > FAR_MOVE_MM;
     axis = moved.axis;
     centres = moved.centres;
   }

@@ -1,6 +1,14 @@
 import type { Vec3 } from '../geometry/index.js';
+import type { KernelTexture } from '../quality/index.js';
 import type { Refusal } from '../result.js';
+import type { Stack } from '../stack/index.js';
 import type { SectorResidual } from './sectors.js';
+
+/** One reconstruction with its measured noise. */
+export interface StentKernel {
+  readonly stack: Stack;
+  readonly texture: KernelTexture;
+}
 
 /** A value with its standard error. */
 export interface Estimated {

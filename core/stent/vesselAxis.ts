@@ -20,10 +20,14 @@ export function tiltDegOf({ drift }: VesselAxis): number {
  */
 export function distanceFrom(axis: VesselAxis): (du: number, dv: number) => number {
   const slope = Math.hypot(...axis.drift);
-  if (slope === 0) return Math.hypot;
+  if (slope === 0) return (du, dv) => Math.sqrt(du * du + dv * dv);
   const [a, b] = [axis.drift[0] / slope, axis.drift[1] / slope];
   const cosine = 1 / Math.sqrt(1 + slope * slope);
-  return (du, dv) => Math.hypot((du * a + dv * b) * cosine, dv * a - du * b);
+  return (du, dv) => {
+    const along = (du * a + dv * b) * cosine;
+    const beside = dv * a - du * b;
+    return Math.sqrt(along * along + beside * beside);
+  };
 }
 
 /** Straight line through centres at heights, by least squares; one height alone has no drift. */

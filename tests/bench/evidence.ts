@@ -8,6 +8,7 @@ import { reportObserver } from './evidence/observerReport.js';
 import type { ProjectionCache } from './evidence/phantomPair.js';
 import { SHARPNESS_BUDGET_MS, sharpnessTimeMs } from './evidence/sharpnessTime.js';
 import { reportStandardError } from './evidence/standardErrorReport.js';
+import { reportStents } from './evidence/stentReport.js';
 
 const SCENES = 4;
 
@@ -98,6 +99,8 @@ if (isMainThread) {
   if (!isSeen) process.exitCode = 1;
   const isFlagged = await reportEdges((line) => process.stdout.write(`${line}\n`));
   if (!isFlagged) process.exitCode = 1;
+  const isFitted = await reportStents((line) => process.stdout.write(`${line}\n`));
+  if (!isFitted) process.exitCode = 1;
 } else {
   await judgeScene(workerData as Task, (one) => parentPort?.postMessage(one));
 }

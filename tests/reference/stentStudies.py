@@ -26,14 +26,17 @@ def add_disc(sinogram, t, angles, centre, radii, turn, hu):
     for view, theta in enumerate(angles):
         u, v = np.cos(theta - turn), np.sin(theta - turn)
         reach = np.hypot(a * u, b * v)
-        d = t - (x * np.cos(theta) + y * np.sin(theta))
         step = t[1] - t[0]
+        middle = x * np.cos(theta) + y * np.sin(theta)
+        start = max(0, int((middle - reach - t[0]) / step) - 1)
+        end = int((middle + reach - t[0]) / step) + 3
+        d = t[start:end] - middle
 
         def area(z):
             z = np.clip(z / reach, -1, 1)
             return (z * np.sqrt(1 - z * z) + np.arcsin(z)) * a * b
 
-        sinogram[view] += hu * (area(d + step / 2) - area(d - step / 2)) / step
+        sinogram[view, start:end] += hu * (area(d + step / 2) - area(d - step / 2)) / step
 
 
 def vessel(sinogram, t, angles, stent, z):
@@ -132,12 +135,13 @@ def main(folder, seed, kind):
             q = filtered(noisy, window, cut_off)
             # iradon turns clockwise from the row axis and wants detectors down the rows; its middle is size // 2.
             image = iradon(q.T, theta=np.degrees(angles), filter_name=None, circle=True, output_size=SIZE)
-            images[side].append(np.rint(image * 1000 / WATER - 1000))
+            # Its own filters hold a factor of 2 that ours don't; its rows run against y.
+            images[side].append(np.rint(2 * image[::-1] * 1000 / WATER - 1000))
     for side, stack in images.items():
         np.clip(stack, -1024, 32000).astype("<i2").tofile(f"{folder}/{side}.bin")
     with open(f"{folder}/truth.json", "w") as out:
         json.dump(
-            {"size": SIZE, "pixelMm": PITCH, "heightsMm": HEIGHTS, "photons": photons, "soft": soft, "sharp": sharp, "stents": stents},
+            {"size": SIZE, "pixelMm": PITCH, "heightsMm": HEIGHTS, "firstMm": [-(SIZE // 2) * PITCH, -(SIZE - 1 - SIZE // 2) * PITCH], "photons": photons, "soft": soft, "sharp": sharp, "stents": stents},
             out,
         )
 
