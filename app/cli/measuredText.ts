@@ -1,4 +1,4 @@
-import { formatCount, formatQuantity, visibleText } from '../../core/format/index.js';
+import { formatCount, formatFixed, formatQuantity, visibleText } from '../../core/format/index.js';
 import type { MeasuredPlan } from '../../core/note/index.js';
 import { isQuiet, type RegionValue } from '../../core/region/index.js';
 import { edgesText } from './edgesText.js';
@@ -63,7 +63,11 @@ export function measuredText({
     ),
     ...contrasts.flatMap(({ id, flags }) => flags.map(({ text }) => `${id}: ${text}`)),
     ...across.remarks,
-    ...stents.map(({ id, reason }) => `${id}: ${reason}`),
+    ...stents.map(({ id, strutDiameterMm, lumenHu, reason }) =>
+      strutDiameterMm === null || lumenHu === null
+        ? `${id}: ${reason ?? 'no value'}`
+        : `${id}: fitted stent, strut diameter ${formatFixed(strutDiameterMm.value, 2)} ± ${formatFixed(strutDiameterMm.se, 2)} mm, lumen ${formatFixed(lumenHu.value, 0)} ± ${formatFixed(lumenHu.se, 0)} HU (standard errors)`,
+    ),
   ];
   if (remarks.length > 0) parts.push(`${remarks.map(visibleText).join('\n')}\n`);
   if (parts.length === 0) return 'The plan asks for nothing.\n';

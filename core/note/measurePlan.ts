@@ -13,6 +13,7 @@ import type { Stack } from '../stack/index.js';
 import { type MeasuredContrast, measuredContrast } from './measuredContrast.js';
 import { edgeSlices, type MeasuredEdgeLine, measureEdges } from './measureEdges.js';
 import { type MeasuredProfile, measureProfiles, profileSlices } from './measureProfiles.js';
+import { type MeasuredStent, measureStents, stentSlices } from './measureStents.js';
 import type { Plan, PlanRegion } from './plan.js';
 import type { Kernel } from './schema.js';
 
@@ -34,14 +35,6 @@ export interface MeasuredRegion {
   readonly sharp: RegionValue | null;
 }
 
-/** A stent that was asked for, and why it has no values. */
-export interface MeasuredStent {
-  readonly id: string;
-  readonly strutDiameterMm: null;
-  readonly lumenHu: null;
-  readonly reason: string;
-}
-
 /** Stored values of one slice of a stack; undefined when they can't be had. */
 export type StackStoredOf = (stack: Stack, sliceIndex: number) => StoredValues | undefined;
 
@@ -55,6 +48,7 @@ export function slicesNeeded(plan: Plan, stack: Stack): readonly number[] {
   const indices = new Set<number>([
     ...edgeSlices(plan.edges ?? [], stack),
     ...profileSlices(plan.profiles, stack),
+    ...stentSlices(plan.stents, stack),
   ]);
   for (const { shape } of plan.regions) {
     const found = findSlice(shape, stack);
@@ -125,12 +119,7 @@ export function measurePlan(
       ...measuredContrast(contrast, kernels, (id, kernel) => byId.get(id)?.[kernel]),
     })),
     profiles: measureProfiles(plan.profiles, soft, sharp, storedOf, notOnSharp),
-    stents: plan.stents.map(({ id }) => ({
-      id,
-      strutDiameterMm: null,
-      lumenHu: null,
-      reason: 'This version does not measure stents yet.',
-    })),
+    stents: measureStents(plan.stents, soft, sharp, storedOf, noise, notOnSharp),
     ...(plan.edges === undefined
       ? {}
       : { edges: measureEdges(plan.edges, soft, sharp, storedOf, notOnSharp) }),

@@ -100,7 +100,8 @@ describe('measurePlan', () => {
         id: 'S1',
         strutDiameterMm: null,
         lumenHu: null,
-        reason: 'This version does not measure stents yet.',
+        reason:
+          'The noise of the kernels was not measured: their blur is not known, and no stent is fitted.',
       },
     ]);
   });
