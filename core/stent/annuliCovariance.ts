@@ -3,7 +3,7 @@ import { type Apodisation, BAND_STEP_PER_MM } from './apodisation.js';
 import { FREQUENCIES, RING_AREAS } from './frequencies.js';
 
 /** Noise that no power spectrum tells: rounding of the values, resampling; part of the variance of each mean. */
-const OWN_PART = 0.02;
+const OWN_PART = 0.04;
 /** A surrounding that isn't even: SD of a bowl-shaped part at the outermost annulus, the same on both kernels, HU. */
 const BOWL_HU = 6;
 /** The scale sets in above this frequency: W is 1 at 0 whatever the noise tells, per mm. */

@@ -41,6 +41,27 @@ describe('fitted stents on phantoms', () => {
   }, 60_000);
 });
 
+describe('a pair whose sharp stack has another grid', () => {
+  it('is fitted as well: places are those of the patient, not of pixels', async () => {
+    const stents = drawStents(seededUniform(21, 1), 15);
+    const pair = await stentPair((zMm) => stentSlice(stents, zMm, 380), {
+      seed: 5,
+      photonsPerRay: 1.6e4,
+      kernels: STENT_KERNELS[1] as (typeof STENT_KERNELS)[number],
+      sharpGrid: { centreMm: [1.3, -0.7], fieldOfViewMm: 94, matrix: 288 },
+    });
+    const cases = stents.map((truth) => ({
+      truth,
+      fits: { both: fitOn(pair, 'both', [...truth.centreMm, 0]) },
+      timeMs: 0,
+    }));
+    const { fits, diameterMm, lumenHu } = summaryOf(cases, 'both');
+    expect(fits).toBeGreaterThanOrEqual(6);
+    expect(diameterMm.most95).toBeLessThan(0.15);
+    expect(lumenHu.most95).toBeLessThan(60);
+  }, 60_000);
+});
+
 describe('where no value may be given', () => {
   let pair: StentPair;
   let stents: readonly TrueStent[];

@@ -37,9 +37,10 @@ export async function gridCases(
   batch: number,
   index: number,
   fittedOn: readonly FittedOn[] = FITTED_ON,
+  areWires = false,
 ): Promise<readonly GridCase[]> {
   const uniform = seededUniform(batch, index, 1);
-  const stents = drawStents(uniform);
+  const stents = drawStents(uniform, 20, areWires);
   const kernels = STENT_KERNELS[index % STENT_KERNELS.length] as (typeof STENT_KERNELS)[number];
   const pair = await stentPair((zMm) => stentSlice(stents, zMm, 380), {
     seed: seededInteger(batch, index),

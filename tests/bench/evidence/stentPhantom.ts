@@ -4,6 +4,7 @@ import {
   type ImageGrid,
   type Kernel,
   projectSlice,
+  reconstructHu,
   reconstructPairHu,
   type SceneSlice,
   seededUniform,
@@ -24,23 +25,27 @@ export interface StentRecipe {
   readonly photonsPerRay: number;
   readonly kernels: { readonly soft: Kernel; readonly sharp: Kernel };
   readonly grid?: ImageGrid;
+  /** Grid of the sharp reconstruction, where it is another. */
+  readonly sharpGrid?: ImageGrid;
 }
 
 /** Scans a scene, whose slices have quantum noise of their own, and measures the textures as the program does. */
 export async function stentPair(
   sceneAt: (zMm: number) => SceneSlice,
-  { seed, photonsPerRay, kernels, grid = STENT_GRID }: StentRecipe,
+  { seed, photonsPerRay, kernels, grid = STENT_GRID, sharpGrid = grid }: StentRecipe,
 ): Promise<StentPair> {
   const slices = STENT_HEIGHTS_MM.map((zMm, index) => {
     const clean = projectSlice(sceneAt(zMm), STENT_SCAN);
     const noisy = addQuantumNoise(clean, photonsPerRay, seededUniform(seed, 2, index));
-    const [soft, sharp] = reconstructPairHu(noisy, STENT_SCAN, [kernels.soft, kernels.sharp], grid);
+    const [soft, same] = reconstructPairHu(noisy, STENT_SCAN, [kernels.soft, kernels.sharp], grid);
+    const sharp =
+      sharpGrid === grid ? same : reconstructHu(noisy, STENT_SCAN, kernels.sharp, sharpGrid);
     return { zMm, soft, sharp };
   });
   const stack = (side: 'soft' | 'sharp'): ImageStack =>
     imageStack(
       side,
-      grid,
+      side === 'soft' ? grid : sharpGrid,
       slices.map((slice) => ({ zMm: slice.zMm, hu: slice[side] })),
     );
   const [soft, sharp] = [stack('soft'), stack('sharp')];

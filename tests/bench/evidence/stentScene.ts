@@ -33,6 +33,8 @@ export interface TrueStent {
   readonly tiltDeg: number;
   /** Direction in the slice that the axis leans to. */
   readonly azimuthDeg: number;
+  /** Wires that the struts are, evenly around the circle; 0 for a closed ring of the same line mass. */
+  readonly wires: number;
 }
 
 const TISSUE_HU = 60;
@@ -59,8 +61,12 @@ const VESSELS = [
   [-29, 30],
 ] as const;
 
-/** Seven stents of the grid: sizes, masses, lumens, walls, tilts and places are drawn. */
-export function drawStents(uniform: UniformSource, mostTiltDeg = 20): readonly TrueStent[] {
+/** Seven stents of the grid: sizes, masses, lumens, walls, tilts and places are drawn; wires too, 8 to 16 of them. */
+export function drawStents(
+  uniform: UniformSource,
+  mostTiltDeg = 20,
+  areWires = false,
+): readonly TrueStent[] {
   const between = (low: number, high: number): number => low + (high - low) * uniform();
   return VESSELS.map(([x, y]) => ({
     centreMm: [x + between(-0.5, 0.5), y + between(-0.5, 0.5)],
@@ -71,6 +77,7 @@ export function drawStents(uniform: UniformSource, mostTiltDeg = 20): readonly T
     wallMm: between(0.3, 0.8),
     tiltDeg: between(0, mostTiltDeg),
     azimuthDeg: between(0, 360),
+    wires: areWires ? Math.floor(between(8, 17)) : 0,
   }));
 }
 
@@ -125,17 +132,56 @@ function vessel(stent: TrueStent, zMm: number): readonly Inset[] {
   const inner = stent.innerDiameterMm / 2;
   const outer = inner + stent.strutMm;
   const strutHu = WALL_HU + stent.massHuMm / stent.strutMm;
+  const fat: Inset = {
+    name: 'fat',
+    hu: FAT_HU,
+    aroundHu: TISSUE_HU,
+    centreMm: stent.centreMm,
+    radiiMm: [6, 6],
+    angleDeg: 0,
+  };
+  const wall = layer('wall', WALL_HU, FAT_HU, outer + stent.wallMm);
+  if (stent.wires > 0)
+    return [
+      fat,
+      wall,
+      layer('lumen', stent.lumenHu, WALL_HU, inner + stent.strutMm / 2),
+      ...wiresOf(stent, centreMm, stretch, zMm),
+    ];
   return [
-    {
-      name: 'fat',
-      hu: FAT_HU,
-      aroundHu: TISSUE_HU,
-      centreMm: stent.centreMm,
-      radiiMm: [6, 6],
-      angleDeg: 0,
-    },
-    layer('wall', WALL_HU, FAT_HU, outer + stent.wallMm),
+    fat,
+    wall,
     layer('strut', strutHu, WALL_HU, outer),
     layer('lumen', stent.lumenHu, strutHu, inner),
   ];
+}
+
+/** Round wires on the circle in the middle of the struts, which turn a little from height to height. */
+function wiresOf(
+  stent: TrueStent,
+  centreMm: readonly [number, number],
+  stretch: number,
+  zMm: number,
+): readonly Inset[] {
+  const { wires, strutMm, massHuMm } = stent;
+  const radius = stent.innerDiameterMm / 2 + strutMm / 2;
+  const half = strutMm / 2;
+  const aboveHu = (massHuMm * 2 * Math.PI * radius) / (wires * Math.PI * half * half);
+  const azimuth = (stent.azimuthDeg * Math.PI) / 180;
+  return Array.from({ length: wires }, (_, wire): Inset => {
+    const turn = (2 * Math.PI * (wire + 0.8 * zMm)) / wires;
+    const along = radius * stretch * Math.cos(turn);
+    const across = radius * Math.sin(turn);
+    return {
+      name: 'wire',
+      hu: WALL_HU + aboveHu,
+      aroundHu: WALL_HU,
+      centreMm: [
+        centreMm[0] + along * Math.cos(azimuth) - across * Math.sin(azimuth),
+        centreMm[1] + along * Math.sin(azimuth) + across * Math.cos(azimuth),
+      ],
+      radiiMm: [half, half],
+      angleDeg: 0,
+    };
+  });
 }
