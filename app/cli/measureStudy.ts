@@ -38,7 +38,12 @@ export async function measureStudy(
   for (const stack of sharp === undefined ? [soft] : [soft, sharp]) {
     const name = stack === soft ? 'Soft' : 'Sharp';
     for (const { text } of stack.findings) context.say(`${name} stack: ${visibleText(text)}`);
-    const slices = await readSlices(folder, stack, slicesNeeded(plan, stack), context.job);
+    const slices = await readSlices(
+      folder,
+      stack,
+      slicesNeeded(plan, stack, { soft, sharp }),
+      context.job,
+    );
     if (!slices.ok) return slices;
     read.set(stack, slices.value);
     for (const { file, text } of slices.value.problems) {

@@ -1,17 +1,20 @@
-import { formatCount, formatFixed, formatQuantity, visibleText } from '../../core/format/index.js';
+import { formatCount, formatQuantity, visibleText } from '../../core/format/index.js';
 import type { MeasuredPlan } from '../../core/note/index.js';
 import { isQuiet, type RegionValue } from '../../core/region/index.js';
 import { edgesText } from './edgesText.js';
+import { planesText } from './planesText.js';
 import { profilesText } from './profilesText.js';
+import { stentsText } from './stentsText.js';
 import { textTable } from './textTable.js';
 
-/** A measured plan for people: tables of regions and contrasts, then every flag and reason. */
+/** A measured plan for people: tables of what was measured, then every flag and reason. */
 export function measuredText({
   regions,
   contrasts,
   profiles,
   stents,
   edges = [],
+  planes = [],
 }: MeasuredPlan): string {
   const values = regions.flatMap(({ id, role, soft, sharp }) => [
     { id, role, kernel: 'soft', value: soft },
@@ -57,17 +60,16 @@ export function measuredText({
   if (edges.length > 0) parts.push(edgesText(edges));
   const across = profilesText(profiles);
   if (profiles.length > 0) parts.push(across.table);
+  const fitted = stentsText(stents);
+  if (fitted.table !== '') parts.push(fitted.table);
   const remarks = [
     ...values.flatMap(({ id, kernel, value }) =>
       value.flags.filter((flag) => !isQuiet(flag)).map(({ text }) => `${id}, ${kernel}: ${text}`),
     ),
     ...contrasts.flatMap(({ id, flags }) => flags.map(({ text }) => `${id}: ${text}`)),
     ...across.remarks,
-    ...stents.map(({ id, strutDiameterMm, lumenHu, reason }) =>
-      strutDiameterMm === null || lumenHu === null
-        ? `${id}: ${reason ?? 'no value'}`
-        : `${id}: fitted stent, strut diameter ${formatFixed(strutDiameterMm.value, 2)} ± ${formatFixed(strutDiameterMm.se, 2)} mm, lumen ${formatFixed(lumenHu.value, 0)} ± ${formatFixed(lumenHu.se, 0)} HU (standard errors)`,
-    ),
+    ...fitted.remarks,
+    ...planesText(planes),
   ];
   if (remarks.length > 0) parts.push(`${remarks.map(visibleText).join('\n')}\n`);
   if (parts.length === 0) return 'The plan asks for nothing.\n';

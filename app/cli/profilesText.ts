@@ -1,4 +1,4 @@
-import { formatFixed } from '../../core/format/index.js';
+import { formatQuantity } from '../../core/format/index.js';
 import type { MeasuredPlan } from '../../core/note/index.js';
 import { textTable } from './textTable.js';
 
@@ -11,7 +11,7 @@ export function profilesText(profiles: MeasuredPlan['profiles']): {
     { id, kernel: 'soft', value: soft },
     ...(sharp === null ? [] : [{ id, kernel: 'sharp', value: sharp }]),
   ]);
-  const mm = (value: number | null): string => formatFixed(value, 2);
+  const mm = (value: number | null): string => formatQuantity(value, 'lengthMm');
   return {
     table: textTable(
       [
@@ -31,8 +31,8 @@ export function profilesText(profiles: MeasuredPlan['profiles']): {
         mm(value.peakDistanceMm),
         mm(value.strutWidthMm),
         mm(value.riseMm),
-        formatFixed(value.lumenHu, 1),
-        formatFixed(value.narrowing === null ? null : 100 * value.narrowing, 0),
+        formatQuantity(value.lumenHu, 'hu'),
+        formatQuantity(value.narrowing === null ? null : 100 * value.narrowing, 'narrowingPercent'),
       ]),
     ),
     remarks: values.flatMap(({ id, kernel, value }) =>

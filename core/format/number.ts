@@ -15,6 +15,13 @@ export const DIGITS = {
   positionMm: 1,
   /** Spacing, thickness, offsets and shifts. */
   lengthMm: 2,
+  /** Density of a fit, whose standard error is of several HU, and what is set against it. */
+  fittedHu: 0,
+  /** Line mass of a strut ring. */
+  massHuMm: 0,
+  angleDeg: 1,
+  /** Artificial narrowing of a lumen. */
+  narrowingPercent: 0,
 } as const;
 
 export type Quantity = keyof typeof DIGITS;

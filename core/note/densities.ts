@@ -19,36 +19,39 @@ export interface DensitySource {
 export function measuredDensities(note: Note, source: DensitySource): readonly Density[] {
   const table = bandTable(note.bandTable);
   if (table === undefined || source.soft.unit !== 'HU') return [];
-  return note.regions
-    .filter(({ role }) => role === 'plaque')
-    .flatMap((region): readonly Density[] => {
-      const found = findSlice(region.shape, source.soft);
-      if (!found.ok) return [];
-      const { sliceIndex } = found.value;
-      const slice = source.soft.slices[sliceIndex];
-      const stored = source.storedOf(sliceIndex);
-      if (slice === undefined || stored === undefined) {
-        return note.densities.filter((kept) => kept.regionId === region.id);
-      }
-      const { values } = regionValues(region.shape, slice, stored);
-      const [down, across] = slice.image.grid.pixelSpacingMm;
-      const { median } = statistics(values);
-      const lumenHu = lumenBeside(note, region);
-      const blurMm = 'code' in source.noise ? null : source.noise.blurFwhmMm;
-      const spill =
-        median === undefined || lumenHu === null || blurMm === null
-          ? null
-          : spillShare(region.shape, slice, stored, { medianHu: median, lumenHu, blurMm });
-      const conditions = { kvp: note.conditions.kvp, kernel: 'soft', spillShare: spill } as const;
-      return [
-        {
-          regionId: region.id,
-          table: table.id,
-          ...bandShares(values, table, across * down),
-          flags: [...bandCautions(table, conditions)],
-        },
-      ];
-    });
+  return (
+    note.regions
+      // Bands were published for slices: on an oblique cut noise and partial volume are others.
+      .filter(({ role, plane }) => role === 'plaque' && plane === undefined)
+      .flatMap((region): readonly Density[] => {
+        const found = findSlice(region.shape, source.soft);
+        if (!found.ok) return [];
+        const { sliceIndex } = found.value;
+        const slice = source.soft.slices[sliceIndex];
+        const stored = source.storedOf(sliceIndex);
+        if (slice === undefined || stored === undefined) {
+          return note.densities.filter((kept) => kept.regionId === region.id);
+        }
+        const { values } = regionValues(region.shape, slice, stored);
+        const [down, across] = slice.image.grid.pixelSpacingMm;
+        const { median } = statistics(values);
+        const lumenHu = lumenBeside(note, region);
+        const blurMm = 'code' in source.noise ? null : source.noise.blurFwhmMm;
+        const spill =
+          median === undefined || lumenHu === null || blurMm === null
+            ? null
+            : spillShare(region.shape, slice, stored, { medianHu: median, lumenHu, blurMm });
+        const conditions = { kvp: note.conditions.kvp, kernel: 'soft', spillShare: spill } as const;
+        return [
+          {
+            regionId: region.id,
+            table: table.id,
+            ...bandShares(values, table, across * down),
+            flags: [...bandCautions(table, conditions)],
+          },
+        ];
+      })
+  );
 }
 
 /** Mean of the lumen that a plaque lies beside: one of the same finding, else the one that a contrast ties it to. */

@@ -12,6 +12,8 @@ export const PlanEdgeSchema = z.object({
   fromMm: point,
   toMm: point,
   bandMm: z.number().min(BAND_MM.least).max(BAND_MM.most),
+  /** The oblique plane that it is measured on; on the slices where nothing is said. */
+  plane: z.string().min(1).max(64).exactOptional(),
 });
 
 /** What an edge line measured on one kernel; the fields are those of EdgeValue in core/region. */

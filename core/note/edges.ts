@@ -19,12 +19,12 @@ export interface EdgeValues {
 /** Adds an edge line under the next free name: 'E2', 'Edge 2'. */
 export function addEdge(
   note: Note,
-  line: BandLine,
+  line: BandLine & { readonly plane?: string | undefined },
   { soft, sharp }: EdgeValues,
   now: string,
 ): { readonly note: Note; readonly edge: NoteEdge } {
   const { id, number, lastNumbers } = nextNumber(note, EDGE_LETTER);
-  const { fromMm, toMm, bandMm } = line;
+  const { fromMm, toMm, bandMm, plane } = line;
   const { quote, reason: quoteReason } = edgeQuote({ soft, sharp });
   const edge: NoteEdge = {
     id,
@@ -32,6 +32,7 @@ export function addEdge(
     fromMm,
     toMm,
     bandMm,
+    ...(plane === undefined ? {} : { plane }),
     quote,
     quoteReason,
     quoteBy: 'proposal',

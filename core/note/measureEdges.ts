@@ -1,13 +1,13 @@
+import { measureEdgeLineOnCut } from '../oblique/index.js';
 import {
   type EdgeValue,
   edgeNotMeasured,
-  type Flag,
   findLineSlice,
   measureEdgeLine,
 } from '../region/index.js';
 import type { Stack } from '../stack/index.js';
 import type { PlanEdge } from './edgeSchema.js';
-import type { StackStoredOf } from './measurePlan.js';
+import type { RegionGround } from './measureRegions.js';
 
 /** An edge line on both kernels; null on a kernel that the plan does not name. */
 export interface MeasuredEdgeLine {
@@ -16,16 +16,17 @@ export interface MeasuredEdgeLine {
   readonly sharp: EdgeValue | null;
 }
 
-/** Measures the edge lines of a plan; `notOnSharp` says why nothing may be measured on the sharp stack. */
+/** Measures the edge lines of a plan, each on the slices or on its oblique plane. */
 export function measureEdges(
   edges: readonly PlanEdge[],
-  soft: Stack,
-  sharp: Stack | undefined,
-  storedOf: StackStoredOf,
-  notOnSharp?: Flag,
+  { soft, sharp, storedOf, cuts, notOnSharp }: RegionGround,
 ): readonly MeasuredEdgeLine[] {
-  const on = (stack: Stack, edge: PlanEdge): EdgeValue =>
-    measureEdgeLine(edge, stack, (sliceIndex) => storedOf(stack, sliceIndex));
+  const on = (stack: Stack, edge: PlanEdge): EdgeValue => {
+    if (edge.plane === undefined)
+      return measureEdgeLine(edge, stack, (sliceIndex) => storedOf(stack, sliceIndex));
+    const cut = cuts.cutOf(edge.plane, stack);
+    return cut.ok ? measureEdgeLineOnCut(edge, cut.value) : edgeNotMeasured(cut.refusal);
+  };
   const onSharp = (stack: Stack, edge: PlanEdge): EdgeValue =>
     notOnSharp === undefined ? on(stack, edge) : edgeNotMeasured(notOnSharp);
   return edges.map((edge) => ({

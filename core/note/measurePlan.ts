@@ -1,20 +1,16 @@
 import type { StoredValues } from '../dicom/index.js';
-import {
-  FLAGS,
-  type Flag,
-  findSlice,
-  measureRegion,
-  type NoiseOfStack,
-  notMeasured,
-  type RegionValue,
-} from '../region/index.js';
+import { FLAGS, type Flag, findSlice, type NoiseOfStack } from '../region/index.js';
 import { type Result, refuse, success } from '../result.js';
 import type { Stack } from '../stack/index.js';
 import { type MeasuredContrast, measuredContrast } from './measuredContrast.js';
 import { edgeSlices, type MeasuredEdgeLine, measureEdges } from './measureEdges.js';
 import { type MeasuredProfile, measureProfiles, profileSlices } from './measureProfiles.js';
+import { type MeasuredRegion, measureRegions } from './measureRegions.js';
 import { type MeasuredStent, measureStents, stentSlices } from './measureStents.js';
-import type { Plan, PlanRegion } from './plan.js';
+import type { Plan } from './plan.js';
+import { planCuts } from './planCuts.js';
+import { planeSlices } from './planeCuts.js';
+import type { CutFacts } from './planes.js';
 import type { Kernel } from './schema.js';
 
 /** What a plan comes to; the document of the command line's `measure`. Nothing asked for is left out. */
@@ -25,14 +21,8 @@ export interface MeasuredPlan {
   readonly stents: readonly MeasuredStent[];
   /** Absent where the plan has no edge lines. */
   readonly edges?: readonly MeasuredEdgeLine[];
-}
-
-/** A region on both kernels; null on a kernel that the plan does not name. */
-export interface MeasuredRegion {
-  readonly id: string;
-  readonly role: PlanRegion['role'];
-  readonly soft: RegionValue;
-  readonly sharp: RegionValue | null;
+  /** How the oblique planes were cut; absent where the plan has none. Facts are null where a plane can't be cut. */
+  readonly planes?: readonly { readonly id: string; readonly facts: CutFacts | null }[];
 }
 
 /** Stored values of one slice of a stack; undefined when they can't be had. */
@@ -43,14 +33,24 @@ const NOT_MEASURED: Readonly<Record<Kernel, NoiseOfStack>> = {
   sharp: FLAGS.noStandardError,
 };
 
-/** Slices of a stack that the plan's regions lie on, ascending: read these before {@link measurePlan}. */
-export function slicesNeeded(plan: Plan, stack: Stack): readonly number[] {
+/**
+ * Slices of one of the stacks that the plan's values rest on, ascending: read these before {@link measurePlan}. An oblique
+ * plane may need all of them.
+ */
+export function slicesNeeded(
+  plan: Plan,
+  stack: Stack,
+  { soft, sharp }: { readonly soft: Stack; readonly sharp: Stack | undefined },
+): readonly number[] {
+  const onSlices = <T extends { readonly plane?: string }>(items: readonly T[]): readonly T[] =>
+    items.filter(({ plane }) => plane === undefined);
   const indices = new Set<number>([
-    ...edgeSlices(plan.edges ?? [], stack),
-    ...profileSlices(plan.profiles, stack),
-    ...stentSlices(plan.stents, stack),
+    ...edgeSlices(onSlices(plan.edges ?? []), stack),
+    ...profileSlices(onSlices(plan.profiles), stack),
+    ...stentSlices(onSlices(plan.stents), stack),
+    ...planeSlices(plan, stack, soft, sharp),
   ]);
-  for (const { shape } of plan.regions) {
+  for (const { shape } of onSlices(plan.regions)) {
     const found = findSlice(shape, stack);
     if (found.ok) indices.add(found.value.sliceIndex);
   }
@@ -79,37 +79,16 @@ export function measurePlan(
     profile: plan.profiles,
     stent: plan.stents,
     'edge line': plan.edges ?? [],
+    'oblique plane': plan.planes ?? [],
   })) {
     const twice = repeatedId(list);
     if (twice !== undefined) {
       return refuse('duplicate-id', `The plan has more than one ${what} ${twice}. Name each once.`);
     }
   }
-  const sideOf = (stack: Stack, kernel: Kernel) => ({
-    stack,
-    storedOf: (sliceIndex: number) => storedOf(stack, sliceIndex),
-    noise: noise[kernel],
-  });
-  const [softSide, sharpSide] = [sideOf(soft, 'soft'), sharp && sideOf(sharp, 'sharp')];
-  const isOneSpace = notOnSharp === undefined;
-  const on = (stack: Stack, { shape }: PlanRegion, kernel: Kernel) =>
-    measureRegion(
-      shape,
-      stack,
-      (sliceIndex) => storedOf(stack, sliceIndex),
-      noise[kernel],
-      isOneSpace ? (kernel === 'soft' ? sharpSide : softSide) : undefined,
-    );
-  const onSharp = (stack: Stack, region: PlanRegion) =>
-    notOnSharp === undefined ? on(stack, region, 'sharp') : notMeasured(region.shape, notOnSharp);
-  const regions = plan.regions.map(
-    (region): MeasuredRegion => ({
-      id: region.id,
-      role: region.role,
-      soft: on(soft, region, 'soft'),
-      sharp: sharp === undefined ? null : onSharp(sharp, region),
-    }),
-  );
+  const cuts = planCuts(plan, soft, sharp, storedOf);
+  const ground = { soft, sharp, storedOf, cuts, noise, notOnSharp };
+  const regions = measureRegions(plan.regions, ground);
   const byId = new Map(regions.map((region) => [region.id, region]));
   const kernels: readonly Kernel[] = sharp === undefined ? ['soft'] : ['soft', 'sharp'];
   return success({
@@ -118,11 +97,12 @@ export function measurePlan(
       id: contrast.id,
       ...measuredContrast(contrast, kernels, (id, kernel) => byId.get(id)?.[kernel]),
     })),
-    profiles: measureProfiles(plan.profiles, soft, sharp, storedOf, notOnSharp),
-    stents: measureStents(plan.stents, soft, sharp, storedOf, noise, notOnSharp),
-    ...(plan.edges === undefined
+    profiles: measureProfiles(plan.profiles, ground),
+    stents: measureStents(plan.stents, ground),
+    ...(plan.edges === undefined ? {} : { edges: measureEdges(plan.edges, ground) }),
+    ...(plan.planes === undefined
       ? {}
-      : { edges: measureEdges(plan.edges, soft, sharp, storedOf, notOnSharp) }),
+      : { planes: plan.planes.map(({ id }) => ({ id, facts: cuts.factsOf(id) ?? null })) }),
   });
 }
 

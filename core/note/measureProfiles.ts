@@ -1,7 +1,8 @@
-import { type Flag, findLineSlice } from '../region/index.js';
+import { measureProfileOnCut } from '../oblique/index.js';
+import { findLineSlice } from '../region/index.js';
 import type { Stack } from '../stack/index.js';
 import { measureProfile, notProfiled, type ProfileValue } from '../stent/measureProfile.js';
-import type { StackStoredOf } from './measurePlan.js';
+import type { RegionGround } from './measureRegions.js';
 import type { PlanProfile } from './plan.js';
 
 /** A line across a vessel on both kernels; null on a kernel that the plan does not name. */
@@ -11,16 +12,17 @@ export interface MeasuredProfile {
   readonly sharp: ProfileValue | null;
 }
 
-/** Measures the profiles of a plan; `notOnSharp` says why nothing may be measured on the sharp stack. */
+/** Measures the profiles of a plan, each on the slices or on its oblique plane. */
 export function measureProfiles(
   profiles: readonly PlanProfile[],
-  soft: Stack,
-  sharp: Stack | undefined,
-  storedOf: StackStoredOf,
-  notOnSharp?: Flag,
+  { soft, sharp, storedOf, cuts, notOnSharp }: RegionGround,
 ): readonly MeasuredProfile[] {
-  const on = (stack: Stack, profile: PlanProfile): ProfileValue =>
-    measureProfile(profile, stack, (sliceIndex) => storedOf(stack, sliceIndex));
+  const on = (stack: Stack, profile: PlanProfile): ProfileValue => {
+    if (profile.plane === undefined)
+      return measureProfile(profile, stack, (sliceIndex) => storedOf(stack, sliceIndex));
+    const cut = cuts.cutOf(profile.plane, stack);
+    return cut.ok ? measureProfileOnCut(profile, cut.value) : notProfiled(cut.refusal);
+  };
   return profiles.map((profile) => ({
     id: profile.id,
     soft: on(soft, profile),

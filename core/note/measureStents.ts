@@ -1,52 +1,48 @@
-import { alongNormal, type Vec3 } from '../geometry/index.js';
+import { alongNormal } from '../geometry/index.js';
 import type { KernelTexture } from '../quality/index.js';
-import type { Flag, NoiseOfStack } from '../region/index.js';
+import type { NoiseOfStack } from '../region/index.js';
 import type { Stack } from '../stack/index.js';
-import { type Estimated, fitStent } from '../stent/index.js';
-import type { StackStoredOf } from './measurePlan.js';
+import { fitStent } from '../stent/index.js';
+import type { RegionGround } from './measureRegions.js';
 import type { PlanStent } from './plan.js';
-import type { Kernel } from './schema.js';
+import type { StentValue } from './stentSchema.js';
+import { noStentValue, stentValue } from './stentValue.js';
 
 /** A stent fitted on both kernels at once, or the reason why it has no values. */
-export interface MeasuredStent {
+export interface MeasuredStent extends Omit<StentValue, 'reason'> {
   readonly id: string;
-  readonly strutDiameterMm: Estimated | null;
-  readonly lumenHu: Estimated | null;
   readonly reason?: string;
 }
 
 /** Slices on either side of the start that a fit may look at. */
 const REACH_SLICES = 3;
 
+const ONE_STACK = {
+  code: 'one-stack',
+  text: 'A stent is fitted on a soft and a sharp stack at once: the plan names one.',
+} as const;
+
 /** Fits the stents of a plan. Without a sharp stack in one space there is no joint fit. */
 export function measureStents(
   stents: readonly PlanStent[],
-  soft: Stack,
-  sharp: Stack | undefined,
-  storedOf: StackStoredOf,
-  noise: Readonly<Record<Kernel, NoiseOfStack>>,
-  notOnSharp?: Flag,
+  ground: RegionGround,
 ): readonly MeasuredStent[] {
-  const without = (id: string, reason: string): MeasuredStent => ({
-    id,
-    strutDiameterMm: null,
-    lumenHu: null,
-    reason,
-  });
   return stents.map((stent) => {
-    if (sharp === undefined) {
-      return without(
-        stent.id,
-        'A stent is fitted on a soft and a sharp stack at once: the plan names one.',
-      );
-    }
-    if (notOnSharp !== undefined) return without(stent.id, notOnSharp.text);
-    const texture = { soft: textureOf(noise.soft), sharp: textureOf(noise.sharp) };
-    const fitted = fitStent(stent, soft, sharp, storedOf, texture);
-    return fitted.reason !== undefined
-      ? without(stent.id, fitted.reason.text)
-      : { id: stent.id, strutDiameterMm: fitted.strutDiameterMm, lumenHu: fitted.lumenHu };
+    const { reason, ...values } = fitOf(stent, ground);
+    return { id: stent.id, ...values, ...(reason === null ? {} : { reason: reason.text }) };
   });
+}
+
+/** Fits one stent on both stacks, for the note and for a plan alike. */
+export function fitOf(
+  stent: Omit<PlanStent, 'id'>,
+  { soft, sharp, storedOf, noise, notOnSharp }: RegionGround,
+): StentValue {
+  if (sharp === undefined) return noStentValue(ONE_STACK);
+  if (notOnSharp !== undefined) return noStentValue(notOnSharp);
+  const texture = { soft: textureOf(noise.soft), sharp: textureOf(noise.sharp) };
+  const fit = fitStent(stent, soft, sharp, storedOf, texture);
+  return stentValue(fit, { soft, sharp, storedOf });
 }
 
 function textureOf(noise: NoiseOfStack): KernelTexture | null {
@@ -54,10 +50,13 @@ function textureOf(noise: NoiseOfStack): KernelTexture | null {
 }
 
 /** Slices of a stack that fits look at: those next to each start. */
-export function stentSlices(stents: readonly PlanStent[], stack: Stack): readonly number[] {
+export function stentSlices(
+  stents: readonly Pick<PlanStent, 'centreMm'>[],
+  stack: Stack,
+): readonly number[] {
   const { grid } = stack.slices[0].image;
   return stents.flatMap(({ centreMm }) => {
-    const along = alongNormal(grid, centreMm as Vec3);
+    const along = alongNormal(grid, centreMm);
     return stack.slices
       .map(({ alongMm }, index) => ({ index, apartMm: Math.abs(alongMm - along) }))
       .sort((a, b) => a.apartMm - b.apartMm)

@@ -40,8 +40,17 @@ export function nextRegionName(note: Note, role: Role): NextNumber & { readonly 
 /** Highest number by letter, over what the note holds and what it remembers. Kept before anything is removed. */
 export function rememberedNumbers(note: Note): Readonly<Record<string, number>> {
   const highest: Record<string, number> = { ...note.lastNumbers };
-  const { regions, contrasts, findings, edges, repeats } = note;
-  for (const { id } of [...regions, ...contrasts, ...findings, ...edges, ...repeats]) {
+  const { regions, contrasts, findings, edges, profiles, stents, planes, repeats } = note;
+  for (const { id } of [
+    ...regions,
+    ...contrasts,
+    ...findings,
+    ...edges,
+    ...profiles,
+    ...stents,
+    ...planes,
+    ...repeats,
+  ]) {
     const [, letter, digits] = /^([A-Z])(\d{1,9})$/.exec(id) ?? [];
     if (letter === undefined) continue;
     highest[letter] = Math.max(highest[letter] ?? 0, Number(digits));

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { THICKEST_SLAB_MM } from '../oblique/cutStack.js';
 import { ROLES } from '../region/roles.js';
 import { PlanEdgeSchema } from './edgeSchema.js';
 import type { Frozen } from './frozen.js';
@@ -32,6 +33,8 @@ export const PlanRegionSchema = z.object({
   id: identifier,
   role: z.enum(ROLES),
   shape: ShapeSchema,
+  /** The oblique plane that it is measured on; on the slices where nothing is said. */
+  plane: identifier.exactOptional(),
 });
 
 export const PlanContrastSchema = z.object({
@@ -48,12 +51,24 @@ export const PlanProfileSchema = z.object({
   toMm: point,
   bandMm: finite.nonnegative(),
   nominalMm: positive.exactOptional(),
+  plane: identifier.exactOptional(),
 });
 
 export const PlanStentSchema = z.object({
   id: identifier,
   centreMm: point,
   nominalMm: positive.exactOptional(),
+  plane: identifier.exactOptional(),
+});
+
+/** A plane across a vessel: at right angles to the course through two points, through their middle. */
+export const PlanPlaneSchema = z.object({
+  id: identifier,
+  courseMm: z.tuple([point, point]),
+  /** Cubic convolution where nothing is said. */
+  interpolation: z.enum(['linear', 'cubic']).exactOptional(),
+  /** Thickness that is averaged over, mm; a cut without thickness where nothing is said. */
+  slabMm: positive.max(THICKEST_SLAB_MM).exactOptional(),
 });
 
 /** The part of a note that can be measured; what the command line's `measure` reads. */
@@ -66,6 +81,8 @@ export const PlanSchema = z.object({
   stents: z.array(PlanStentSchema).default([]),
   /** Lines across edges. */
   edges: z.array(PlanEdgeSchema).exactOptional(),
+  /** Oblique planes that the others are measured on. */
+  planes: z.array(PlanPlaneSchema).exactOptional(),
 });
 
 export type Plan = Frozen<z.infer<typeof PlanSchema>>;
@@ -73,5 +90,6 @@ export type PlanRegion = Frozen<z.infer<typeof PlanRegionSchema>>;
 export type PlanContrast = Frozen<z.infer<typeof PlanContrastSchema>>;
 export type PlanProfile = Frozen<z.infer<typeof PlanProfileSchema>>;
 export type PlanStent = Frozen<z.infer<typeof PlanStentSchema>>;
+export type PlanPlane = Frozen<z.infer<typeof PlanPlaneSchema>>;
 export type StackReference = Frozen<z.infer<typeof StackReferenceSchema>>;
 export type NoiseSource = Frozen<z.infer<typeof NoiseSourceSchema>>;

@@ -1,4 +1,5 @@
-import type { Plan, StackReference } from './plan.js';
+import type { Plan, PlanPlane, StackReference } from './plan.js';
+import type { NotePlane } from './planeSchema.js';
 import type { Note } from './schema.js';
 
 /** The part of a note that can be measured. */
@@ -7,7 +8,12 @@ export function planOf(note: Note): Plan {
   return {
     plan: 1,
     pair: { soft: reference(soft), ...(sharp === null ? {} : { sharp: reference(sharp) }) },
-    regions: note.regions.map(({ id, role, shape }) => ({ id, role, shape })),
+    regions: note.regions.map(({ id, role, shape, plane }) => ({
+      id,
+      role,
+      shape,
+      ...onPlane(plane),
+    })),
     contrasts: note.contrasts.map(({ id, lumen, wall, noise, reference: region }) => ({
       id,
       lumen,
@@ -15,14 +21,50 @@ export function planOf(note: Note): Plan {
       noise,
       ...(region === undefined ? {} : { reference: region }),
     })),
-    profiles: [],
-    stents: [],
+    profiles: note.profiles.map(({ id, fromMm, toMm, bandMm, nominalMm, plane }) => ({
+      id,
+      fromMm,
+      toMm,
+      bandMm,
+      ...withNominal(nominalMm),
+      ...onPlane(plane),
+    })),
+    stents: note.stents.map(({ id, centreMm, nominalMm, plane }) => ({
+      id,
+      centreMm,
+      ...withNominal(nominalMm),
+      ...onPlane(plane),
+    })),
+    ...(note.planes.length === 0 ? {} : { planes: note.planes.map(planPlane) }),
     ...(note.edges.length === 0
       ? {}
       : {
-          edges: note.edges.map(({ id, fromMm, toMm, bandMm }) => ({ id, fromMm, toMm, bandMm })),
+          edges: note.edges.map(({ id, fromMm, toMm, bandMm, plane }) => ({
+            id,
+            fromMm,
+            toMm,
+            bandMm,
+            ...onPlane(plane),
+          })),
         }),
   };
+}
+
+function planPlane({ id, courseMm, interpolation, slabMm }: NotePlane): PlanPlane {
+  return {
+    id,
+    courseMm,
+    ...(interpolation === undefined ? {} : { interpolation }),
+    ...(slabMm === undefined ? {} : { slabMm }),
+  };
+}
+
+function onPlane(plane: string | undefined): { readonly plane?: string } {
+  return plane === undefined ? {} : { plane };
+}
+
+function withNominal(nominalMm: number | undefined): { readonly nominalMm?: number } {
+  return nominalMm === undefined ? {} : { nominalMm };
 }
 
 function reference(stack: StackReference): StackReference {

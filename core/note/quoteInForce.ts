@@ -1,5 +1,6 @@
 import type { NoteEdge } from './edgeSchema.js';
-import { edgeQuote, type QuoteProposal, quoteProposal } from './quoteProposal.js';
+import type { NoteProfile } from './profileSchema.js';
+import { edgeQuote, profileQuote, type QuoteProposal, quoteProposal } from './quoteProposal.js';
 import type { Quoted } from './quoteSchema.js';
 import type { Note, NoteRegion } from './schema.js';
 
@@ -33,14 +34,20 @@ export function edgeQuoteInForce(edge: NoteEdge): QuoteInForce {
   return quoteInForce(edge, edgeQuote(edge));
 }
 
+/** What is in force for a profile of the note. */
+export function profileQuoteInForce(profile: NoteProfile): QuoteInForce {
+  return quoteInForce(profile, profileQuote(profile));
+}
+
 /**
  * The note's measurements with the proposal of now, where a proposal is in force: it follows values, flags and findings.
  * What the reader chose stays. The same lists come back where nothing has changed.
  */
-export function withProposedQuotes(note: Note): Pick<Note, 'regions' | 'edges'> {
+export function withProposedQuotes(note: Note): Pick<Note, 'regions' | 'edges' | 'profiles'> {
   return {
     regions: proposedAnew(note.regions, (region) => quoteProposal(note, region)),
     edges: proposedAnew(note.edges, edgeQuote),
+    profiles: proposedAnew(note.profiles, profileQuote),
   };
 }
 

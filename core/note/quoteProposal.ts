@@ -1,5 +1,6 @@
 import { FLAGS, type Flag, type RegionValue } from '../region/index.js';
 import type { NoteEdge } from './edgeSchema.js';
+import type { NoteProfile } from './profileSchema.js';
 import type { Quoted } from './quoteSchema.js';
 import type { Note, NoteRegion } from './schema.js';
 
@@ -87,6 +88,16 @@ export function edgeQuote(edge: Pick<NoteEdge, 'soft' | 'sharp'>): QuoteProposal
   return has('soft')
     ? { quote: 'soft', reason: 'No rise on the sharp kernel. The soft one is quoted.' }
     : { quote: null, reason: 'No rise on either kernel.' };
+}
+
+/** Proposes which kernel's visible width to quote, as for edges. */
+export function profileQuote(profile: Pick<NoteProfile, 'soft' | 'sharp'>): QuoteProposal {
+  const has = (kernel: 'soft' | 'sharp') => (profile[kernel]?.visibleWidthMm ?? null) !== null;
+  if (has('sharp'))
+    return { quote: 'sharp', reason: 'Edges and widths: the sharp kernel blurs less.' };
+  return has('soft')
+    ? { quote: 'soft', reason: 'No visible width on the sharp kernel. The soft one is quoted.' }
+    : { quote: null, reason: 'No visible width on either kernel.' };
 }
 
 function nearest(flags: readonly Flag[] = []) {

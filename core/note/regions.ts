@@ -18,12 +18,14 @@ export interface NewRegion extends RegionValues {
   /** Where in the finding the region lies, in the reader's words. */
   readonly place?: string;
   readonly findingId?: string;
+  /** The oblique plane that it was drawn on. */
+  readonly plane?: string;
 }
 
 /** Adds a region under the next free name of its role: 'L2', 'Lumen 2'. */
 export function addRegion(
   note: Note,
-  { role, shape, place = '', findingId, soft, sharp }: NewRegion,
+  { role, shape, place = '', findingId, plane, soft, sharp }: NewRegion,
   now: string,
 ): { readonly note: Note; readonly region: NoteRegion } {
   const { id, label, lastNumbers } = nextRegionName(note, role);
@@ -31,6 +33,7 @@ export function addRegion(
     id,
     role,
     shape,
+    ...(plane === undefined ? {} : { plane }),
     label,
     place,
     findingId: findingId ?? null,

@@ -22,9 +22,15 @@ export function runningRepeat(note: Pick<Note, 'repeats' | 'regions'>): RunningR
   const repeat = note.repeats.find(({ finishedAt }) => finishedAt === null);
   if (repeat === undefined) return undefined;
   const done = new Set([...repeat.regions.map(({ regionId }) => regionId), ...repeat.skipped]);
-  const next = note.regions.find(({ id }) => !done.has(id));
-  const steps = note.regions.length;
+  const regions = repeatable(note);
+  const next = regions.find(({ id }) => !done.has(id));
+  const steps = regions.length;
   return { repeat, next, step: Math.min(done.size + 1, steps), steps };
+}
+
+/** A region on an oblique plane is not read again: where the plane lies is a part of its reading. */
+function repeatable({ regions }: Pick<Note, 'regions'>): readonly NoteRegion[] {
+  return regions.filter(({ plane }) => plane === undefined);
 }
 
 /** Begins to read the note's regions again. Refused where there are none, and while another repeat runs. */
@@ -32,8 +38,8 @@ export function beginRepeat(
   note: Note,
   { reader, now }: { readonly reader: string; readonly now: string },
 ): Result<Note> {
-  if (note.regions.length === 0) {
-    return refuse('no-regions', 'There is no region yet that could be read again.');
+  if (repeatable(note).length === 0) {
+    return refuse('no-regions', 'There is no region on the slices yet that could be read again.');
   }
   if (runningRepeat(note) !== undefined) {
     return refuse(

@@ -9,9 +9,12 @@ import {
   PlanRegionSchema,
   StackReferenceSchema,
 } from './plan.js';
+import { NotePlaneSchema } from './planeSchema.js';
+import { NoteProfileSchema } from './profileSchema.js';
 import { QuoteBySchema, QuotedSchema } from './quoteSchema.js';
 import { RegionValueSchema } from './regionValueSchema.js';
 import { type RepeatedRegionSchema, RepeatSchema } from './repeatSchema.js';
+import { NoteStentSchema } from './stentSchema.js';
 import { PairTextureSchema } from './textureSchema.js';
 import { VisibilitySchema } from './visibilitySchema.js';
 
@@ -171,6 +174,10 @@ export const NoteSchema = z.object({
   contrasts: z.array(NoteContrastSchema),
   /** Lines across edges; notes of earlier versions have none. */
   edges: z.array(NoteEdgeSchema).default([]),
+  /** Lines across stents and lumens, fitted stents, and oblique planes; notes of earlier versions have none. */
+  profiles: z.array(NoteProfileSchema).default([]),
+  stents: z.array(NoteStentSchema).default([]),
+  planes: z.array(NotePlaneSchema).default([]),
   /** Readings of the same regions again; notes of earlier versions have none. */
   repeats: z.array(RepeatSchema).default([]),
   /** The smallest disc that could be seen; notes of earlier versions have none. */

@@ -1,3 +1,6 @@
+import type { Note } from '../note/schema.js';
+import { STENT_CAUTION } from './stentSentence.js';
+
 /** What every export says, at its head and at its foot. Own wording of common caution for a measuring aid. */
 export const CAUTIONS = [
   'Diptych is a measuring aid under investigation. It is not a medical device, and not for primary diagnosis, choice of treatment or emergencies.',
@@ -11,7 +14,14 @@ export const CAUTIONS = [
 export const SYNTHETIC_CAUTION =
   'SYNTHETIC: computed images of no patient. For demonstration only.';
 
-/** Cautions that hold for a note, the most urgent first. */
-export function cautionsOf({ synthetic }: { readonly synthetic: boolean }): readonly string[] {
-  return synthetic ? [SYNTHETIC_CAUTION, ...CAUTIONS] : CAUTIONS;
+/** Cautions that hold for a note, the most urgent first; that of fitted stents where it has some. */
+export function cautionsOf({
+  synthetic,
+  stents,
+}: Pick<Note, 'synthetic' | 'stents'>): readonly string[] {
+  return [
+    ...(synthetic ? [SYNTHETIC_CAUTION] : []),
+    ...CAUTIONS,
+    ...(stents.length > 0 ? [STENT_CAUTION] : []),
+  ];
 }

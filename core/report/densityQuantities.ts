@@ -1,7 +1,7 @@
 import { formatFixed } from '../format/index.js';
 import type { Density } from '../note/schema.js';
 import { bandEdges, bandShare, bandTable } from '../plaque/index.js';
-import type { QuantityValue } from './regionQuantities.js';
+import type { QuantityValue } from './quantityDefinition.js';
 
 /** Names of band shares begin with this. */
 export const BAND_SHARE = 'share of ';

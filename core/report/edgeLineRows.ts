@@ -1,21 +1,15 @@
-import { formatFixed, formatQuantity, MINUS, type Quantity } from '../format/index.js';
 import type { NoteEdge } from '../note/edgeSchema.js';
 import { edgeQuoteInForce } from '../note/quoteInForce.js';
 import type { Note } from '../note/schema.js';
 import { middleOf } from '../region/index.js';
-import type { KernelValues, TableRow } from './measurementTable.js';
+import { joinedPlace, lineText, planeText } from './placeText.js';
+import { type QuantityDefinition, quantityValues } from './quantityDefinition.js';
 import { quoteCells } from './quoteCells.js';
-import type { QuantityValue } from './regionQuantities.js';
+import { findingCells, kernelCells, kernelsOf } from './rowParts.js';
+import type { TableRow } from './tableRow.js';
 
-type EdgeNumbers = NonNullable<NoteEdge['soft']>;
-
-const DEFINITIONS: readonly {
-  readonly quantity: string;
-  readonly value: (of: EdgeNumbers) => number | null;
-  readonly digits: Quantity | 'count';
-  readonly unit: string;
-  readonly formula: string;
-}[] = [
+/** The quantities of an edge line, in the order of the tables. */
+export const EDGE_DEFINITIONS: readonly QuantityDefinition<NonNullable<NoteEdge['soft']>>[] = [
   {
     quantity: 'edge rise',
     value: ({ riseMm }) => riseMm,
@@ -60,60 +54,26 @@ const DEFINITIONS: readonly {
   },
 ];
 
-/** Names of an edge line's quantities, in the order of the tables. */
-export const EDGE_QUANTITIES: readonly string[] = DEFINITIONS.map(({ quantity }) => quantity);
-
-/** The edge lines of a note as rows of the long table. */
-export function edgeLineRows({ edges, pair }: Note): readonly TableRow[] {
-  const stacks = [
-    { kernel: 'soft' as const, stack: pair.soft },
-    ...(pair.sharp === null ? [] : [{ kernel: 'sharp' as const, stack: pair.sharp }]),
-  ];
-  return edges.map((edge) => ({
+/** The edge lines of a note as rows of the table. */
+export function edgeLineRows(note: Note): readonly TableRow[] {
+  return note.edges.map((edge) => ({
     item: 'edge line',
     id: edge.id,
     label: edge.label,
     role: '',
-    segment: '',
-    finding: '',
-    nominalMm: null,
-    assessability: '',
-    reason: '',
-    place: placeText(edge),
+    ...findingCells(undefined),
+    place: joinedPlace(lineText(edge), planeText(note, edge)),
+    definition: '',
     quote: quoteCells(edgeQuoteInForce(edge)),
     centreMm: middleOf(edge),
-    kernels: stacks.map(({ kernel, stack }): KernelValues => {
-      const value = edge[kernel];
+    kernels: kernelsOf(note).map((of) => {
+      const value = edge[of.kernel];
       return {
-        kernel,
-        kernelLabel: stack.kernelLabel,
-        seriesInstanceUid: stack.seriesInstanceUid,
-        quoted: edge.quote === kernel || edge.quote === 'both',
-        quantities: value === null ? [] : quantitiesOf(value),
-        sliceIndex: value?.sliceIndex ?? null,
-        slices: stack.slices,
-        sliceOffsetMm: value?.sliceOffsetMm ?? null,
-        sopInstanceUid: value?.sopInstanceUid ?? null,
-        frameNumber: value?.frameNumber ?? null,
-        flags:
-          value === null ? ['Not measured on this kernel.'] : value.flags.map(({ text }) => text),
+        ...kernelCells(of, value),
+        quoted: edge.quote === of.kernel || edge.quote === 'both',
+        quantities: value === null ? [] : quantityValues(EDGE_DEFINITIONS, value),
       };
     }),
     flags: [],
   }));
-}
-
-/** Where a line runs: from, to and the width of its band; a line can be drawn again from it. */
-function placeText({ fromMm, toMm, bandMm }: NoteEdge): string {
-  const point = (mm: readonly number[]): string =>
-    mm.map((part) => formatFixed(part, 2).replace(MINUS, '-')).join(', ');
-  return `from (${point(fromMm)}) to (${point(toMm)}) mm, band ${formatFixed(bandMm, 1)} mm`;
-}
-
-function quantitiesOf(of: EdgeNumbers): readonly QuantityValue[] {
-  return DEFINITIONS.map(({ quantity, value, digits, unit, formula }) => {
-    const number = value(of);
-    const printed = digits === 'count' ? formatFixed(number, 0) : formatQuantity(number, digits);
-    return { quantity, value: number, printed, unit, formula };
-  });
 }

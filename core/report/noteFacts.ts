@@ -1,11 +1,19 @@
 import { formatDicomDate, formatFixed, formatPersonName } from '../format/index.js';
 import type { Note, NoteStack } from '../note/schema.js';
 import { identityStatement } from './identityStatement.js';
+import { planeFacts } from './planeFacts.js';
 import { visibilityFact } from './visibilityFact.js';
 
 /** One line of provenance: what it is, and what the file, the reader or the measurement says. */
 export interface Fact {
-  readonly group: 'Study' | 'Acquisition' | 'Pair' | 'Soft kernel' | 'Sharp kernel' | 'Note';
+  readonly group:
+    | 'Study'
+    | 'Acquisition'
+    | 'Pair'
+    | 'Soft kernel'
+    | 'Sharp kernel'
+    | 'Oblique cuts'
+    | 'Note';
   readonly name: string;
   readonly text: string;
 }
@@ -47,6 +55,11 @@ export function noteFacts(note: Note): readonly Fact[] {
             string,
           ],
         ]),
+    ...planeFacts(note).map(({ name, text }): [Fact['group'], string, string] => [
+      'Oblique cuts',
+      name,
+      text,
+    ]),
     ['Note', 'Reader', note.reader === '' ? null : note.reader],
     ['Note', 'Completion', note.completion],
     ['Note', 'Verification', note.verification],

@@ -1,20 +1,10 @@
-import { formatFixed, formatQuantity, type Quantity } from '../format/index.js';
 import { type RegionValue, SNR_FORMULA } from '../region/index.js';
-
-/** One number of a region, with all that it needs to be read: digits for people, unit, formula. */
-export interface QuantityValue {
-  readonly quantity: string;
-  readonly value: number | null;
-  /** For people, with a real minus sign; an en dash for no value. */
-  readonly printed: string;
-  readonly unit: string;
-  readonly formula: string;
-}
+import { type Digits, printedDigits, type QuantityValue } from './quantityDefinition.js';
 
 interface Definition {
   readonly quantity: string;
   readonly key: keyof RegionValue;
-  readonly digits: Quantity | 'count';
+  readonly digits: Digits;
   readonly unit: 'pixel' | 'mm²' | '' | 'px';
   readonly formula: string;
   /** Left out of a table when there is none: not every version measures it. */
@@ -93,13 +83,6 @@ export function regionQuantities(value: RegionValue, unit: string): readonly Qua
   });
 }
 
-/** A number as the tables print a quantity of a region, or a CNR. */
-export function printedAs(quantity: string, value: number): string {
-  const definitions: readonly Definition[] = DEFINITIONS;
-  const definition = definitions.find((one) => one.quantity === quantity);
-  return printedDigits(value, definition?.digits ?? 'ratio');
-}
-
-function printedDigits(value: number | null, digits: Definition['digits']): string {
-  return digits === 'count' ? formatFixed(value, 0) : formatQuantity(value, digits);
-}
+/** How each quantity of a region is printed. */
+export const REGION_DIGITS: readonly (readonly [quantity: string, digits: Digits])[] =
+  DEFINITIONS.map(({ quantity, digits }) => [quantity, digits]);

@@ -1,12 +1,13 @@
 import type { Note } from '../note/schema.js';
 import { escapeHtml } from './escapeHtml.js';
+import { measurementTable } from './measurementTable.js';
 import { shortProvenance } from './shortProvenance.js';
 import { spreadsheetCell } from './spreadsheetCell.js';
-import { wideColumns, wideTable } from './wideTable.js';
+import { wideColumns } from './wideTable.js';
 
 /** The wide table as bare HTML for the clipboard: a word processor keeps it as a table, and a spreadsheet finds no formula. */
 export function toClipboardHtml(note: Note): string {
-  const table = wideTable(note);
+  const table = measurementTable(note);
   const columns = wideColumns(table);
   const head = columns.map(({ title }) => `<th>${escapeHtml(title)}</th>`).join('');
   const body = table.rows.map((row) => {

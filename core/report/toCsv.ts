@@ -1,10 +1,10 @@
 import { csvFormatRow } from 'd3';
 import { MINUS, NO_VALUE } from '../format/index.js';
 import type { Note } from '../note/schema.js';
-import { edgeLineRows } from './edgeLineRows.js';
-import { type KernelValues, measurementTable, type TableRow } from './measurementTable.js';
-import type { QuantityValue } from './regionQuantities.js';
+import { measurementTable } from './measurementTable.js';
+import type { QuantityValue } from './quantityDefinition.js';
 import { type Cell, spreadsheetCell } from './spreadsheetCell.js';
+import { imagesOf, type KernelValues, type TableRow } from './tableRow.js';
 
 const COLUMNS = [
   'item',
@@ -65,11 +65,14 @@ export function toCsv(note: Note): string {
     changed_at: note.changedAt,
     note_id: note.id,
   };
-  const values = [...table.rows, ...edgeLineRows(note)].flatMap((row) =>
+  const values = table.rows.flatMap((row) =>
     row.kernels.flatMap((kernel) => quantitiesOf(kernel).map((q) => valueLine(row, kernel, q))),
   );
   const facts = table.facts.map(({ group, name, text }): Line => remark(`${group}: ${name}`, text));
-  const remarks = table.remarks.map((text): Line => remark('Remark', text));
+  const remarks = [
+    ...table.remarks.map((text): Line => remark('Remark', text)),
+    ...table.definitions.map((text): Line => remark('Definition', text)),
+  ];
   const cautions = table.cautions.map((text): Line => remark('Caution', text));
   const lines = [...values, ...remarks, ...facts, ...cautions].map((line) => {
     const cells: Line = { ...shared, ...line };
@@ -116,15 +119,32 @@ function valueLine(row: TableRow, kernel: KernelValues, quantity: QuantityValue 
     quote: row.quote.kernel,
     quote_by: row.quote.by,
     quote_reason: row.quote.reason,
-    slice_index_from_0: kernel.sliceIndex,
+    ...imageColumns(kernel),
     slice_offset_mm: kernel.sliceOffsetMm,
     centre_x_mm: row.centreMm?.[0] ?? null,
     centre_y_mm: row.centreMm?.[1] ?? null,
     centre_z_mm: row.centreMm?.[2] ?? null,
-    sop_instance_uid: kernel.sopInstanceUid,
-    frame_number: kernel.frameNumber,
     series_instance_uid: kernel.seriesInstanceUid,
     flags: [...kernel.flags, ...row.flags].join(' '),
+  };
+}
+
+/** Where the values lie; of both kernels at once each image with ' / ' between, soft first. */
+function imageColumns(values: KernelValues): Line {
+  if (values.images === undefined) {
+    return {
+      slice_index_from_0: values.sliceIndex,
+      sop_instance_uid: values.sopInstanceUid,
+      frame_number: values.frameNumber,
+    };
+  }
+  const images = imagesOf(values);
+  const joined = (cells: readonly (string | number | null)[]): Cell =>
+    cells.every((cell) => cell === null) ? null : cells.map((cell) => cell ?? '').join(' / ');
+  return {
+    slice_index_from_0: joined(images.map(({ sliceIndex }) => sliceIndex)),
+    sop_instance_uid: joined(images.map(({ sopInstanceUid }) => sopInstanceUid)),
+    frame_number: joined(images.map(({ frameNumber }) => frameNumber)),
   };
 }
 

@@ -4,14 +4,12 @@ import { densityHtml } from './densityHtml.js';
 import { edgeLineHtml } from './edgeLineHtml.js';
 import { escapeHtml } from './escapeHtml.js';
 import { lifeHtml } from './lifeHtml.js';
-import {
-  type KernelValues,
-  type MeasurementTable,
-  measurementTable,
-  type TableRow,
-} from './measurementTable.js';
+import { type MeasurementTable, measurementTable } from './measurementTable.js';
 import { PAGE_STYLE } from './pageStyle.js';
 import { type PagePictures, pictureHtml } from './pictureHtml.js';
+import { profileHtml } from './profileHtml.js';
+import { stentHtml } from './stentHtml.js';
+import { type KernelValues, kernelName, sliceText, type TableRow } from './tableRow.js';
 import { flagsText } from './wideTable.js';
 
 /**
@@ -37,7 +35,7 @@ ${cautions(table)}
 ${regions(table)}
 <h2>Contrasts</h2>
 ${contrasts(table)}
-${densityHtml(table)}${edgeLineHtml(note)}${pictureHtml(table, pictures)}${lifeHtml(note)}<h2>Where the numbers come from</h2>
+${densityHtml(table)}${edgeLineHtml(table)}${profileHtml(table)}${stentHtml(table)}${pictureHtml(table, pictures)}${lifeHtml(note)}<h2>Where the numbers come from</h2>
 ${facts(table)}
 ${cautions(table)}
 ${banner(table)}</body>
@@ -95,8 +93,8 @@ function regionBody(row: TableRow): string {
       const printed = values.quantities.find(({ quantity }) => quantity === name)?.printed ?? '–';
       return `<td class="number">${escapeHtml(printed)}</td>`;
     });
-    const kernel = `${values.kernel}, ${values.kernelLabel ?? 'no kernel label'}`;
-    const slice = values.sliceIndex === null ? '–' : `${values.sliceIndex + 1} of ${values.slices}`;
+    const kernel = kernelName(values);
+    const slice = sliceText(values) || '–';
     return `<tr>${first}<td>${escapeHtml(kernel)}</td>${numbers.join('')}<td class="number">${escapeHtml(slice)}</td><td>${values.quoted ? 'yes' : ''}</td></tr>`;
   });
   return `<tbody>${lines.join('')}${remarkLine(row, REGION_COLUMNS.length + 4)}</tbody>`;
@@ -106,13 +104,13 @@ function contrasts({ rows }: MeasurementTable): string {
   const ofContrasts = rows.filter(({ item }) => item === 'contrast');
   if (ofContrasts.length === 0) return '<p>No contrast was computed.</p>';
   const bodies = ofContrasts.map((row) => {
-    const lines = row.kernels.map(({ kernel, kernelLabel, quantities }, index) => {
+    const lines = row.kernels.map((values, index) => {
       const first =
         index === 0
-          ? `<th scope="rowgroup" rowspan="${row.kernels.length}">${escapeHtml(row.id)}: ${escapeHtml(row.label)}</th>`
+          ? `<th scope="rowgroup" rowspan="${row.kernels.length}">${escapeHtml(row.id)}: ${escapeHtml(row.label)}${row.place === '' ? '' : `<br><span class="small">${escapeHtml(row.place)}</span>`}</th>`
           : '';
-      const name = `${kernel}, ${kernelLabel ?? 'no kernel label'}`;
-      const cells = quantities.map(
+      const name = kernelName(values);
+      const cells = values.quantities.map(
         ({ printed, formula }) =>
           `<td class="number">${escapeHtml(printed)}</td><td>${escapeHtml(formula)}</td>`,
       );
@@ -138,7 +136,7 @@ function remarkLine(row: TableRow, columns: number): string {
     row.assessability === '' ? '' : `Assessability: ${row.assessability}`,
     row.reason === '' ? '' : `Reason: ${row.reason}`,
     row.quote.sentence,
-    ...row.kernels.map(sliceText),
+    ...row.kernels.map(imageText),
     flagsText(row),
   ].filter((part) => part !== '');
   if (parts.length === 0) return '';
@@ -146,7 +144,7 @@ function remarkLine(row: TableRow, columns: number): string {
 }
 
 /** Which image a kernel's values are from. */
-function sliceText({ kernel, sliceOffsetMm, sopInstanceUid, frameNumber }: KernelValues): string {
+function imageText({ kernel, sliceOffsetMm, sopInstanceUid, frameNumber }: KernelValues): string {
   if (sopInstanceUid === null) return '';
   const offset = formatFixed(sliceOffsetMm, 2);
   const frame = frameNumber === null ? '' : `, frame ${frameNumber}`;

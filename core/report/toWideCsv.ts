@@ -1,14 +1,15 @@
 import type { Note } from '../note/schema.js';
+import { measurementTable } from './measurementTable.js';
 import { spreadsheetCell } from './spreadsheetCell.js';
 import { csvText } from './toCsv.js';
-import { wideColumns, wideTable } from './wideTable.js';
+import { wideColumns } from './wideTable.js';
 
 /**
- * The wide table: one line a region, contrast or edge line, both kernels side by side, in full precision. Each line says
+ * The wide table: one line an item of the note, both kernels side by side, in full precision. Each line says
  * the software, the note and whether the study is synthetic; cautions follow as lines with the id 'note'.
  */
 export function toWideCsv(note: Note): string {
-  const table = wideTable(note);
+  const table = measurementTable(note);
   const columns = wideColumns(table);
   const unit = note.pair.soft.unit;
   const tail = [
@@ -31,6 +32,7 @@ export function toWideCsv(note: Note): string {
   ]);
   const remarks = [
     ...table.remarks,
+    ...table.definitions,
     ...table.facts.map(({ group, name, text }) => `${group}: ${name}: ${text}`),
     ...table.cautions,
   ].map((remark) => [

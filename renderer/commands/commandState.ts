@@ -4,6 +4,7 @@ import type { AppState } from '../state/appState.js';
 import { selectedLine } from '../state/lineSelectors.js';
 import { isBlind, selectedRegion } from '../state/regionSelectors.js';
 import { linksOf } from '../state/selectors.js';
+import { selectedStent } from '../state/stentSelectors.js';
 
 /** Commands that need nothing opened. */
 const ALWAYS: ReadonlySet<CommandId> = new Set([
@@ -42,6 +43,13 @@ const TELLS_FIRST: ReadonlySet<CommandId> = new Set([
   'contrast.new',
   'plot.visible',
   'plot.bands',
+  'plot.stent',
+  'view.residuals',
+  'tool.edge',
+  'tool.profile',
+  'tool.stent',
+  'tool.cut',
+  'cut.delete',
   'repeat.begin',
   'agreement.open',
 ]);
@@ -66,13 +74,14 @@ export function isEnabled(state: AppState, id: CommandId): boolean {
   if (id === 'link.window' || id === 'pair.swap') return pair.sharp !== undefined;
   if (id.startsWith('compare.')) return pair.sharp !== undefined;
   if (id.startsWith('alternate.')) return state.compare.way === 'alternate';
-  if (id === 'view.noiseAreas') return hasNoiseAreas(state);
+  if (id === 'view.noiseAreas') return hasNoiseAreas(state) && state.cut === undefined;
+  if (id === 'view.residuals') return note.stents.length > 0;
+  if (id === 'cut.leave' || id === 'cut.delete') return state.cut !== undefined;
   if (NEEDS_REGIONS.has(id)) return note.regions.length > 0;
   if (id === 'edit.undo') return state.history.undo.length > 0;
   if (id === 'edit.redo') return state.history.redo.length > 0;
   if (id === 'contrast.new') return note.regions.length > 1;
-  if ((id === 'region.delete' || id === 'slice.region') && selectedLine(state) !== undefined)
-    return true;
+  if ((id === 'region.delete' || id === 'slice.region') && isOtherSelected(state)) return true;
   if (id === 'region.delete' || id === 'slice.region' || id === 'region.keyImage')
     return selectedRegion(state) !== undefined;
   return true;
@@ -83,6 +92,7 @@ export function isChecked(state: AppState, id: CommandId): boolean {
   if (id.startsWith('tool.')) return id === `tool.${state.tool}`;
   if (id.startsWith('role.')) return id === `role.${state.role}`;
   if (id === 'view.smooth') return state.smooth;
+  if (id === 'view.residuals') return state.residuals;
   if (id === 'pair.mask') return state.pair !== undefined && isMasked(state.pair);
   if (id === 'view.noiseAreas') return state.noiseAreas && hasNoiseAreas(state);
   if (id.startsWith('compare.')) {
@@ -92,6 +102,11 @@ export function isChecked(state: AppState, id: CommandId): boolean {
   if (id === 'link.scroll') return links.scroll;
   if (id === 'link.window') return links.window;
   return id === 'link.view' && links.view;
+}
+
+/** Whether a line or a stent is selected. */
+function isOtherSelected(state: AppState): boolean {
+  return selectedLine(state) !== undefined || selectedStent(state) !== undefined;
 }
 
 function hasNoiseAreas({ assessment }: AppState): boolean {

@@ -6,10 +6,11 @@ import type { Shell } from '../host/shell.js';
 import type { Bench } from '../services/bench.js';
 import type { CompareWay, DialogId, Message, ToolId } from '../state/appState.js';
 import { setCompare, switchKernel } from '../state/changes/compare.js';
+import { deletePlane, leavePlane, scrollOrShift } from '../state/changes/cut.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { removeSelected, setRole, stepSelection } from '../state/changes/regions.js';
 import { endRepeat, skipNext, startRepeat } from '../state/changes/repeat.js';
-import { fitView, scrollBy, setWindow, toggleLink } from '../state/changes/view.js';
+import { fitView, setWindow, toggleLink } from '../state/changes/view.js';
 import { redo, undo } from '../state/history.js';
 import { noiseAreasText } from '../state/noiseSelectors.js';
 import { stackOf } from '../state/selectors.js';
@@ -45,7 +46,12 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
   const dialog = (id: DialogId) => () =>
     store.change('Open dialog', (state) => ({ ...state, dialog: id }));
   const tool = (id: ToolId) => () =>
-    store.change('Choose tool', (state) => ({ ...state, tool: id, openOutline: undefined }));
+    store.change('Choose tool', (state) => ({
+      ...state,
+      tool: id,
+      openOutline: undefined,
+      courseStart: undefined,
+    }));
   const role = (id: Role) => () => store.change('Choose role', setRole(id));
   const link = (which: 'scroll' | 'window' | 'view') => () =>
     store.change('Link', toggleLink(which));
@@ -62,10 +68,10 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
   const save = (kind: ExportKind) => withNote((note) => exportNote(note, kind, shell));
   const step = (by: 1 | -1) => () => {
     store.change('Select region', stepSelection(by));
-    store.change('Go to region', goToRegion);
+    store.change('Go to region', goToRegion(bench.cuts));
   };
   const slice = (by: number) => () =>
-    store.change('Scroll', (state) => scrollBy(state.active, by)(state));
+    store.change('Scroll', (state) => scrollOrShift(state.active, by, bench.cuts, now())(state));
   const zoom = (factor: number) => () =>
     store.change('Zoom', (state) => zoomBy(state.active, factor)(state));
 
@@ -106,7 +112,7 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
     'tool.zoom': tool('zoom'),
     'slice.next': slice(1),
     'slice.previous': slice(-1),
-    'slice.region': () => store.change('Go to region', goToRegion),
+    'slice.region': () => store.change('Go to region', goToRegion(bench.cuts)),
     'view.fit': () => store.change('Fit', (state) => fitView(state.active)(state)),
     'view.zoomIn': zoom(ZOOM_STEP),
     'view.zoomOut': zoom(1 / ZOOM_STEP),
@@ -125,6 +131,12 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
         const message = text === undefined ? state.message : ({ tone: 'plain', text } as const);
         return { ...state, noiseAreas, message };
       }),
+    'plot.stent': () => store.change('Choose plot', (state) => ({ ...state, plot: 'stent' })),
+    'view.residuals': () =>
+      store.change('Show what is left over', (state) => ({
+        ...state,
+        residuals: !state.residuals,
+      })),
     'plot.bands': () => store.change('Choose plot', (state) => ({ ...state, plot: 'bands' })),
     'plot.visible': () => store.change('Choose plot', (state) => ({ ...state, plot: 'visible' })),
     'window.file': () => {
@@ -146,6 +158,14 @@ function handlersOf(context: CommandContext): Readonly<Record<CommandId, () => v
     'tool.ellipse': tool('ellipse'),
     'tool.outline': tool('outline'),
     'tool.edge': tool('edge'),
+    'tool.profile': tool('profile'),
+    'tool.stent': tool('stent'),
+    'tool.cut': tool('cut'),
+    'cut.leave': () => store.change('Back to the slices', leavePlane),
+    'cut.delete': () => {
+      const planeId = store.now().cut?.planeId;
+      if (planeId !== undefined) store.change('Delete the cut', deletePlane(planeId, now()));
+    },
     'role.lumen': role('lumen'),
     'role.wall': role('wall'),
     'role.plaque': role('plaque'),

@@ -3,6 +3,7 @@ import {
   type FindingKind,
   type NoteFinding,
   type NoteRegion,
+  type NoteStent,
   type QuoteProposal,
   SEGMENTS,
 } from '../../core/note/index.js';
@@ -18,6 +19,8 @@ export interface InspectorProps {
   readonly finding: NoteFinding | undefined;
   /** What would be quoted by the rules. */
   readonly proposal: QuoteProposal;
+  /** The stent that was fitted where the region lies. */
+  readonly fitted: NoteStent | undefined;
   readonly frozen: boolean;
   readonly actions: LedgerActions;
 }
@@ -88,6 +91,17 @@ export function Inspector(props: InspectorProps) {
         onQuote={(quote, reason) => actions.onQuote(id, quote, reason)}
         onProposed={() => actions.onProposedQuote(id)}
       />
+      {region.role === 'lumen' && (finding?.kind === 'stent' || props.fitted !== undefined) && (
+        <button
+          type="button"
+          class="button"
+          disabled={frozen && props.fitted === undefined}
+          title="The lumen’s density with the blooming of the struts taken away, fitted on both kernels"
+          onClick={() => actions.onFittedStent(id)}
+        >
+          {props.fitted === undefined ? 'Fit stent' : `Fitted: ${props.fitted.label}`}
+        </button>
+      )}
       <button
         type="button"
         class="button icon-button"

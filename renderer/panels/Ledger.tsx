@@ -6,9 +6,11 @@ import {
   type Note,
   quoteProposal,
   regionQuote,
+  stentAtRegion,
 } from '../../core/note/index.js';
 import { contrastFormula } from '../../core/region/index.js';
 import { Inspector } from './Inspector.js';
+import { LedgerAcrossRows } from './LedgerAcrossRows.js';
 import { LedgerContrastRow } from './LedgerContrastRow.js';
 import { LedgerGroupRow } from './LedgerGroupRow.js';
 import { LedgerRegionRow } from './LedgerRegionRow.js';
@@ -19,7 +21,9 @@ import { moveFocus } from './parts/focusMove.js';
 
 export interface LedgerProps extends LedgerActions {
   /** Undefined while no pair is open. */
-  readonly note: Pick<Note, 'findings' | 'regions' | 'contrasts' | 'noise'> | undefined;
+  readonly note:
+    | Pick<Note, 'findings' | 'regions' | 'contrasts' | 'noise' | 'stents' | 'profiles'>
+    | undefined;
   readonly selectedId: string | undefined;
   /** Verified notes are frozen: nothing can be changed. */
   readonly frozen: boolean;
@@ -71,7 +75,7 @@ export function Ledger(props: LedgerProps) {
       </div>
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reachable by keyboard */}
       <section class="ledger-scroll" aria-label="Table of the reading note" tabIndex={0}>
-        {note === undefined || note.regions.length === 0 ? (
+        {note === undefined || !hasRows(note) ? (
           <Empty open={note !== undefined} />
         ) : (
           <table ref={table} onKeyDown={onKeyDown}>
@@ -93,6 +97,12 @@ export function Ledger(props: LedgerProps) {
                   ))}
                 </Fragment>
               ))}
+              <LedgerAcrossRows
+                stents={note.stents}
+                profiles={note.profiles}
+                selectedId={props.selectedId}
+                onSelect={props.onSelect}
+              />
               {note.contrasts.length > 0 && (
                 <tr class="group">
                   <th scope="rowgroup" colSpan={10}>
@@ -119,6 +129,7 @@ export function Ledger(props: LedgerProps) {
           key={selected.id}
           region={selected}
           finding={note.findings.find(({ id }) => id === selected.findingId)}
+          fitted={stentAtRegion(note, selected)}
           proposal={quoteProposal(note, selected)}
           frozen={props.frozen}
           actions={props}
@@ -127,6 +138,14 @@ export function Ledger(props: LedgerProps) {
       {selected === undefined && props.foot}
     </section>
   );
+}
+
+function hasRows({
+  regions,
+  stents,
+  profiles,
+}: Pick<Note, 'regions' | 'stents' | 'profiles'>): boolean {
+  return regions.length + stents.length + profiles.length > 0;
 }
 
 function LedgerHead() {

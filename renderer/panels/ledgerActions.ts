@@ -18,6 +18,8 @@ export interface LedgerActions {
   /** Segment and kind move this region; size, assessability and reason hold for its whole finding. */
   readonly onFinding: (regionId: string, fields: FindingFields) => void;
   readonly onClearFinding: (regionId: string) => void;
+  /** Goes to the stent that was fitted where a region lies, or has one fitted there. */
+  readonly onFittedStent: (regionId: string) => void;
   readonly onNoise: (noise: NoiseSource) => void;
   readonly onNewContrast: () => void;
   readonly onContrast: (contrastId: string, change: Partial<ContrastParts>) => void;

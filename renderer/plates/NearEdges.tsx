@@ -27,7 +27,8 @@ export function NearEdges({ kernel, store, stored }: NearEdgesProps) {
   const state = store.state.value;
   const transform = transformOf(state, kernel);
   const shape = state.draft?.shape ?? selectedRegion(state)?.shape;
-  const isShown = shape !== undefined && isOnPlate(state, kernel, shape);
+  // On an oblique cut edges are not sought: the blur of the kernels is another there.
+  const isShown = state.cut === undefined && shape !== undefined && isOnPlate(state, kernel, shape);
   const own = isShown ? sideOf(state, kernel, shape, stored) : undefined;
   const other = kernel === 'soft' ? 'sharp' : 'soft';
   const isOneSpace = state.pair?.link === 'position';

@@ -1,8 +1,8 @@
 import { useEffect, useId, useMemo, useRef } from 'preact/hooks';
 import type { Kernel } from '../../core/note/index.js';
+import type { Fitting } from '../services/fitting.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { selectRegion } from '../state/changes/regions.js';
-import { scrollBy } from '../state/changes/view.js';
 import {
   isInterpolated,
   kernelAt,
@@ -11,10 +11,11 @@ import {
 } from '../state/compareSelectors.js';
 import { shownRegions } from '../state/regionSelectors.js';
 import { stackOf } from '../state/selectors.js';
-import type { Store } from '../state/store.js';
+import type { Change, Store } from '../state/store.js';
 import type { ToolPointer } from '../tools/tool.js';
 import type { ToolMachine } from '../tools/toolMachine.js';
 import { zoomBy } from '../tools/zoomTool.js';
+import type { Cuts } from '../volumes/cuts.js';
 import { AlternateSwitch } from './AlternateSwitch.js';
 import { DifferenceScale } from './DifferenceScale.js';
 import { FoldEdge } from './FoldEdge.js';
@@ -26,6 +27,7 @@ import { PlateLabels } from './PlateLabels.js';
 import { PlateOverlay } from './PlateOverlay.js';
 import { plateDescription, plateName } from './plateDescription.js';
 import type { PlatePoint } from './platePoint.js';
+import { Residuals } from './Residuals.js';
 
 export interface PlateProps {
   /** One kernel, or both in one of the ways to compare. */
@@ -33,6 +35,12 @@ export interface PlateProps {
   readonly store: Store;
   readonly machine: ToolMachine;
   readonly stored: Stored;
+  /** Cuts oblique planes, to go to what lies on one. */
+  readonly cuts: Pick<Cuts, 'of'>;
+  /** What was fitted for a stent, for the picture of what is left over. */
+  readonly fitOf: Fitting['fitOf'];
+  /** Goes a number of slices up or down. */
+  readonly scroll: (kernel: Kernel, steps: number) => Change;
   /** A key went down on the plate; true when it was used. */
   readonly onKey: (kernel: Kernel, event: KeyboardEvent) => boolean;
 }
@@ -44,11 +52,11 @@ const PIXELS_PER_E = 500;
 const PIXELS_PER_LINE = 20;
 
 /** One of the two images, or both in one place, with its marks, its words, its pointer tools and its keys. */
-export function Plate({ face, store, machine, stored, onKey }: PlateProps) {
+export function Plate({ face, store, machine, stored, cuts, fitOf, scroll, onKey }: PlateProps) {
   const surface = useRef<HTMLDivElement>(null);
   const describedBy = useId();
   const layers = useMemo(() => layersOf(face, stored), [face, stored]);
-  useWheel(surface, face, store);
+  useWheel(surface, face, store, scroll);
 
   const pointerOf = (event: PointerEvent): ToolPointer => {
     const point = placeOf(event);
@@ -118,8 +126,11 @@ export function Plate({ face, store, machine, stored, onKey }: PlateProps) {
             hidden={face === 'alternate' && layer.name !== kernel}
           />
         ))}
-        {state.noiseAreas && <NoiseAreas kernel={kernel} store={store} />}
+        {state.noiseAreas && state.cut === undefined && (
+          <NoiseAreas kernel={kernel} store={store} />
+        )}
         <NearEdges kernel={kernel} store={store} stored={stored} />
+        <Residuals kernel={kernel} store={store} fitOf={fitOf} />
         <PlateOverlay kernel={kernel} store={store} />
         <PlateLabels face={face} store={store} />
         {layers.map((layer) => {
@@ -168,7 +179,7 @@ export function Plate({ face, store, machine, stored, onKey }: PlateProps) {
                 aria-pressed={id === state.selected}
                 onFocus={() => {
                   store.change('Select region', selectRegion(id));
-                  store.change('Go to region', goToRegion);
+                  store.change('Go to region', goToRegion(cuts));
                 }}
               >
                 {place === '' ? label : `${label}, ${place}`}
@@ -193,6 +204,7 @@ function useWheel(
   surface: { readonly current: HTMLDivElement | null },
   face: PlateFace,
   store: Store,
+  scroll: PlateProps['scroll'],
 ): void {
   useEffect(() => {
     const element = surface.current;
@@ -216,9 +228,9 @@ function useWheel(
       if (steps === 0) return;
       turnedPx = isNotch ? 0 : turnedPx - steps * PIXELS_PER_SLICE;
       // Turning the wheel towards oneself goes down the body, to smaller positions.
-      store.change('Scroll', scrollBy(kernel, -steps));
+      store.change('Scroll', scroll(kernel, -steps));
     };
     element.addEventListener('wheel', onWheel, { passive: false });
     return () => element.removeEventListener('wheel', onWheel);
-  }, [surface, face, store]);
+  }, [surface, face, store, scroll]);
 }

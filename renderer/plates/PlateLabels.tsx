@@ -1,3 +1,4 @@
+import { formatFixed } from '../../core/format/index.js';
 import { orientationLetters, scaleBar } from '../../core/geometry/index.js';
 import type { Kernel } from '../../core/note/index.js';
 import type { AppState } from '../state/appState.js';
@@ -29,6 +30,7 @@ export function PlateLabels({ face, store }: { readonly face: PlateFace; readonl
       folded={face === 'fold' ? foldedSlice(state, otherKernel(kernel)) : undefined}
       difference={face === 'difference'}
       position={positionText(image.grid, alongMm)}
+      oblique={cutText(state)}
       sliceIndex={shown.index}
       slices={stack.slices.length}
       letters={orientationLetters(image.grid)}
@@ -39,6 +41,13 @@ export function PlateLabels({ face, store }: { readonly face: PlateFace; readonl
       }
     />
   );
+}
+
+/** What stands in place of the slice's position on an oblique cut; undefined on slices. */
+export function cutText({ cut, note }: Pick<AppState, 'cut' | 'note'>): string | undefined {
+  const plane = note?.planes.find(({ id }) => id === cut?.planeId);
+  if (plane === undefined) return undefined;
+  return `${plane.label} · ${formatFixed(plane.angleDeg, 0)}° to the slices · resampled`;
 }
 
 function foldedSlice(state: AppState, kernel: Kernel): FoldedSlice | undefined {

@@ -15,6 +15,8 @@ export interface PlateLegendProps {
   readonly difference?: boolean;
   /** Position along the stack, with the letter of its axis where it is one of the patient's: 'z 10.0 mm'. */
   readonly position: string;
+  /** In place of position and slice: what an oblique cut is. */
+  readonly oblique?: string | undefined;
   /** From 0. */
   readonly sliceIndex: number;
   readonly slices: number;
@@ -66,7 +68,11 @@ export function PlateLegend(props: PlateLegendProps) {
         </div>
       )}
       <div class="corner bottom-left">
-        {props.position} · slice {props.sliceIndex + 1} of {props.slices}
+        {props.oblique === undefined ? (
+          `${props.position} · slice ${props.sliceIndex + 1} of ${props.slices}`
+        ) : (
+          <span class="oblique">{props.oblique}</span>
+        )}
       </div>
       {bar !== undefined && (
         <div class="corner bottom-right">

@@ -3,9 +3,11 @@ import { isOnPlate, regionsOn, takesMarks } from '../state/regionSelectors.js';
 import { shownSlice, transformOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import { shapeOnPlate } from '../tools/regionOnPlate.js';
+import { CourseMarks } from './CourseMarks.js';
 import { LineMarks } from './LineMarks.js';
 import { patientToPlate } from './plateTransform.js';
 import { RegionShape } from './RegionShape.js';
+import { StentMarks } from './StentMarks.js';
 
 export interface PlateOverlayProps {
   readonly kernel: Kernel;
@@ -49,6 +51,8 @@ export function PlateOverlay({ kernel, store }: PlateOverlayProps) {
           open
         />
       )}
+      <CourseMarks kernel={kernel} store={store} />
+      <StentMarks kernel={kernel} store={store} />
       <LineMarks kernel={kernel} store={store} />
       {at !== undefined && (
         <path

@@ -1,4 +1,5 @@
 import type { Kernel } from '../../core/note/index.js';
+import type { Stack, StackSlice } from '../../core/stack/index.js';
 import type { AppState } from '../state/appState.js';
 import { shownSlice, stackOf, transformOf } from '../state/selectors.js';
 import type { StoredSlice } from '../volumes/volume.js';
@@ -23,7 +24,7 @@ export function plateContent(
   if (shown === undefined) {
     return { kind: 'words', text: 'No slice here. This stack has none at this position.' };
   }
-  const gap = state.loading[kernel].gaps.get(shown.index);
+  const gap = state.cut === undefined ? state.loading[kernel].gaps.get(shown.index) : undefined;
   if (gap !== undefined) return { kind: 'words', text: `No data for this slice. ${gap}` };
   const values = stored(shown.index);
   if (values === undefined) return { kind: 'words', text: 'Reading this slice…' };
@@ -32,7 +33,7 @@ export function plateContent(
   return {
     kind: 'slice',
     content: {
-      id: `${shown.slice.image.sopInstanceUid}#${shown.slice.image.frame ?? ''}`,
+      id: contentId(stack, shown.slice),
       picture: {
         kind: 'greys',
         stored: values,
@@ -44,6 +45,13 @@ export function plateContent(
       devicePixelRatio,
     },
   };
+}
+
+/** Names the pixels: an image of a file by its UID and frame, an oblique cut by its stack and place. */
+function contentId({ key }: Stack, { image }: StackSlice): string {
+  const { sopInstanceUid, frame, grid } = image;
+  if (sopInstanceUid !== '') return `${sopInstanceUid}#${frame ?? ''}`;
+  return `${key} ${JSON.stringify([grid.positionMm, grid.rowDirection, grid.columnDirection])}`;
 }
 
 /** True when both would give the same picture. */

@@ -4,6 +4,7 @@ import type { AppState } from '../state/appState.js';
 import { kernelOfFace, type PlateFace } from '../state/compareSelectors.js';
 import { regionsOn } from '../state/regionSelectors.js';
 import { shownSlice, stackOf } from '../state/selectors.js';
+import { cutText } from './PlateLabels.js';
 
 const FACE_NAMES: Readonly<Record<PlateFace, string>> = {
   soft: 'Soft plate',
@@ -27,6 +28,8 @@ export function plateName(state: AppState, face: PlateFace): string {
     face === 'difference'
       ? `scale plus and minus ${state.compare.rangeHu} HU`
       : `window ${spokenWindow(window)}`;
+  const cut = cutText(state);
+  if (cut !== undefined) return `${name}, oblique cut, ${cut}, ${scale}`;
   return `${name}, slice ${shown.index + 1} of ${stack.slices.length}, ${mm} mm, ${scale}`;
 }
 

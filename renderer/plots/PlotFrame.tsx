@@ -14,6 +14,7 @@ const PLOTS: readonly { readonly id: PlotId; readonly name: string }[] = [
   { id: 'bands', name: 'Bands' },
   { id: 'noise', name: 'Noise' },
   { id: 'visible', name: 'Visible' },
+  { id: 'stent', name: 'Across' },
 ];
 
 /** The plot's place: its title, and tabs to choose what is plotted (ARIA tabs pattern). */

@@ -50,6 +50,8 @@ export function beginNote(kept: Note | undefined, setting: NoteSetting): Note {
     regions: kept.regions.map((region) => ({ ...region, soft: null, sharp: null })),
     contrasts: kept.contrasts.map((contrast) => ({ ...contrast, soft: null, sharp: null })),
     edges: kept.edges.map((edge) => ({ ...edge, soft: null, sharp: null })),
+    profiles: kept.profiles.map((profile) => ({ ...profile, soft: null, sharp: null })),
+    stents: kept.stents.map((stent) => ({ ...stent, fit: null })),
   };
 }
 

@@ -1,9 +1,8 @@
 import type { OpenFolder } from '../../app/host/contract.js';
 import { formatFixed } from '../../core/format/index.js';
 import { defaultWindow, LOWEST_IMAGE_HU } from '../../core/intensity/index.js';
-import type { EdgeValues, Kernel, PairOverride, RegionValues } from '../../core/note/index.js';
+import type { Kernel, PairOverride } from '../../core/note/index.js';
 import { checkSeal } from '../../core/note/life/index.js';
-import type { BandLine, Shape } from '../../core/region/index.js';
 import type { Result } from '../../core/result.js';
 import type { Stack } from '../../core/stack/index.js';
 import type { HostClient, KeptNote } from '../host/client.js';
@@ -15,9 +14,11 @@ import {
   samePlaces,
   swapPlates,
 } from '../state/changes/assessment.js';
+import { platesOnSlices, renewedCut } from '../state/changes/cut.js';
 import { showPair } from '../state/changes/view.js';
 import { NOTHING_LOADED, NOTHING_MARKED } from '../state/initialState.js';
 import type { Store } from '../state/store.js';
+import { type Cuts, createCuts } from '../volumes/cuts.js';
 import type { PairVolumes } from '../volumes/loadPair.js';
 import type { StoredSlice } from '../volumes/volume.js';
 import { areShown } from './areShown.js';
@@ -26,10 +27,11 @@ import { createAssessor } from './assessor.js';
 import { type Autosave, createAutosave } from './autosave.js';
 import { beginNote } from './beginNote.js';
 import { type Candidate, studyOf } from './choosePair.js';
+import { createFitting, type Fitting } from './fitting.js';
 import { createJobs } from './jobs.js';
 import { loadVolumes } from './loadVolumes.js';
 import { asOnPlates, isMasked, withMaskTurned } from './masking.js';
-import { createMeasuring } from './measuring.js';
+import { createMeasuring, type Measuring } from './measuring.js';
 import { createOpenFolder } from './openFolder.js';
 import { pageDigest } from './pageDigest.js';
 import { pairMessage } from './pairMessage.js';
@@ -47,7 +49,7 @@ export interface BenchOptions {
 }
 
 /** Opens folders and pairs, holds their pixels, measures on them, and keeps the note. */
-export interface Bench {
+export interface Bench extends Measuring {
   /** Opens a folder; with a character set, its texts are read in that one. */
   openFolder(folder: OpenFolder, characterSet?: string): Promise<void>;
   openDemonstration(): Promise<void>;
@@ -69,16 +71,16 @@ export interface Bench {
   assessAgain(): void;
   /** Gives up the long work that is running. */
   cancelJob(): void;
-  /** Stored values of a slice; undefined until it was read. */
+  /** Stored values of what a plate shows: a slice, or an oblique cut; undefined until it was read. */
+  shown(kernel: Kernel, index: number): StoredSlice | undefined;
+  /** Stored values of a slice of the pair; undefined until it was read. */
   stored(kernel: Kernel, index: number): StoredSlice | undefined;
   /** Asks for a slice that is not there, to look at it once. */
   askFor(kernel: Kernel, index: number): void;
-  /** What a shape measures on both stacks now. */
-  measure(shape: Shape): RegionValues;
-  /** What an edge line measures on both stacks now. */
-  measureEdge(line: BandLine): EdgeValues;
-  /** Measures all regions again, after slices have come or an undo. */
-  remeasure(): void;
+  /** Oblique planes cut from both stacks. */
+  readonly cuts: Cuts;
+  /** Stents fitted on both stacks. */
+  readonly fitting: Fitting;
   saveNow(): void;
   readonly autosave: Autosave;
 }
@@ -111,7 +113,14 @@ export function createBench(options: BenchOptions): Bench {
     autosave.save(after.note);
   });
 
-  const { measure, measureEdge, remeasure } = createMeasuring(store, () => volumes, now);
+  const cuts = createCuts(() => volumes);
+  const measuring = createMeasuring(store, () => volumes, cuts, now);
+  const fitting = createFitting({ store, volumes: () => volumes, cuts, now, signal });
+  const remeasure = (): void => {
+    store.change('Cut again', renewedCut(cuts));
+    measuring.remeasure();
+    fitting.refresh();
+  };
 
   const warn = (text: string): void =>
     store.change('Warn', (state) => ({ ...state, message: { tone: 'warning', text } }));
@@ -221,7 +230,8 @@ export function createBench(options: BenchOptions): Bench {
 
   /** Soft and sharp change places; the plates stay where they are. */
   const swap = async (chosenBy: 'measure' | 'reader'): Promise<void> => {
-    const { pair, plates, compare, assessment } = store.now();
+    const { pair, compare, assessment } = store.now();
+    const plates = platesOnSlices(store.now());
     if (pair?.sharp === undefined) return;
     const known = assessment.kind === 'done' ? swappedPair(assessment.measured) : undefined;
     const { soft, sharp, overrides } = pair;
@@ -233,7 +243,8 @@ export function createBench(options: BenchOptions): Bench {
 
   /** The pair is shown anew, because everything that was measured of it changes; the plates stay where they are. */
   const turnMask = async (): Promise<void> => {
-    const { pair, index, plates, compare } = store.now();
+    const { pair, index, compare } = store.now();
+    const plates = platesOnSlices(store.now());
     if (pair === undefined || index === undefined) return;
     const turned = withMaskTurned(pair, index.stacks);
     if (!turned.ok) return warn(turned.refusal.text);
@@ -277,10 +288,17 @@ export function createBench(options: BenchOptions): Bench {
       assessment.begin(pair, folder.grant, AbortSignal.any([reading.signal, signal]));
     },
     cancelJob: jobs.cancel,
+    shown: (kernel, index) => {
+      const { cut, note } = store.now();
+      if (cut === undefined) return volumes?.[kernel]?.slice(index);
+      const plane = note?.planes.find(({ id }) => id === cut.planeId);
+      return plane && cuts.stored(plane, kernel);
+    },
     stored: (kernel, index) => volumes?.[kernel]?.slice(index),
     askFor: (kernel, index) => volumes?.[kernel]?.ask(index),
-    measure,
-    measureEdge,
+    cuts,
+    fitting,
+    ...measuring,
     remeasure,
     saveNow: () => {
       const { note, save } = store.now();

@@ -16,9 +16,8 @@ import {
 import { type Result, refuse, success } from '../../core/result.js';
 import type { HostClient } from '../host/client.js';
 import type { Store } from '../state/store.js';
-import { drawKeyImage } from './keyImages.js';
+import { drawKeyImage, type KeyImageSource } from './keyImages.js';
 import { pageDigest } from './pageDigest.js';
-import type { SliceSource } from './whenStored.js';
 
 /** What the reader chose in the export dialog. */
 export interface ExportChoice {
@@ -38,7 +37,7 @@ export interface ExportFile {
 
 export interface ExportOptions {
   readonly store: Store;
-  readonly source: SliceSource;
+  readonly source: KeyImageSource;
   readonly client: Pick<HostClient, 'writePdf'>;
   readonly now: () => string;
   readonly onProgress: (text: string) => void;

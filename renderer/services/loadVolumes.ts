@@ -4,8 +4,9 @@ import type { Stack } from '../../core/stack/index.js';
 import type { HostClient } from '../host/client.js';
 import { nearestSlice } from '../link/slicePosition.js';
 import type { AppState, LoadingState, PairState } from '../state/appState.js';
+import { platesOnSlices } from '../state/changes/cut.js';
 import { NOTHING_LOADED } from '../state/initialState.js';
-import { shownSlice, stackOf } from '../state/selectors.js';
+import { shownSlice } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import { loadPair, type PairLoading, type PairVolumes } from '../volumes/loadPair.js';
 import { memoryBudgets } from '../volumes/memoryBudget.js';
@@ -81,8 +82,9 @@ function deviceMemoryGib(): number | undefined {
 }
 
 function shownIndex(state: AppState, kernel: Kernel): number {
-  const stack = stackOf(state, kernel);
-  return stack === undefined ? 0 : nearestSlice(stack.slices, state.plates[kernel].alongMm);
+  const stack = state.pair?.[kernel];
+  const { alongMm } = platesOnSlices(state)[kernel];
+  return stack === undefined ? 0 : nearestSlice(stack.slices, alongMm);
 }
 
 /** Gathers what was read and tells the store of it, at once where a shown slice is concerned. */
@@ -112,7 +114,8 @@ function createProgress({ store, onSlices, signal }: LoadVolumesOptions, volumes
     onSlices();
   };
   const tellOf = (kernel: Kernel, index: number): void => {
-    if (shownSlice(store.now(), kernel)?.index === index) tell();
+    const state = store.now();
+    if (state.cut === undefined && shownSlice(state, kernel)?.index === index) tell();
     else timer ??= setTimeout(tell, TELL_EVERY_MS);
   };
   tell();

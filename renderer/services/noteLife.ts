@@ -27,7 +27,7 @@ import { type Result, refuse, success } from '../../core/result.js';
 import type { Stack } from '../../core/stack/index.js';
 import type { HostClient } from '../host/client.js';
 import { noiseOfKernel } from '../state/noiseOfKernel.js';
-import { KERNELS, stackOf } from '../state/selectors.js';
+import { KERNELS } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import type { StoredSlice } from '../volumes/volume.js';
 import type { Bench } from './bench.js';
@@ -64,11 +64,13 @@ export function createNoteLife({ store, client, bench, now, signal }: NoteLifeOp
   /** Stored values of every slice that the note's regions lie on. */
   const readSlices = async (note: Note): Promise<ReadonlyMap<Stack, Slices>> => {
     const read = new Map<Stack, Slices>();
+    const { pair } = store.now();
+    if (pair === undefined) return read;
     for (const kernel of KERNELS) {
-      const stack = stackOf(store.now(), kernel);
+      const stack = pair[kernel];
       if (stack === undefined) continue;
       const slices = new Map<number, StoredSlice>();
-      for (const index of slicesNeeded(planOf(note), stack)) {
+      for (const index of slicesNeeded(planOf(note), stack, pair)) {
         const stored = await whenStored(store, bench, kernel, index, signal);
         if (stored !== undefined) slices.set(index, stored);
       }

@@ -14,10 +14,18 @@ import type { MeasuredPair } from '../pairing/measuredPair.js';
 import type { Proposal } from '../pairing/proposal.js';
 import type { PlatePoint } from '../plates/platePoint.js';
 
-export type ToolId = 'window' | 'move' | 'zoom' | 'ellipse' | 'outline' | LinePurpose;
+export type ToolId =
+  | 'window'
+  | 'move'
+  | 'zoom'
+  | 'ellipse'
+  | 'outline'
+  | 'stent'
+  | 'cut'
+  | LinePurpose;
 
 /** What a line is drawn for. */
-export type LinePurpose = 'edge';
+export type LinePurpose = 'edge' | 'profile';
 
 export type DialogId =
   | 'openFolder'
@@ -56,6 +64,21 @@ export type Assessment =
 /** The four ways to compare; all but 'open' take one plate over the width of both. */
 export type CompareWay = 'open' | 'fold' | 'alternate' | 'difference';
 
+/** An oblique plane on the plates: each stack is shown as its cut, a stack of one slice. */
+export interface ShownCut {
+  readonly planeId: string;
+  readonly soft: Stack;
+  readonly sharp: Stack | undefined;
+  /** The plates as they were on the slices. */
+  readonly before: { readonly [K in Kernel]: PlateState };
+}
+
+/** The first of two points on the course of a vessel; the second one makes the cut. */
+export interface CourseStart {
+  readonly kernel: Kernel;
+  readonly pointMm: Vec3;
+}
+
 /** How the plates are compared. */
 export interface CompareState {
   readonly way: CompareWay;
@@ -69,7 +92,7 @@ export interface CompareState {
   readonly rangeHu: number;
 }
 
-export type PlotId = 'histogram' | 'bands' | 'noise' | 'visible';
+export type PlotId = 'histogram' | 'bands' | 'noise' | 'visible' | 'stent';
 
 export interface PlateSize {
   readonly widthPx: number;
@@ -191,6 +214,11 @@ export interface AppState {
   readonly lineDraft: LineDraft | undefined;
   /** The end of the selected line that the arrow keys move; undefined for all of it. */
   readonly lineEnd: 'from' | 'to' | undefined;
+  /** The oblique plane on the plates; undefined while they show slices. */
+  readonly cut: ShownCut | undefined;
+  readonly courseStart: CourseStart | undefined;
+  /** What a fitted stent leaves over is drawn over the plates while it is selected. */
+  readonly residuals: boolean;
   readonly caret: Caret | undefined;
   readonly hover: Hover | undefined;
   readonly tool: ToolId;

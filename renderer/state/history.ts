@@ -60,11 +60,21 @@ export function redo(state: AppState): AppState {
   });
 }
 
-/** A selection whose region is gone selects nothing. */
-export function withSelection(state: AppState): AppState {
+/** A selection whose region is gone selects nothing, and an oblique plane that is gone shows the slices. */
+export function withSelection(given: AppState): AppState {
+  const state = withCutPresent(given);
   const { selected, note } = state;
   if (selected === undefined) return state;
   const present =
-    note !== undefined && [...note.regions, ...note.edges].some(({ id }) => id === selected);
+    note !== undefined &&
+    [...note.regions, ...note.edges, ...note.profiles, ...note.stents].some(
+      ({ id }) => id === selected,
+    );
   return present ? state : { ...state, selected: undefined };
+}
+
+function withCutPresent(state: AppState): AppState {
+  const { cut, note } = state;
+  if (cut === undefined || note?.planes.some(({ id }) => id === cut.planeId)) return state;
+  return { ...state, cut: undefined, plates: cut.before };
 }

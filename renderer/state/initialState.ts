@@ -18,6 +18,8 @@ export const NOTHING_MARKED = {
   openOutline: undefined,
   lineDraft: undefined,
   lineEnd: undefined,
+  cut: undefined,
+  courseStart: undefined,
   caret: undefined,
   hover: undefined,
 } as const satisfies Partial<AppState>;
@@ -36,6 +38,7 @@ export const INITIAL_STATE: AppState = {
   assessment: { kind: 'none' },
   compare: { way: 'open', foldAt: 0.5, resting: 'soft', held: false, rangeHu: 200 },
   noiseAreas: false,
+  residuals: false,
   plot: 'histogram',
   plates: { soft: plate, sharp: plate },
   active: 'soft',

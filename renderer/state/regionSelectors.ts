@@ -38,7 +38,17 @@ export function isOnPlate(state: AppState, kernel: Kernel, shape: Shape): boolea
 
 /** The regions that lie on the slice that a plate shows, in the order of making. */
 export function regionsOn(state: AppState, kernel: Kernel): readonly NoteRegion[] {
-  return shownRegions(state).filter(({ shape }) => isOnPlate(state, kernel, shape));
+  return shownRegions(state).filter(
+    (region) => isOnSurface(state, region) && isOnPlate(state, kernel, region.shape),
+  );
+}
+
+/** Whether something of the note lies on what the plates show: the slices, or one oblique plane. */
+export function isOnSurface(
+  { cut }: Pick<AppState, 'cut'>,
+  { plane }: { readonly plane?: string | undefined },
+): boolean {
+  return plane === cut?.planeId;
 }
 
 /** Whether the first reading is hidden, because the reader reads the regions again. */

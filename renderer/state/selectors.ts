@@ -16,9 +16,12 @@ export function linksOf({ links, compare }: AppState): AppState['links'] {
   return compare.way === 'open' ? links : { ...links, scroll: true, view: true };
 }
 
-/** The stack on a plate; undefined on an empty plate. */
-export function stackOf(state: AppState, kernel: Kernel): Stack | undefined {
-  return kernel === 'soft' ? state.pair?.soft : state.pair?.sharp;
+/** The stack on a plate: one of the pair, or its oblique cut; undefined on an empty plate. */
+export function stackOf(
+  { pair, cut }: Pick<AppState, 'pair' | 'cut'>,
+  kernel: Kernel,
+): Stack | undefined {
+  return (cut ?? pair)?.[kernel];
 }
 
 /** A slice of a stack with its index. */

@@ -1,12 +1,12 @@
 import { add, distance, type Vec3 } from '../../core/geometry/index.js';
 import type { Kernel } from '../../core/note/index.js';
 import { isSealed } from '../../core/note/life/index.js';
-import { BAND_MM, type BandLine } from '../../core/region/index.js';
+import type { BandLine } from '../../core/region/index.js';
 import type { AppState, LinePurpose } from '../state/appState.js';
-import { isLineOnPlate, selectedLine } from '../state/lineSelectors.js';
+import { isLineOnPlate, type MarkedLine, selectedLine } from '../state/lineSelectors.js';
 import { canMark } from './canMark.js';
 import { LEAST_LINE_MM, movedLine } from './lineOnPlate.js';
-import { bandOf, placeLine } from './lineTool.js';
+import { BANDS_MM, bandOf, placeLine } from './lineTool.js';
 import type { ToolPort } from './tool.js';
 
 /** What a key press asks of the line that is drawn or selected. */
@@ -39,7 +39,7 @@ export function lineKey(port: ToolPort, kernel: Kernel, key: LineKey): boolean {
 
 /** Whether a tool draws lines, and for what. */
 export function isLineTool(tool: AppState['tool']): tool is LinePurpose {
-  return tool === 'edge';
+  return tool === 'edge' || tool === 'profile';
 }
 
 function begin(port: ToolPort, kernel: Kernel, purpose: LinePurpose, atMm: Vec3): void {
@@ -54,7 +54,7 @@ function begin(port: ToolPort, kernel: Kernel, purpose: LinePurpose, atMm: Vec3)
       lineId: undefined,
       fromMm: atMm,
       toMm: atMm,
-      bandMm: bandOf(state),
+      bandMm: bandOf(state, purpose),
     },
     message: {
       tone: 'plain',
@@ -75,7 +75,10 @@ function drawKey(port: ToolPort, key: LineKey): boolean {
     if (state.lineDraft === undefined) return state;
     if (key.kind === 'back') return { ...state, lineDraft: undefined };
     if (key.kind === 'widen')
-      return { ...state, lineDraft: { ...draft, bandMm: widened(draft, key.steps) } };
+      return {
+        ...state,
+        lineDraft: { ...draft, bandMm: widened(draft, key.steps, draft.purpose) },
+      };
     const toMm = add(draft.toMm, key.by);
     return {
       ...state,
@@ -102,10 +105,10 @@ function changeKey(
     }));
     return true;
   }
-  const next: BandLine =
+  const next: MarkedLine =
     key.kind === 'widen'
-      ? { ...line, bandMm: widened(line, key.steps) }
-      : movedLine(line, lineEnd ?? 'body', key.by);
+      ? { ...line, bandMm: widened(line, key.steps, line.purpose) }
+      : { ...line, ...movedLine(line, lineEnd ?? 'body', key.by) };
   if (distance(next.fromMm, next.toMm) < LEAST_LINE_MM) return true;
   port.reshapeLine(line.purpose, line.id, next, `${key.kind}:${line.id}:${lineEnd ?? ''}`);
   return true;
@@ -118,6 +121,11 @@ const HELD = {
 } as const;
 
 /** A band one step wider or narrower, within what can be measured. */
-export function widened({ bandMm }: Pick<BandLine, 'bandMm'>, steps: number): number {
-  return Math.min(BAND_MM.most, Math.max(BAND_MM.least, bandMm + steps * BAND_STEP_MM));
+export function widened(
+  { bandMm }: Pick<BandLine, 'bandMm'>,
+  steps: number,
+  purpose: LinePurpose,
+): number {
+  const { least, most } = BANDS_MM[purpose];
+  return Math.min(most, Math.max(least, bandMm + steps * BAND_STEP_MM));
 }

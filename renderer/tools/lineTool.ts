@@ -1,4 +1,5 @@
 import { distance, subtract } from '../../core/geometry/index.js';
+import { PROFILE_BAND_MM } from '../../core/note/index.js';
 import { BAND_MM, type BandLine } from '../../core/region/index.js';
 import { plateToPatient } from '../plates/plateTransform.js';
 import type { AppState, LinePurpose } from '../state/appState.js';
@@ -25,7 +26,7 @@ export function lineTool(purpose: LinePurpose): Tool {
         return {
           fromMm,
           toMm: shift ? straightened(fromMm, toMm, transform) : toMm,
-          bandMm: bandOf(before),
+          bandMm: bandOf(before, purpose),
         };
       };
       return {
@@ -43,13 +44,18 @@ export function lineTool(purpose: LinePurpose): Tool {
   };
 }
 
+const HOW_TO_DRAW: Readonly<Record<LinePurpose, string>> = {
+  edge: 'Draw it across the edge, and well beyond it on both sides.',
+  profile: 'Draw it across the vessel, from outside to outside.',
+};
+
 /** Puts a line into the note; one that is too short to be meant is told and dropped. */
 export function placeLine(port: ToolPort, purpose: LinePurpose, line: BandLine): void {
   if (distance(line.fromMm, line.toMm) >= LEAST_LINE_MM) {
     port.placeLine(purpose, line);
     return;
   }
-  const text = `The line is shorter than ${LEAST_LINE_MM} mm. Draw it across the edge, and well beyond it on both sides.`;
+  const text = `The line is shorter than ${LEAST_LINE_MM} mm. ${HOW_TO_DRAW[purpose]}`;
   port.change('Line too short', (state) => ({
     ...state,
     lineDraft: undefined,
@@ -57,9 +63,15 @@ export function placeLine(port: ToolPort, purpose: LinePurpose, line: BandLine):
   }));
 }
 
-/** The band of a new line: that of the line drawn last, so that a width once chosen stays. */
-export function bandOf({ note }: Pick<AppState, 'note'>): number {
-  return note?.edges.at(-1)?.bandMm ?? BAND_MM.usual;
+/** Widths of bands by the purpose of the line, mm. */
+export const BANDS_MM: Readonly<
+  Record<LinePurpose, { readonly least: number; readonly most: number; readonly usual: number }>
+> = { edge: BAND_MM, profile: PROFILE_BAND_MM };
+
+/** The band of a new line: that of the last one drawn for this, so that a width once chosen stays. */
+export function bandOf({ note }: Pick<AppState, 'note'>, purpose: LinePurpose): number {
+  const drawn = purpose === 'edge' ? note?.edges : note?.profiles;
+  return drawn?.at(-1)?.bandMm ?? BANDS_MM[purpose].usual;
 }
 
 export interface LineHit {
@@ -101,8 +113,9 @@ export function lineHandleTool({ line, part }: LineHit): Tool {
       const transform = transformOf(before, kernel);
       if (transform === undefined) return undefined;
       const from = plateToPatient(transform, start.point);
-      const lineTo = ({ point, shift }: ToolPointer): BandLine => {
-        const moved = movedLine(line, part, subtract(plateToPatient(transform, point), from));
+      const lineTo = ({ point, shift }: ToolPointer): MarkedLine => {
+        const by = subtract(plateToPatient(transform, point), from);
+        const moved = { ...line, ...movedLine(line, part, by) };
         if (!shift || part === 'body') return moved;
         return part === 'to'
           ? { ...moved, toMm: straightened(moved.fromMm, moved.toMm, transform) }
@@ -115,12 +128,7 @@ export function lineHandleTool({ line, part }: LineHit): Tool {
             active: kernel,
             selected: line.id,
             lineEnd: undefined,
-            lineDraft: {
-              kernel,
-              purpose: line.purpose,
-              lineId: line.id,
-              ...lineTo(pointer),
-            },
+            lineDraft: { kernel, lineId: line.id, ...lineTo(pointer) },
           })),
         complete: (pointer) => {
           const moved = lineTo(pointer);

@@ -13,9 +13,12 @@ import { scrollTo } from '../state/changes/view.js';
 import { isOnPlate, selectedRegion } from '../state/regionSelectors.js';
 import { plateGrid, stackOf } from '../state/selectors.js';
 import { canMark } from './canMark.js';
+import { setCoursePoint } from './cutTool.js';
 import { ellipseOn } from './drawnEllipse.js';
 import { type LineKey, lineKey } from './lineKeys.js';
 import { closeOutline, removePoint, setPoint } from './outlineTool.js';
+import { moveSelectedStent } from './stentKeys.js';
+import { fitStentAt } from './stentTool.js';
 import type { ToolPort } from './tool.js';
 
 /** Radius of an ellipse that is placed by key, mm; plus and minus change it. */
@@ -54,6 +57,7 @@ export function plateKey(
   if (arrow !== undefined) {
     const by = arrowMm(arrow, shift, grid);
     changeShape(port, kernel, 'move', (shape) => moveShape(shape, by)) ||
+      moveSelectedStent(port, kernel, by) ||
       moveCaret(port, kernel, by);
     return true;
   }
@@ -100,7 +104,11 @@ function arrowMm(arrow: readonly [number, number], shift: boolean, grid: SliceGr
 
 /** Gives up, one thing at a time, what Esc gives up when no pointer is down. True when there was something. */
 export function giveUp(port: ToolPort): boolean {
-  const { openOutline, draft, lineDraft, lineEnd, selected, caret } = port.now();
+  const { openOutline, draft, lineDraft, lineEnd, selected, caret, courseStart } = port.now();
+  if (courseStart !== undefined) {
+    port.change('Give the course up', (state) => ({ ...state, courseStart: undefined }));
+    return true;
+  }
   if (lineDraft !== undefined || lineEnd !== undefined) {
     port.change('Give up', (state) => ({ ...state, lineDraft: undefined, lineEnd: undefined }));
     return true;
@@ -171,6 +179,14 @@ function enter(port: ToolPort, kernel: Kernel, grid: SliceGrid): boolean {
         regionId: undefined,
       },
     }));
+    return true;
+  }
+  if (state.tool === 'cut') {
+    setCoursePoint(port, kernel, pointMm);
+    return true;
+  }
+  if (state.tool === 'stent' && state.selected === undefined) {
+    fitStentAt(port, kernel, pointMm);
     return true;
   }
   if (state.tool !== 'outline') return false;

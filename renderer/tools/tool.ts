@@ -1,8 +1,20 @@
+import type { Vec3 } from '../../core/geometry/index.js';
 import type { Kernel } from '../../core/note/index.js';
 import type { BandLine, Role, Shape } from '../../core/region/index.js';
 import type { PlatePoint } from '../plates/platePoint.js';
 import type { AppState, LinePurpose } from '../state/appState.js';
 import type { Change } from '../state/store.js';
+
+/** A line with what its purpose needs beside: a profile has a nominal inner diameter. */
+export interface PurposedLine extends BandLine {
+  readonly nominalMm?: number | undefined;
+}
+
+/** The finding that a stent belongs to, with its nominal inner diameter. */
+export interface StentBelonging {
+  readonly findingId: string;
+  readonly nominalMm: number | null;
+}
 
 /** Where the pointer is and what is held with it. */
 export interface ToolPointer {
@@ -23,7 +35,13 @@ export interface ToolPort {
   /** Measures a finished line on both stacks and puts it into the note. */
   placeLine(purpose: LinePurpose, line: BandLine): void;
   /** Measures a line at its new place and puts it into the note; keys as for regions. */
-  reshapeLine(purpose: LinePurpose, id: string, line: BandLine, key?: string): void;
+  reshapeLine(purpose: LinePurpose, id: string, line: PurposedLine, key?: string): void;
+  /** Finds the middle of the vessel next to a point, puts a stent there into the note, and has it fitted. */
+  placeStent(pointMm: Vec3, of?: StentBelonging): void;
+  /** Has a stent fitted from another place. */
+  moveStent(id: string, centreMm: Vec3, key?: string): void;
+  /** Puts the oblique plane across the line between two points into the note, and shows it. */
+  placePlane(courseMm: readonly [Vec3, Vec3]): void;
 }
 
 /**

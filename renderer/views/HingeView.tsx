@@ -3,15 +3,20 @@ import { useEngine } from '../engine.js';
 import { positionIn } from '../link/slicePosition.js';
 import { Hinge } from '../panels/Hinge.js';
 import type { PairedReadoutProps } from '../panels/PairedReadout.js';
+import { ProfileReadout } from '../panels/ProfileReadout.js';
+import { StentReadout } from '../panels/StentReadout.js';
 import type { RulerMark, TwinRulerProps } from '../panels/TwinRuler.js';
 import type { Bench } from '../services/bench.js';
 import type { AppState } from '../state/appState.js';
 import { goToRegion } from '../state/changes/goToRegion.js';
 import { selectRegion } from '../state/changes/regions.js';
 import { scrollTo } from '../state/changes/view.js';
+import { selectedProfile } from '../state/lineSelectors.js';
 import { selectedRegion, shownRegions, sliceOf } from '../state/regionSelectors.js';
 import { linksOf } from '../state/selectors.js';
+import { selectedStent } from '../state/stentSelectors.js';
 import type { Change, Store } from '../state/store.js';
+import { PlaneTabsView } from './PlaneTabsView.js';
 import { useSelected } from './useSelected.js';
 import { verdictOf } from './verdict.js';
 
@@ -23,10 +28,13 @@ export function HingeView() {
   const note = useSelected((state) => state.note);
   const selected = useSelected((state) => state.selected);
   const draft = useSelected((state) => state.draft);
+  const stent = useSelected(selectedStent);
+  const profile = useSelected(selectedProfile);
+  const cut = useSelected((state) => state.cut);
   const place = useSelected(rulerPosition);
   // Values of a draft can come with its slice, so the reading of slices is followed too.
   useSelected((state) => state.loading);
-  const state = { pair, note, selected, draft };
+  const state = { pair, note, selected, draft, cut };
   return (
     <Hinge
       verdict={verdictOf(pair, assessment, {
@@ -34,30 +42,40 @@ export function HingeView() {
         onCancel: bench.cancelAssessment,
         onMeasure: bench.assessAgain,
       })}
-      ruler={rulerOf(store, state, place)}
+      ruler={rulerOf(store, bench.cuts, state, place)}
+      planes={<PlaneTabsView />}
+      across={
+        stent !== undefined ? (
+          <StentReadout stent={stent} />
+        ) : profile !== undefined ? (
+          <ProfileReadout profile={profile} />
+        ) : undefined
+      }
       readout={{ region: readoutOf(state, bench), unit: pair?.soft.unit ?? 'HU' }}
     />
   );
 }
 
-type HingeState = Pick<AppState, 'pair' | 'note' | 'selected' | 'draft'>;
+type HingeState = Pick<AppState, 'pair' | 'note' | 'selected' | 'draft' | 'cut'>;
 
 function rulerOf(
   store: Store,
-  { pair, note, selected }: HingeState,
+  cuts: Bench['cuts'],
+  { pair, note, selected, cut }: HingeState,
   positionMm: number | undefined,
 ): TwinRulerProps | undefined {
-  if (pair === undefined || positionMm === undefined) return undefined;
+  // The ruler counts slices: an oblique cut lies on many of them.
+  if (pair === undefined || positionMm === undefined || cut !== undefined) return undefined;
   const { soft, sharp } = pair;
   return {
     softMm: positionsOf(soft),
     sharpMm: sharp === undefined || pair.link === 'index' ? undefined : positionsOf(sharp, soft),
     positionMm,
-    marks: shownRegions({ note }).flatMap((region) => markOf(region, pair, selected)),
+    marks: onSlices(shownRegions({ note })).flatMap((region) => markOf(region, pair, selected)),
     onMove: (alongMm) => store.change('Scroll', scrollOnRuler(alongMm)),
     onMark: (id) => {
       store.change('Select region', selectRegion(id));
-      store.change('Go to region', goToRegion);
+      store.change('Go to region', goToRegion(cuts));
     },
   };
 }
@@ -103,6 +121,10 @@ function positionsOf(
   return list;
 }
 
+function onSlices(regions: readonly NoteRegion[]): readonly NoteRegion[] {
+  return regions.filter(({ plane }) => plane === undefined);
+}
+
 function markOf(
   { id, label, role, shape }: NoteRegion,
   { soft }: NonNullable<AppState['pair']>,
@@ -115,12 +137,12 @@ function markOf(
 }
 
 function readoutOf(
-  { note, selected, draft }: HingeState,
+  { note, selected, draft, cut }: HingeState,
   bench: Pick<Bench, 'measure'>,
 ): PairedReadoutProps['region'] {
   const region = selectedRegion({ note, selected });
   if (draft === undefined) return region;
-  const values = bench.measure(draft.shape);
+  const values = bench.measure(draft.shape, cut?.planeId);
   if (region !== undefined && draft.regionId === region.id) return { ...region, ...values };
   return { label: `New ${draft.role}`, place: '', role: draft.role, ...values };
 }

@@ -21,7 +21,7 @@ import { useSelected } from './useSelected.js';
 
 /** Noise and sharpness of both kernels: spectra and numbers over all areas, one area, or one edge line. */
 export function NoiseView() {
-  const { store, run, port } = useEngine();
+  const { store, bench, run, port } = useEngine();
   const pair = useSelected((state) => state.pair);
   const note = useSelected((state) => state.note);
   const assessment = useSelected((state) => state.assessment);
@@ -42,7 +42,7 @@ export function NoiseView() {
     const chosen = areas.find(({ number }) => shown === `area ${number}`);
     const edgeId = note.edges.find(({ id }) => id === shown)?.id;
     store.change('Show edge or areas', selectRegion(edgeId));
-    if (edgeId !== undefined) store.change('Go to edge', goToRegion);
+    if (edgeId !== undefined) store.change('Go to edge', goToRegion(bench.cuts));
     store.change('Go to area', goToArea(chosen));
   };
   const { soft, sharp } = textures;
@@ -121,7 +121,7 @@ function EdgeView({ edge }: { readonly edge: NoteEdge }) {
 
 function profileOn(
   state: AppState,
-  bench: Pick<Bench, 'stored'>,
+  bench: Pick<Bench, 'shown'>,
   kernel: Kernel,
   line: BandLine,
 ): LineEdge | undefined {
@@ -130,7 +130,7 @@ function profileOn(
   const found = findLineSlice(line, stack);
   if (!found.ok) return undefined;
   const slice = stack.slices[found.value.sliceIndex];
-  const stored = bench.stored(kernel, found.value.sliceIndex);
+  const stored = bench.shown(kernel, found.value.sliceIndex);
   if (slice === undefined || stored === undefined) return undefined;
   const profile = edgeProfile(line, slice, stored);
   return profile.ok ? profile.value : undefined;

@@ -6,10 +6,13 @@ import { Histogram } from '../plots/Histogram.js';
 import { PlotFrame } from '../plots/PlotFrame.js';
 import type { Bench } from '../services/bench.js';
 import type { AppState } from '../state/appState.js';
+import { selectedProfile } from '../state/lineSelectors.js';
 import { selectedRegion, sliceOf, takesMarks } from '../state/regionSelectors.js';
 import { stackOf } from '../state/selectors.js';
+import { selectedStent } from '../state/stentSelectors.js';
 import { BandsView } from './BandsView.js';
 import { NoiseView } from './NoiseView.js';
+import { StentView } from './StentView.js';
 import { useSelected } from './useSelected.js';
 import { VisibleView } from './VisibleView.js';
 
@@ -20,9 +23,12 @@ export function PlotView() {
   const { store } = useEngine();
   const plot = useSelected((state) => state.plot);
   const label = useSelected((state) => selectedRegion(state)?.label);
+  const across = useSelected(
+    (state) => selectedProfile(state)?.label ?? selectedStent(state)?.label,
+  );
   return (
     <PlotFrame
-      title={titleOf(plot, label)}
+      title={titleOf(plot, label, across)}
       plot={plot}
       onPlot={(id) => store.change('Choose plot', (state) => ({ ...state, plot: id }))}
     >
@@ -30,11 +36,16 @@ export function PlotView() {
       {plot === 'bands' && <BandsView />}
       {plot === 'noise' && <NoiseView />}
       {plot === 'visible' && <VisibleView />}
+      {plot === 'stent' && <StentView />}
     </PlotFrame>
   );
 }
 
-function titleOf(plot: AppState['plot'], label: string | undefined): string {
+function titleOf(
+  plot: AppState['plot'],
+  label: string | undefined,
+  across: string | undefined,
+): string {
   switch (plot) {
     case 'histogram':
       return label ?? 'Histogram';
@@ -44,6 +55,8 @@ function titleOf(plot: AppState['plot'], label: string | undefined): string {
       return 'Noise and sharpness';
     case 'visible':
       return 'What could be seen';
+    case 'stent':
+      return across ?? 'Across the vessel';
   }
 }
 
@@ -77,7 +90,7 @@ function HistogramView() {
 /** HU of the pixels in a shape on one stack; none where they can't be had. */
 function valuesOn(
   state: AppState,
-  bench: Pick<Bench, 'stored'>,
+  bench: Pick<Bench, 'shown'>,
   kernel: Kernel,
   shape: Shape | undefined,
 ): Float64Array {
@@ -85,7 +98,7 @@ function valuesOn(
   if (shape === undefined || stack === undefined || stack.unit !== 'HU') return NONE;
   const index = takesMarks(state, kernel) ? sliceOf(shape, stack) : undefined;
   const slice = index === undefined ? undefined : stack.slices[index];
-  const stored = index === undefined ? undefined : bench.stored(kernel, index);
+  const stored = index === undefined ? undefined : bench.shown(kernel, index);
   if (slice === undefined || stored === undefined) return NONE;
   return regionValues(shape, slice, stored).values;
 }

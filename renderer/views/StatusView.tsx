@@ -70,7 +70,7 @@ function placeOn(
 
 function cursorOf(
   state: AppState,
-  bench: Pick<Bench, 'stored'>,
+  bench: Pick<Bench, 'shown'>,
   place: Caret | undefined,
 ): StatusLineProps['cursor'] {
   if (place === undefined || state.pair === undefined) return undefined;
@@ -89,7 +89,7 @@ function cursorOf(
 /** The value of the pixel at a place of the shown slice; null on padding, outside, and before it was read. */
 function valueAt(
   state: AppState,
-  bench: Pick<Bench, 'stored'>,
+  bench: Pick<Bench, 'shown'>,
   kernel: Kernel,
   pointMm: Vec3,
 ): number | null {
@@ -99,6 +99,6 @@ function valueAt(
   const pixel = patientToPixel(grid, pointMm);
   const [column, row] = [Math.round(pixel.column), Math.round(pixel.row)];
   if (column < 0 || row < 0 || column >= grid.columns || row >= grid.rows) return null;
-  const value = bench.stored(kernel, shown.index)?.[row * grid.columns + column];
+  const value = bench.shown(kernel, shown.index)?.[row * grid.columns + column];
   return value === undefined || isPadding(value, pixels) ? null : rescaled(value, pixels);
 }

@@ -7,7 +7,9 @@ import {
   removeContrast,
   setFinding,
   setNoise,
+  stentAtRegion,
 } from '../../core/note/index.js';
+import { shapeCentre } from '../../core/region/index.js';
 import type { Result } from '../../core/result.js';
 import type { Engine } from '../engine.js';
 import type { LedgerActions } from '../panels/ledgerActions.js';
@@ -16,7 +18,7 @@ import { removeSelected, selectRegion } from '../state/changes/regions.js';
 import { editNote, withSelection } from '../state/history.js';
 
 /** The ledger's actions as named changes of the note, each of which can be undone. */
-export function createLedgerActions({ store, run, now }: Engine): LedgerActions {
+export function createLedgerActions({ store, bench, port, run, now }: Engine): LedgerActions {
   const warn = (text: string): void =>
     store.change('Warn', (state) => ({ ...state, message: { tone: 'warning', text } }));
 
@@ -54,7 +56,7 @@ export function createLedgerActions({ store, run, now }: Engine): LedgerActions 
   return {
     onSelect: (id) => {
       store.change('Select region', selectRegion(id));
-      store.change('Go to region', goToRegion);
+      store.change('Go to region', goToRegion(bench.cuts));
     },
     onDelete: (id) => {
       store.change('Select region', selectRegion(id));
@@ -85,6 +87,21 @@ export function createLedgerActions({ store, run, now }: Engine): LedgerActions 
       edit('Change finding', (note) => setFinding(note, id, fields, now()));
     },
     onClearFinding: (id) => plain('Clear finding', (note) => clearFinding(note, id, now())),
+    onFittedStent: (id) => {
+      const { note } = store.now();
+      const region = note?.regions.find((one) => one.id === id);
+      if (note === undefined || region === undefined) return;
+      const stent = stentAtRegion(note, region);
+      if (stent === undefined) {
+        const finding = note.findings.find((one) => one.id === region.findingId);
+        const of = finding && { findingId: finding.id, nominalMm: finding.nominalMm };
+        port.placeStent(shapeCentre(region.shape), of);
+        return;
+      }
+      store.change('Select stent', selectRegion(stent.id));
+      store.change('Go to stent', goToRegion(bench.cuts));
+      store.change('Choose plot', (state) => ({ ...state, plot: 'stent' }));
+    },
     onNoise: (noise) =>
       contrast('Change noise', (note) => ({ ok: true, value: setNoise(note, noise, now()) })),
     onNewContrast: () => run('contrast.new'),

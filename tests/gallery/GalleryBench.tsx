@@ -169,6 +169,7 @@ export function GalleryBench({ state }: { readonly state: string }) {
           onFinding={nothing}
           onClearFinding={nothing}
           onNoise={nothing}
+          onFittedStent={nothing}
           onNewContrast={nothing}
           onContrast={nothing}
           onDeleteContrast={nothing}

@@ -47,7 +47,12 @@ const region = (draft: Draft): NoteRegion => ({
 
 const flagged = (base: RegionValue): RegionValue => ({ ...base, flags: [edge] });
 
-export const note: Pick<Note, 'findings' | 'regions' | 'contrasts' | 'noise'> = {
+export const note: Pick<
+  Note,
+  'findings' | 'regions' | 'contrasts' | 'noise' | 'stents' | 'profiles'
+> = {
+  stents: [],
+  profiles: [],
   noise: 'reference',
   findings: [
     {

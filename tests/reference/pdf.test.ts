@@ -9,6 +9,7 @@ import { encodePng, makeRaster } from '../../core/raster/index.js';
 import { measurementTable } from '../../core/report/index.js';
 import { pdfDocument } from '../../core/report/pdf/index.js';
 import { richNote } from '../unit/core/note/richNote.js';
+import { linesNote } from '../unit/core/report/linesNote.js';
 
 // Poppler's tools read what was written: text by pdftotext, pages and fonts by pdfinfo and pdffonts, ink by pdftoppm.
 const HAS_POPPLER = ['pdftotext', 'pdfinfo', 'pdffonts', 'pdftoppm'].every((name) =>
@@ -99,6 +100,30 @@ describe.skipIf(!HAS_POPPLER)('The PDF of a note, read by Poppler', () => {
     const text = flat(tool('pdftotext', await written({ ...note, study }, 'letters'), '-'));
     expect(text).toContain('C-1 <b>[U+5C71]</b> {text:1}');
     expect(text).toContain('Ölaf');
+  });
+
+  it('has edge lines, profiles, fitted stents and cuts, with places, definition and caution', async () => {
+    const text = flat(tool('pdftotext', '-layout', await written(linesNote(), 'lines'), '-'));
+    // Lines of the text: quantity, unit, soft, sharp; of a fit one number for both kernels.
+    expect(text).toMatch(/edge rise mm 1\.68/);
+    expect(text).toMatch(/visible width mm 2\.06 2\.46/);
+    expect(text).toMatch(/artificial narrowing % 31 18/);
+    expect(text).toMatch(/strut diameter mm 3\.11/);
+    expect(text).toMatch(/fitted lumen HU 345/);
+    expect(text).toMatch(/plain region HU 536 419/);
+    const words = flat(tool('pdftotext', join(folder, 'lines.pdf'), '-'));
+    for (const said of [
+      'E1: Edge 1',
+      'X1: Profile 1 · nominal 3 mm · from (-8.50, -15.25, 2.00) to (-4.50, -15.25, 2.00) mm, band 1.0 mm',
+      'narrowing = 1 - visible width / nominal inner diameter',
+      'S1: Stent 1 · 7 mLAD · stent · nominal 3 mm · fitted from (-6.50, -15.25, 2.00) mm',
+      'No fitted stent: What is left over is not round: no value.',
+      'on Cut 1 (oblique, resampled by cubic convolution, mean over 1.5 mm)',
+      'Oblique plane at right angles to the course from (-7.50, -15.25, 0.50)',
+      '45.0° to the slices of the soft stack.',
+      'Fitted stent values were tried on synthetic phantoms only',
+    ])
+      expect(words).toContain(said);
   });
 
   it('of an empty note says that nothing was measured', async () => {

@@ -11,10 +11,11 @@ import {
   renamedLookup,
   toStructuredReport,
 } from '../../core/report/index.js';
-import { printedAs } from '../../core/report/regionQuantities.js';
+import { printedAs } from '../../core/report/printedAs.js';
 import { pythonHas, pythonJson } from '../support/python.js';
 import { pair, SHARP_SERIES } from '../unit/core/note/noteFixture.js';
 import { richNote } from '../unit/core/note/richNote.js';
+import { linesNote } from '../unit/core/report/linesNote.js';
 import { digest, tellingNote } from '../unit/core/report/sr/tellingNote.js';
 
 const NOW = '2026-01-08T10:30:00.000+01:00';
@@ -25,6 +26,27 @@ const has = (tool: string): boolean => spawnSync(tool, ['--version']).error === 
 const hasDciodvfy = has('dciodvfy');
 const hasDsrdump = has('dsrdump');
 const hasPydicom = pythonHas('pydicom');
+
+/** A note with a profile across a lumen on the soft kernel, and one across a stent with an unended flank on the sharp one. */
+function lumenProfile(): Note {
+  const note = linesNote();
+  const [profile] = note.profiles;
+  if (!profile?.soft || !profile.sharp) throw new Error('no profile');
+  const { soft, sharp } = profile;
+  const noStruts = { kind: 'lumen', struts: [], peakDistanceMm: null, strutWidthMm: null } as const;
+  return {
+    ...note,
+    edges: [],
+    stents: [],
+    profiles: [
+      {
+        ...profile,
+        soft: { ...soft, ...noStruts, narrowing: null },
+        sharp: { ...sharp, strutWidthMm: null },
+      },
+    ],
+  };
+}
 
 /** Notes of every kind that a document is made of, under the names of their files. */
 async function documents(): Promise<Readonly<Record<string, { note: Note; bytes: Uint8Array }>>> {
@@ -88,6 +110,8 @@ async function documents(): Promise<Readonly<Record<string, { note: Note; bytes:
     'values missing': make(missing, images),
     'two studies': make(overridden, twoStudies),
     'two studies without the images': make(overridden),
+    'lines, stents and cuts': make(linesNote(), images),
+    'a lumen without struts': make(lumenProfile(), images),
     empty: make(empty),
   };
 }
@@ -101,6 +125,8 @@ const NAMES = [
   'values missing',
   'two studies',
   'two studies without the images',
+  'lines, stents and cuts',
+  'a lumen without struts',
   'empty',
 ] as const;
 
@@ -206,12 +232,52 @@ const CODES: Readonly<Record<string, readonly [string, string]>> = {
   'standard error': ['99DIPTYCH STDERR', ''],
   placement: ['99DIPTYCH PLACEMENT', ''],
   CNR: ['99DIPTYCH CNR', ''],
+  'edge rise': ['99DIPTYCH EDGERISE', ''],
+  'edge rise standard error': ['99DIPTYCH EDGERISESE', ''],
+  'edge crossings': ['99DIPTYCH EDGECROSS', ''],
+  'blur FWHM': ['99DIPTYCH BLURFWHM', ''],
+  'edge step': ['99DIPTYCH EDGESTEP', ''],
+  'edge pixels': ['99DIPTYCH EDGEN', ''],
+  'visible width': ['99DIPTYCH VISIBLEWIDTH', ''],
+  'strut peak distance': ['99DIPTYCH STRUTPEAKS', ''],
+  'strut width': ['99DIPTYCH STRUTWIDTH', ''],
+  'inner edge rise': ['99DIPTYCH INNERRISE', ''],
+  'lumen level': ['99DIPTYCH LUMENLEVEL', ''],
+  'artificial narrowing': ['99DIPTYCH NARROWING', ''],
+  'strut diameter': ['99DIPTYCH STENTDIAM', ''],
+  'strut diameter standard error': ['99DIPTYCH STENTDIAMSE', ''],
+  'strut diameter standard error by refits': ['99DIPTYCH STENTDIAMRE', ''],
+  'fitted lumen': ['99DIPTYCH STENTLUMEN', ''],
+  'fitted lumen standard error': ['99DIPTYCH STENTLUMENSE', ''],
+  'fitted lumen standard error by refits': ['99DIPTYCH STENTLUMENRE', ''],
+  'wall width': ['99DIPTYCH WALLWIDTH', ''],
+  'wall width standard error': ['99DIPTYCH WALLWIDTHSE', ''],
+  'fitted wall': ['99DIPTYCH WALLHU', ''],
+  'fitted wall standard error': ['99DIPTYCH WALLHUSE', ''],
+  'strut line mass': ['99DIPTYCH STRUTMASS', ''],
+  'strut line mass standard error': ['99DIPTYCH STRUTMASSSE', ''],
+  'shared blur': ['99DIPTYCH SHAREDBLUR', ''],
+  'shared blur standard error': ['99DIPTYCH SHAREDBLURSE', ''],
+  'chi square': ['99DIPTYCH CHISQUARE', ''],
+  'degrees of freedom': ['99DIPTYCH DF', ''],
+  tilt: ['99DIPTYCH TILT', ''],
+  'fitted slices': ['99DIPTYCH FITSLICES', ''],
+  'plain region': ['99DIPTYCH PLAINREGION', ''],
+  'plain region radius': ['99DIPTYCH PLAINRADIUS', ''],
+  'noise around the stent': ['99DIPTYCH STENTNOISE', ''],
 };
+/** Numbers without a unit that are no ratios. */
+const WITHOUT_UNIT: readonly string[] = ['chi square', 'degrees of freedom'];
 /** UCUM. */
 const UNITS: Readonly<Record<string, string>> = {
   HU: "[hnsf'U]",
   'mm²': 'mm2',
   px: '{pixels}',
+  mm: 'mm',
+  '%': '%',
+  '°': 'deg',
+  HU·mm: "[hnsf'U].mm",
+  slices: '{slices}',
   '': '{ratio}',
 };
 
@@ -224,7 +290,7 @@ describe.skipIf(!hasDsrdump)('dsrdump (skipped without dcmtk)', () => {
           code: CODES[quantity]?.[0],
           derivation: CODES[quantity]?.[1],
           printed: value === null ? '' : printed,
-          unit: value === null ? '' : UNITS[unit],
+          unit: value === null ? '' : WITHOUT_UNIT.includes(quantity) ? '1' : UNITS[unit],
         })),
       ),
     );
@@ -237,7 +303,12 @@ describe.skipIf(!hasDsrdump)('dsrdump (skipped without dcmtk)', () => {
     expect(found).toEqual(expected);
     if (name !== 'empty') expect(found.length).toBeGreaterThan(8);
     expect(found.some(({ printed }) => printed === '')).toBe(
-      name === 'one kernel, flat, synthetic' || name === 'values missing',
+      [
+        'one kernel, flat, synthetic',
+        'values missing',
+        'a lumen without struts',
+        // On a cut there is no noise of an image to tell, and a stent without a value has none of its numbers.
+      ].includes(name),
     );
   });
 
@@ -345,6 +416,36 @@ describe.skipIf(!hasPydicom)('pydicom (skipped without python3-pydicom)', () => 
     expect(measured.map(({ ds, fd }) => fd ?? (ds === null ? null : Number(ds)))).toEqual(values);
   });
 
+  it('reads where lines and stents lie, and of a cut that it is resampled and from which series', () => {
+    const { texts, evidence } = read('lines, stents and cuts');
+    const of = (name: string) => texts.filter(([one]) => one === name).map(([, text]) => text);
+    expect(of('Place of the measurement in patient space')).toContain(
+      'from (-8.50, -15.25, 2.00) to (-4.50, -15.25, 2.00) mm, band 1.0 mm',
+    );
+    const cut =
+      'Measured on an oblique plane, Cut 1 (O1), resampled by cubic convolution, mean over 1.5 mm from ';
+    const no = ': no image of the study shows it.';
+    expect(new Set(of('Resampled on an oblique plane'))).toEqual(
+      new Set([
+        `${cut}the soft series 2.25.77001.2.1${no}`,
+        `${cut}the sharp series 2.25.77001.2.2${no}`,
+        `${cut}both series 2.25.77001.2.1 / 2.25.77001.2.2${no}`,
+      ]),
+    );
+    expect(of('Slice measured')).toContain('Slice 4 of 4, counted from 1; sharp kernel.');
+    expect(of('Nominal inner diameter')).toContain('3 mm');
+    expect(of('Definition of the numbers of this group')[0]).toMatch(/^Samples by cubic/);
+    expect(of('Caution').some((text) => text.startsWith('Fitted stent values were tried'))).toBe(
+      true,
+    );
+    // Images of the fit of both kernels, each in the evidence once: the third soft and the fourth sharp slice.
+    const images = evidence.map(([sop]) => sop);
+    expect(images.filter((sop) => sop === '2.25.77001.2.1.3')).toHaveLength(1);
+    expect(images.filter((sop) => sop === '2.25.77001.2.2.4')).toHaveLength(1);
+    // The first slices, which only the cut rests on, are named in words.
+    expect(images).not.toContain('2.25.77001.2.1.1');
+  });
+
   it('reads why a number has no value: CID 42', () => {
     const qualifiers = (name: string) =>
       read(name)
@@ -353,6 +454,12 @@ describe.skipIf(!hasPydicom)('pydicom (skipped without python3-pydicom)', () => 
     expect(qualifiers('one kernel, flat, synthetic')).toEqual([['Signal to noise', '114003']]);
     expect(qualifiers('values missing')).toContainEqual(['Contrast to noise ratio', '114006']);
     expect(qualifiers('values missing')).toContainEqual(['Attenuation Coefficient', '114006']);
+    expect(qualifiers('a lumen without struts')).toEqual([
+      ['Distance of the peaks of two struts', '114007'],
+      ['Width of a strut at half height', '114007'],
+      ['Artificial lumen narrowing against nominal diameter', '114007'],
+      ['Width of a strut at half height', '114006'],
+    ]);
   });
 
   it('reads names in other scripts, the local time and its offset', () => {

@@ -27,14 +27,15 @@ export function completeness(note: Note): readonly Missing[] {
 }
 
 function ofNote(note: Note): readonly Missing[] {
-  const { conditions, regions, contrasts } = note;
+  const { conditions, regions, contrasts, edges, profiles, stents } = note;
+  const isEmpty = [regions, edges, profiles, stents].every(({ length }) => length === 0);
   const missing = (code: string, text: string): Missing => ({ findingId: null, code, text });
   const unassigned = regions.filter(({ findingId }) => findingId === null);
   return [
     ...(note.reader.trim() === ''
       ? [missing('reader', 'The reader’s name, in the settings.')]
       : []),
-    ...(regions.length === 0 ? [missing('regions', 'Nothing is measured yet.')] : []),
+    ...(isEmpty ? [missing('regions', 'Nothing is measured yet.')] : []),
     ...(conditions.kvp === null
       ? [missing('kvp', 'The tube voltage: the files do not state it.')]
       : []),
@@ -56,7 +57,7 @@ function ofNote(note: Note): readonly Missing[] {
     ...contrasts
       .filter(({ soft, sharp }) => soft === null && sharp === null)
       .map(({ id }) => missing('contrast-value', `Contrast ${id} has a value on neither kernel.`)),
-    ...note.edges
+    ...[...edges, ...profiles]
       .filter(isMuteChoice)
       .map(({ label }) => missing('quote-reason', `Why ${label} is quoted as it is.`)),
   ];
@@ -81,7 +82,7 @@ function ofFinding(note: Note, finding: NoteFinding): readonly Missing[] {
     ...ROLES_NEEDED[finding.kind]
       .filter((role) => !own.some((region) => region.role === role))
       .map((role) => missing(`no-${role}`, `a ${role} region`)),
-    ...(finding.kind === 'stent' ? ofStent(finding, missing) : []),
+    ...(finding.kind === 'stent' ? ofStent(note, finding, missing) : []),
     ...(finding.kind !== 'reference' ? ofAssessability(finding, missing) : []),
     ...(note.pair.sharp === null
       ? []
@@ -95,13 +96,19 @@ function ofFinding(note: Note, finding: NoteFinding): readonly Missing[] {
 }
 
 function ofStent(
+  { stents, pair }: Note,
   finding: NoteFinding,
   missing: (code: string, what: string) => Missing,
 ): readonly Missing[] {
+  // A fit that gives no value says why, and is no longer missing; without a sharp kernel there can be none.
+  const isFitted = stents.some(({ findingId, fit }) => findingId === finding.id && fit !== null);
   return [
     ...(finding.nominalMm === null ? [missing('nominal', 'the nominal diameter')] : []),
     ...(finding.lengthMm === null ? [missing('length', 'the nominal length')] : []),
     ...(finding.overlap === null ? [missing('overlap', 'whether it overlaps another stent')] : []),
+    ...(isFitted || pair.sharp === null
+      ? []
+      : [missing('no-fitted-stent', 'a fitted stent, or the reason why there is none')]),
   ];
 }
 

@@ -5,25 +5,36 @@ import type { Digest } from './seal.js';
 /** A frame that some value of a note was measured on. */
 export type ReferencedFrame = Pick<FrameDigest, 'sopInstanceUid' | 'frameNumber'>;
 
-/** The frames that a note's values rest on, each once, in the note's order. */
+/** The frames that a note's values rest on, each once, in the note's order; none of what lies on an oblique cut. */
 export function referencedFrames({
   regions,
   edges = [],
-}: Pick<Note, 'regions'> & Partial<Pick<Note, 'edges'>>): readonly ReferencedFrame[] {
+  profiles = [],
+  stents = [],
+}: Pick<Note, 'regions'> &
+  Partial<Pick<Note, 'edges' | 'profiles' | 'stents'>>): readonly ReferencedFrame[] {
   const frames = new Map<string, ReferencedFrame>();
-  for (const { soft, sharp } of regions) {
-    for (const value of [soft, sharp]) {
-      if (value === null || value.sopInstanceUid === null || value.meanHu === null) continue;
-      const { sopInstanceUid, frameNumber } = value;
-      frames.set(frameKey({ sopInstanceUid, frameNumber }), { sopInstanceUid, frameNumber });
-    }
-  }
-  for (const value of edges.flatMap(({ soft, sharp }) => [soft, sharp])) {
-    if (value === null || value.sopInstanceUid === null || value.riseMm === null) continue;
-    const { sopInstanceUid, frameNumber } = value;
+  const values = [
+    ...ofKernels(regions, ({ meanHu }) => meanHu !== null),
+    ...ofKernels(edges, ({ riseMm }) => riseMm !== null),
+    ...ofKernels(profiles, ({ visibleWidthMm }) => visibleWidthMm !== null),
+    ...stents.flatMap(({ fit }) => fit?.images ?? []),
+  ];
+  for (const { sopInstanceUid, frameNumber } of values) {
+    if (sopInstanceUid === null) continue;
     frames.set(frameKey({ sopInstanceUid, frameNumber }), { sopInstanceUid, frameNumber });
   }
   return [...frames.values()];
+}
+
+function ofKernels<Value>(
+  items: readonly { readonly soft: Value | null; readonly sharp: Value | null }[],
+  isMeasured: (value: Value) => boolean,
+): readonly Value[] {
+  return items
+    .flatMap(({ soft, sharp }) => [soft, sharp])
+    .filter((value) => value !== null)
+    .filter(isMeasured);
 }
 
 /** One text for each frame: images of a series and frames of a multi-frame image alike. */

@@ -2,17 +2,21 @@ import type { MeasuredPlan } from '../measurePlan.js';
 import type { FrameDigest, Kernel, Note, NoteRegion } from '../schema.js';
 import { frameKey, type ReferencedFrame } from './frameDigests.js';
 import { changedEdgeNumbers } from './recheckEdges.js';
+import { changedProfileNumbers } from './recheckProfiles.js';
+import { changedStentNumbers } from './recheckStents.js';
+import { isSameNumber } from './sameNumber.js';
 
 /** A number of the note that the images no longer give. */
 export interface ChangedNumber {
   readonly id: string;
   readonly label: string;
-  readonly kernel: Kernel;
+  /** 'both' for one result of both kernels at once: a fitted stent. */
+  readonly kernel: Kernel | 'both';
   /** Name of the number as the note has it: 'meanHu'; 'cnr' of a contrast. */
   readonly quantity: string;
   readonly before: number | null;
   readonly now: number | null;
-  /** The image that it was measured on; null for a contrast. */
+  /** The image that it was measured on; null for a contrast, for both kernels at once, and on an oblique cut. */
   readonly sopInstanceUid: string | null;
 }
 
@@ -41,7 +45,7 @@ const QUANTITIES = [
   'placementHu',
 ] as const;
 
-/** Every number of a note's regions and contrasts that a fresh measurement does not give again, in the note's order. */
+/** Every number of a note's measurements that a fresh measurement does not give again, in the note's order. */
 export function changedNumbers(note: Note, measured: MeasuredPlan): readonly ChangedNumber[] {
   const regions = new Map(measured.regions.map((region) => [region.id, region]));
   const contrasts = new Map(measured.contrasts.map((contrast) => [contrast.id, contrast]));
@@ -54,7 +58,7 @@ export function changedNumbers(note: Note, measured: MeasuredPlan): readonly Cha
     ...note.contrasts.flatMap((contrast) =>
       kernelsOf(note).flatMap((kernel): readonly ChangedNumber[] => {
         const [before, now] = [contrast[kernel], contrasts.get(contrast.id)?.[kernel] ?? null];
-        if (isSame(before, now)) return [];
+        if (isSameNumber(before, now, RELATIVE_ROUNDING)) return [];
         const { id } = contrast;
         return [
           {
@@ -70,6 +74,8 @@ export function changedNumbers(note: Note, measured: MeasuredPlan): readonly Cha
       }),
     ),
     ...changedEdgeNumbers(note, measured),
+    ...changedProfileNumbers(note, measured),
+    ...changedStentNumbers(note, measured),
   ];
 }
 
@@ -85,7 +91,7 @@ function ofRegion(
     const [before, now] = [kept[quantity], fresh?.[quantity] ?? null];
     const rounding =
       quantity === 'standardErrorHu' ? RELATIVE_ROUNDING_OF_NOISE : RELATIVE_ROUNDING;
-    if (isSame(before, now, rounding)) return [];
+    if (isSameNumber(before, now, rounding)) return [];
     return [{ id, label, kernel, quantity, before, now, sopInstanceUid: kept.sopInstanceUid }];
   });
 }
@@ -108,10 +114,4 @@ export function changedFrames(
 
 function kernelsOf({ pair }: Note): readonly Kernel[] {
   return pair.sharp === null ? ['soft'] : ['soft', 'sharp'];
-}
-
-function isSame(before: number | null, now: number | null, rounding = RELATIVE_ROUNDING): boolean {
-  if (before === null || now === null) return before === now;
-  const size = Math.max(Math.abs(before), Math.abs(now), 1);
-  return Math.abs(before - now) <= rounding * size;
 }

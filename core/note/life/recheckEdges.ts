@@ -1,6 +1,7 @@
 import type { MeasuredPlan } from '../measurePlan.js';
 import type { Kernel, Note } from '../schema.js';
 import type { ChangedNumber } from './recheck.js';
+import { isSameNumber } from './sameNumber.js';
 
 /** What recomputing may alter: the fit ends when a step gains nothing, so its last digits are the machine's. */
 const RELATIVE_ROUNDING = 1e-6;
@@ -30,15 +31,10 @@ export function changedEdgeNumbers(
       if (kept === null) return [];
       return QUANTITIES.flatMap((quantity): readonly ChangedNumber[] => {
         const [before, now] = [kept[quantity], fresh?.[quantity] ?? null];
-        if (isSame(before, now)) return [];
+        if (isSameNumber(before, now, RELATIVE_ROUNDING)) return [];
         const { id, label } = edge;
         return [{ id, label, kernel, quantity, before, now, sopInstanceUid: kept.sopInstanceUid }];
       });
     }),
   );
-}
-
-function isSame(before: number | null, now: number | null): boolean {
-  if (before === null || now === null) return before === now;
-  return Math.abs(before - now) <= RELATIVE_ROUNDING * Math.max(Math.abs(before), Math.abs(now), 1);
 }

@@ -9,13 +9,17 @@ import type {
   NoteRegion,
   NoteStack,
 } from '../../note/schema.js';
-import { FLAGS, type Flag } from '../../region/index.js';
 import { cleanEdge } from './cleanEdge.js';
+import { type Cleaner, cleanFlag, cleanPlaneReference, cleanUid, safeLabel } from './cleaner.js';
+import { cleanPlane } from './cleanPlane.js';
+import { cleanProfile } from './cleanProfile.js';
+import { cleanStent } from './cleanStent.js';
 import { identityFinder, REMOVED } from './cleanText.js';
+import { sentencesOf, uidsOf } from './collected.js';
 import { identifyingValues } from './identifyingValues.js';
 import { CLEAN_CHECKS, METHOD } from './method.js';
 import { makePseudonyms, noteIdOf } from './pseudonyms.js';
-import { type SafeNames, safeNames } from './safeNames.js';
+import { safeNames } from './safeNames.js';
 
 /** How an export without identity is made. */
 export interface Deidentification {
@@ -29,16 +33,6 @@ export interface DeidentifiedNote {
   readonly note: Note;
   /** The UID that a new one stands for; undefined for one that is not new. For looking images up: it must not be exported. */
   readonly originalUid: (uid: string) => string | undefined;
-}
-
-/** What cleans the parts of a note. */
-interface Cleaner {
-  readonly uid: (uid: string) => string;
-  /** A sentence of the program with new UIDs; another one in its place where it told who or when. */
-  readonly sentence: (text: string) => string;
-  /** A label from a file, null where it told who or when. */
-  readonly label: (text: string | null) => string | null;
-  readonly ids: SafeNames;
 }
 
 /**
@@ -110,7 +104,10 @@ export async function deidentifyNote(
     findings: note.findings.map((finding) => cleanFinding(finding, cleaner)),
     regions: note.regions.map((region) => cleanRegion(note, region, cleaner)),
     contrasts: note.contrasts.map((contrast) => cleanContrast(contrast, cleaner)),
-    edges: note.edges.map((edge) => cleanEdge(edge, { ...cleaner, id: ids.idOf(edge.id) })),
+    edges: note.edges.map((edge) => cleanEdge(edge, cleaner)),
+    profiles: note.profiles.map((profile) => cleanProfile(profile, cleaner)),
+    stents: note.stents.map((stent) => cleanStent(stent, cleaner)),
+    planes: note.planes.map((plane) => cleanPlane(plane, cleaner)),
     repeats: note.repeats.map((repeat) => cleanRepeat(repeat, cleaner)),
     visibility:
       note.visibility === null
@@ -174,7 +171,8 @@ function cleanRegion(note: Note, region: NoteRegion, cleaner: Cleaner): NoteRegi
     id,
     role: region.role,
     shape: region.shape,
-    label: `${ROLE_NAME[region.role]} ${/\d+$/.exec(id)?.[0] ?? ''}`.trim(),
+    ...cleanPlaneReference(region, cleaner),
+    label: safeLabel(ROLE_NAME[region.role], id),
     place: '',
     findingId: region.findingId === null ? null : cleaner.ids.idOf(region.findingId),
     quote: region.quote,
@@ -218,7 +216,7 @@ function cleanValue(value: NoteRegion['soft'], cleaner: Cleaner): NoteRegion['so
     snr: value.snr,
     sliceIndex: value.sliceIndex,
     sliceOffsetMm: value.sliceOffsetMm,
-    sopInstanceUid: value.sopInstanceUid === null ? null : cleaner.uid(value.sopInstanceUid),
+    sopInstanceUid: cleanUid(value.sopInstanceUid, cleaner),
     frameNumber: value.frameNumber,
     standardErrorHu: value.standardErrorHu,
     placementHu: value.placementHu,
@@ -239,52 +237,4 @@ function cleanContrast(contrast: NoteContrast, cleaner: Cleaner): NoteContrast {
     sharp: contrast.sharp,
     flags: contrast.flags.map((flag) => cleanFlag(flag, cleaner)),
   };
-}
-
-/** A flag that refuses a pair says of which patient each stack is: what it means is kept, the names are not. */
-function cleanFlag({ code, text }: Flag, { sentence }: Cleaner): Flag {
-  return code === FLAGS.notOneAcquisition('').code
-    ? { code, text: 'Not measured here: not one acquisition.' }
-    : { code, text: sentence(text) };
-}
-
-function uidsOf({ study, pair, conditions, regions, edges, repeats }: Note): readonly string[] {
-  return [
-    study.studyInstanceUid,
-    pair.soft.seriesInstanceUid,
-    pair.sharp?.seriesInstanceUid,
-    conditions.frameOfReferenceUid,
-    ...[...regions, ...edges, ...repeats.flatMap((repeat) => repeat.regions)].flatMap(
-      ({ soft, sharp }) => [soft?.sopInstanceUid, sharp?.sopInstanceUid],
-    ),
-  ].filter((uid) => typeof uid === 'string');
-}
-
-/** Every text that may be kept. */
-function sentencesOf({
-  pair,
-  regions,
-  contrasts,
-  edges,
-  repeats,
-  densities,
-}: Note): readonly string[] {
-  const stacks = [pair.soft, ...(pair.sharp === null ? [] : [pair.sharp])];
-  const flags = [
-    ...[...regions, ...edges, ...repeats.flatMap((repeat) => repeat.regions)].flatMap(
-      ({ soft, sharp }) => [...(soft?.flags ?? []), ...(sharp?.flags ?? [])],
-    ),
-    ...contrasts.flatMap((contrast) => contrast.flags),
-    ...densities.flatMap((density) => density.flags),
-  ];
-  return [
-    ...pair.evidence.flatMap(({ check, text }) => [check, text]),
-    ...stacks.flatMap(({ kernelLabel, unit, findings }) => [
-      kernelLabel ?? '',
-      unit,
-      ...findings.map(({ text }) => text),
-    ]),
-    ...flags.map(({ text }) => text),
-    ...contrasts.map(({ formula }) => formula),
-  ];
 }

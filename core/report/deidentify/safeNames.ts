@@ -9,9 +9,13 @@ export interface SafeNames {
 /** What the program gives: a letter and a number. A note from elsewhere may have a name here. */
 const OWN_ID = /^[A-Z]\d{1,6}$/;
 
-/** Identifiers of regions, contrasts and findings that can't be anybody's name. */
-export function safeNames({ regions, contrasts, findings, edges, repeats }: Note): SafeNames {
-  const ids = [...regions, ...contrasts, ...findings, ...edges, ...repeats].map(({ id }) => id);
+/** Identifiers of all that a note lists, so that they can't be anybody's name. */
+export function safeNames(note: Note): SafeNames {
+  const { regions, contrasts, findings, edges, repeats, profiles, stents, planes } = note;
+  const ids = [
+    ...[...regions, ...contrasts, ...findings, ...edges, ...repeats],
+    ...[...profiles, ...stents, ...planes],
+  ].map(({ id }) => id);
   const foreign = [...new Set(ids.filter((id) => !OWN_ID.test(id)))];
   return {
     idOf: (id) => {

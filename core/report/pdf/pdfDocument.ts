@@ -1,5 +1,7 @@
 import type { Note } from '../../note/schema.js';
-import { type MeasurementTable, measurementTable, type TableRow } from '../measurementTable.js';
+import { type MeasurementTable, measurementTable } from '../measurementTable.js';
+import { STENT_CAUTION } from '../stentSentence.js';
+import type { RowItem, TableRow } from '../tableRow.js';
 import { flagsText } from '../wideTable.js';
 import type { PdfDocument, PdfPart } from './pdfParts.js';
 import { contrastTable, detailTable, factsTable, summaryTable } from './pdfTables.js';
@@ -30,6 +32,9 @@ export function pdfDocument(note: Note, images: PdfImages): PdfDocument {
       ...details(table, images),
       { kind: 'heading', text: 'Contrasts' },
       ...contrasts(table),
+      ...section(table, 'edge line', 'Edge lines'),
+      ...section(table, 'profile', 'Profiles'),
+      ...section(table, 'fitted stent', 'Fitted stents', STENT_CAUTION),
       { kind: 'heading', text: 'Where the numbers come from' },
       ...factsTable(table.facts),
       { kind: 'cautions', lines: table.cautions },
@@ -89,6 +94,45 @@ function contrasts(table: MeasurementTable): readonly PdfPart[] {
   return [contrastTable(rows), ...rows.flatMap(remarks)];
 }
 
+/** Rows of one kind, each with all its numbers; nothing where the note has none. */
+function section(
+  { rows }: MeasurementTable,
+  item: RowItem,
+  heading: string,
+  caution?: string,
+): readonly PdfPart[] {
+  const own = rows.filter((row) => row.item === item);
+  if (own.length === 0) return [];
+  const definitions = new Set(
+    own.map(({ definition }) => definition).filter((text) => text !== ''),
+  );
+  const opening: readonly PdfPart[] = [
+    { kind: 'heading', text: heading },
+    ...(caution === undefined ? [] : [{ kind: 'cautions', lines: [caution] } as const]),
+    ...[...definitions].map((text): PdfPart => ({ kind: 'small', text })),
+  ];
+  return own.map(
+    (row, index): PdfPart => ({
+      kind: 'together',
+      parts: [
+        // No heading stays behind alone at the foot of a page.
+        ...(index === 0 ? opening : []),
+        { kind: 'subheading', text: `${row.id}: ${regionTitle(row)}` },
+        ...numbersOf(row),
+        ...remarks(row),
+      ],
+    }),
+  );
+}
+
+/** Both kernels beside each other; a result of both at once in a table of its own. */
+function numbersOf(row: TableRow): readonly PdfPart[] {
+  const isBoth = ({ kernel }: TableRow['kernels'][number]) => kernel === 'both';
+  return [row.kernels.filter(isBoth), row.kernels.filter((values) => !isBoth(values))]
+    .filter((kernels) => kernels.some(({ quantities }) => quantities.length > 0))
+    .map((kernels) => detailTable({ ...row, kernels }));
+}
+
 function regionTitle({ label, segment, finding, nominalMm, place }: TableRow): string {
   const nominal = nominalMm === null ? '' : `nominal ${nominalMm} mm`;
   return [label, segment, finding, nominal, place].filter((part) => part !== '').join(' · ');
@@ -96,6 +140,8 @@ function regionTitle({ label, segment, finding, nominalMm, place }: TableRow): s
 
 function remarks(row: TableRow): readonly PdfPart[] {
   const parts = [
+    // Elsewhere the place stands in the title.
+    row.item === 'contrast' && row.place !== '' ? `${row.id}: ${row.place}.` : '',
     row.assessability === '' ? '' : `Assessability: ${row.assessability}.`,
     row.reason === '' ? '' : `Reason: ${row.reason}.`,
     row.quote.sentence,

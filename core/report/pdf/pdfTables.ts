@@ -1,6 +1,6 @@
 import { NO_VALUE } from '../../format/index.js';
-import type { KernelValues, TableRow } from '../measurementTable.js';
 import type { Fact } from '../noteFacts.js';
+import { imagesOf, type KernelValues, kernelName, sliceText, type TableRow } from '../tableRow.js';
 import type { PdfCell, PdfPart } from './pdfParts.js';
 
 const head = (text: string): PdfCell => ({ text, look: 'head' });
@@ -56,10 +56,8 @@ export function detailTable({ kernels }: TableRow): PdfPart {
       [
         words('image'),
         words(''),
-        ...kernels.map(({ sliceIndex, slices }) =>
-          digits(sliceIndex === null ? NO_VALUE : `slice ${sliceIndex + 1} of ${slices}`),
-        ),
-        words(kernels.map(({ sopInstanceUid }) => sopInstanceUid ?? NO_VALUE).join('\n')),
+        ...kernels.map((values) => digits(sliceWords(values))),
+        words(kernels.map(imageWords).join('\n')),
       ],
     ],
   };
@@ -99,8 +97,15 @@ export function factsTable(facts: readonly Fact[]): readonly PdfPart[] {
   ]);
 }
 
-function kernelName({ kernel, kernelLabel }: KernelValues): string {
-  return `${kernel}, ${kernelLabel ?? 'no kernel label'}`;
+function sliceWords(values: KernelValues): string {
+  const slice = sliceText(values);
+  return slice === '' ? NO_VALUE : `slice ${slice}`;
+}
+
+/** UIDs of the images that values rest on. */
+function imageWords(values: KernelValues): string {
+  const uids = imagesOf(values).map(({ sopInstanceUid }) => sopInstanceUid);
+  return uids.length === 0 ? NO_VALUE : uids.join('\n');
 }
 
 function printed({ quantities }: KernelValues, name: string): string {

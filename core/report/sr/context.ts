@@ -31,11 +31,15 @@ export function imageReference(
   };
 }
 
-/** The frames of one kernel that regions of a note lie on, each once, whether or not they gave a value. */
+/** The frames of one kernel that what is measured lies on, each once, whether or not it gave a value. */
 export function framesOfKernel(note: Note, kernel: Kernel): readonly ReferencedFrame[] {
   const frames = new Map<string, ReferencedFrame>();
-  for (const region of note.regions) {
-    const { sopInstanceUid = null, frameNumber = null } = region[kernel] ?? {};
+  const fitted = note.stents.flatMap(
+    ({ fit }) => fit?.images.filter((image) => image.kernel === kernel) ?? [],
+  );
+  const measured = [...note.regions, ...note.edges, ...note.profiles].map((item) => item[kernel]);
+  for (const value of [...measured, ...fitted]) {
+    const { sopInstanceUid = null, frameNumber = null } = value ?? {};
     if (sopInstanceUid === null) continue;
     const frame = { sopInstanceUid, frameNumber };
     frames.set(frameKey(frame), frame);

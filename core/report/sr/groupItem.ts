@@ -1,30 +1,22 @@
-import { frameKey } from '../../note/life/index.js';
-import type { NoteFinding } from '../../note/schema.js';
-import type { Shape } from '../../region/index.js';
+import type { Note, NoteFinding } from '../../note/schema.js';
 import { stableUid } from '../../stableUid.js';
-import type { KernelValues, TableRow } from '../measurementTable.js';
+import { STENT_CAUTION } from '../stentSentence.js';
+import type { KernelValues, TableRow } from '../tableRow.js';
 import { dcm, sct } from './code.js';
 import {
   type ContentItem,
   codeItem,
   containerItem,
-  imageItem,
   textIfAny,
   textItem,
   uidItem,
 } from './contentItem.js';
-import { imageReference, type ReportContext } from './context.js';
-import { graphicOf, imageRegionItem } from './imageRegion.js';
+import type { ReportContext } from './context.js';
+import { groupPlace } from './groupPlace.js';
 import { OWN } from './ownCodes.js';
 import { ASSESSABILITY_CODES, KERNEL_CODES, KIND_CODES, ROLE_CODES } from './readingCodes.js';
 import { siteCodes } from './siteCodes.js';
 import { valuesItems } from './valuesItems.js';
-
-/** Images of a group: a contour selected from its image, or the image alone with the reason why there is none. */
-interface Place {
-  readonly template: '1410' | '1501';
-  readonly items: readonly ContentItem[];
-}
 
 /**
  * A measurement group (125007 DCM) of one row of the table on one kernel. With a contour it follows TID 1410 (planar
@@ -38,10 +30,9 @@ export function groupItem(
   const { note } = context;
   const region = note.regions.find(({ id }) => row.item === 'region' && id === row.id);
   const contrast = note.contrasts.find(({ id }) => row.item === 'contrast' && id === row.id);
-  const findingId =
-    region?.findingId ?? note.regions.find(({ id }) => id === contrast?.lumen)?.findingId;
-  const finding = note.findings.find(({ id }) => id === findingId);
-  const { template, items: place } = placeOf(context, region?.shape, values);
+  const finding = findingOf(note, row);
+  const isLine = row.item !== 'region' && row.item !== 'contrast';
+  const { template, items: place } = groupPlace(context, row, values);
   return containerItem(
     dcm('125007', 'Measurement Group'),
     [
@@ -64,7 +55,12 @@ export function groupItem(
       ...(region === undefined ? [] : [codeItem('CONTAINS', OWN.role, ROLE_CODES[region.role])]),
       ...(contrast === undefined ? [] : [textItem('CONTAINS', OWN.operands, row.label)]),
       ...(finding === undefined ? [] : findingItems(finding)),
-      ...textIfAny('CONTAINS', OWN.place, row.place),
+      ...textIfAny('CONTAINS', isLine ? OWN.where : OWN.place, row.place),
+      ...(isLine && row.nominalMm !== null
+        ? [textItem('CONTAINS', OWN.nominal, `${row.nominalMm} mm`)]
+        : []),
+      ...textIfAny('CONTAINS', OWN.definition, row.definition),
+      ...(row.item === 'fitted stent' ? [textItem('CONTAINS', OWN.caution, STENT_CAUTION)] : []),
       ...(values.quoted ? [textItem('CONTAINS', OWN.quoted, row.quote.sentence)] : []),
       ...(row.quote.kernel === 'neither'
         ? [textItem('CONTAINS', OWN.remark, row.quote.sentence)]
@@ -75,42 +71,23 @@ export function groupItem(
   );
 }
 
-function trackingName({ id, label }: TableRow, { kernel }: KernelValues): string {
-  return `${id}, ${label}, ${kernel}`;
+/** The finding that a row belongs to: a contrast to that of its lumen. */
+function findingOf(note: Note, { item, id }: TableRow): NoteFinding | undefined {
+  const { regions, contrasts, stents, findings } = note;
+  const lumen = contrasts.find((contrast) => contrast.id === id)?.lumen;
+  const findingId =
+    item === 'fitted stent'
+      ? stents.find((stent) => stent.id === id)?.findingId
+      : item === 'region'
+        ? regions.find((region) => region.id === id)?.findingId
+        : item === 'contrast'
+          ? regions.find((region) => region.id === lumen)?.findingId
+          : undefined;
+  return findings.find((finding) => finding.id === findingId);
 }
 
-function placeOf(context: ReportContext, shape: Shape | undefined, values: KernelValues): Place {
-  const { sopInstanceUid, frameNumber, sliceIndex, slices, sliceOffsetMm } = values;
-  if (shape === undefined || sopInstanceUid === null) return { template: '1501', items: [] };
-  const image = imageReference(context, sopInstanceUid, frameNumber);
-  const slice =
-    sliceIndex === null
-      ? []
-      : [
-          textItem(
-            'CONTAINS',
-            OWN.slice,
-            `Slice ${sliceIndex + 1} of ${slices}, counted from 1; ${sliceOffsetMm === null ? 'its distance' : `${sliceOffsetMm.toFixed(2)} mm`} from the plane of the region${sliceOffsetMm === null ? ' is not known' : ''}.`,
-          ),
-        ];
-  const graphic = graphicOf(shape, (pointMm) =>
-    context.pixelOf?.(sopInstanceUid, frameNumber, pointMm),
-  );
-  if (graphic !== undefined) {
-    return { template: '1410', items: [imageRegionItem(graphic, image), ...slice] };
-  }
-  return {
-    template: '1501',
-    items: [
-      imageItem('CONTAINS', dcm('121112', 'Source of Measurement'), image),
-      ...slice,
-      textItem(
-        'CONTAINS',
-        OWN.noContour,
-        `The image ${frameKey(image)} was not at hand when this document was made: its contour in pixels could not be given.`,
-      ),
-    ],
-  };
+function trackingName({ id, label }: TableRow, { kernel }: KernelValues): string {
+  return `${id}, ${label}, ${kernel}`;
 }
 
 function findingItems(finding: NoteFinding): readonly ContentItem[] {

@@ -7,6 +7,7 @@ import { type DecimalValue, decimalValue } from './decimalValue.js';
 export const NO_VALUE_CODES = {
   divideByZero: dcm('114003', 'Divide by zero'),
   failure: dcm('114006', 'Measurement failure'),
+  notAttempted: dcm('114007', 'Measurement not attempted'),
 } as const;
 
 export interface NumberParts {

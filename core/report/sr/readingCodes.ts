@@ -1,5 +1,6 @@
-import type { Dominance, FindingKind, Kernel, NoteFinding } from '../../note/schema.js';
+import type { Dominance, FindingKind, NoteFinding } from '../../note/schema.js';
 import type { Role } from '../../region/index.js';
+import type { ValuesKernel } from '../tableRow.js';
 import { type Code, sct } from './code.js';
 import { OWN } from './ownCodes.js';
 
@@ -24,7 +25,11 @@ export const ROLE_CODES: Readonly<Record<Role, Code>> = {
   reference: OWN.reference,
 };
 
-export const KERNEL_CODES: Readonly<Record<Kernel, Code>> = { soft: OWN.soft, sharp: OWN.sharp };
+export const KERNEL_CODES: Readonly<Record<ValuesKernel, Code>> = {
+  soft: OWN.soft,
+  sharp: OWN.sharp,
+  both: OWN.both,
+};
 
 function radlex(value: string, meaning: string): Code {
   return { value, scheme: 'RADLEX', meaning };

@@ -9,18 +9,29 @@ import type { AppState } from '../appState.js';
 import { editNote } from '../history.js';
 import { isBlind, selectedRegion, shownRegions } from '../regionSelectors.js';
 import type { Change } from '../store.js';
-import { removeSelectedEdge } from './edges.js';
+import { removeSelectedLine } from './lines.js';
 import { placeRepeated } from './repeat.js';
+import { removeSelectedStent } from './stents.js';
 
 /** Puts a new region into the note and selects it. */
-export function placeRegion(role: Role, shape: Shape, values: RegionValues, now: string): Change {
+export function placeRegion(
+  role: Role,
+  shape: Shape,
+  values: RegionValues,
+  now: string,
+  plane?: string,
+): Change {
   return (state) => {
     if (state.note === undefined) return state;
     if (isBlind(state)) return placeRepeated(shape, values, now)(state);
-    const added = addRegion(state.note, { role, shape, ...values }, now);
+    const added = addRegion(state.note, { role, shape, ...onPlane(plane), ...values }, now);
     const edited = editNote(`Mark ${added.region.label}`, () => added.note)(state);
     return { ...edited, selected: added.region.id, draft: undefined, openOutline: undefined };
   };
+}
+
+function onPlane(plane: string | undefined): { readonly plane?: string } {
+  return plane === undefined ? {} : { plane };
 }
 
 /** Gives a region another shape. Changes with the same key that follow each other are undone as one. */
@@ -44,7 +55,9 @@ export function reshapeRegion(
 export function removeSelected(now: string): Change {
   return (state) => {
     const region = selectedRegion(state);
-    if (state.note === undefined || region === undefined) return removeSelectedEdge(now)(state);
+    if (state.note === undefined || region === undefined) {
+      return removeSelectedStent(now)(removeSelectedLine(now)(state));
+    }
     const { note, removedContrasts } = removeRegion(state.note, region.id, now);
     const edited = editNote(`Delete ${region.label}`, () => note)(state);
     // A verified note keeps its regions, and the reader is told.

@@ -88,7 +88,7 @@ describe('menuTemplate', () => {
       expect.arrayContaining([
         'Undo [CmdOrCtrl+Z]',
         'Redo [CmdOrCtrl+Shift+Z]',
-        'Delete region or line (Delete)',
+        'Delete what is selected (Delete)',
         'Settings… [CmdOrCtrl+,]',
       ]),
     );

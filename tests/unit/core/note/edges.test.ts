@@ -87,7 +87,7 @@ describe('Edge lines of a note', () => {
     const plan = planOf(note);
     expect(plan.edges).toEqual([{ id: 'E1', ...LINE }]);
     expect(parsePlan(plan)).toMatchObject({ ok: true, value: { plan, unknownFields: [] } });
-    expect(slicesNeeded(plan, stack)).toEqual([2]);
+    expect(slicesNeeded(plan, stack, { soft: stack, sharp: stack })).toEqual([2]);
     const measured = measurePlan(plan, stack, stack, () => STORED);
     if (!measured.ok) throw new Error(measured.refusal.text);
     expect(measured.value.edges).toEqual([{ id: 'E1', soft, sharp: soft }]);

@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import { describe, expect, it } from 'vitest';
 import { noteJsonSchema, parseNote, parsePlan, planOf } from '../../../../core/note/index.js';
+import { linesNote } from '../report/linesNote.js';
 import { richNote } from './richNote.js';
 
 interface Ajv {
@@ -32,6 +33,7 @@ describe('the published schema of a note', () => {
 
   it('lets a real note pass', () => {
     expect(valid(asJson(richNote()))).toBe(true);
+    expect(valid(asJson(linesNote()))).toBe(true);
   });
 
   it.each([

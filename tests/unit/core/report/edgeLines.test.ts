@@ -2,7 +2,13 @@ import { csvParse } from 'd3';
 import { describe, expect, it } from 'vitest';
 import { addEdge, type Note } from '../../../../core/note/index.js';
 import { type EdgeValue, edgeNotMeasured } from '../../../../core/region/index.js';
-import { edgeLineHtml, toCsv, toHtml, toWideCsv } from '../../../../core/report/index.js';
+import {
+  edgeLineHtml,
+  measurementTable,
+  toCsv,
+  toHtml,
+  toWideCsv,
+} from '../../../../core/report/index.js';
 import { sampleState } from '../../renderer/sample.js';
 
 const VALUE: EdgeValue = {
@@ -51,7 +57,7 @@ describe('Edge lines in the exports', () => {
     expect(html).toContain('No &lt;clear&gt; step.');
     const { note } = sampleState();
     if (note === undefined) throw new Error('no note');
-    expect(edgeLineHtml(note)).toBe('');
+    expect(edgeLineHtml(measurementTable(note))).toBe('');
     expect(toHtml(note)).not.toContain('Edge lines');
   });
 

@@ -201,7 +201,7 @@ describe('the wide tables', () => {
 
   it('carry printed digits, kernels and cautions to the clipboard', () => {
     const rows = tsvParseRows(toTsv(richNote()));
-    expect(rows[0]?.slice(0, 3)).toEqual(['ID', 'Region, contrast or edge line', 'Role']);
+    expect(rows[0]?.slice(0, 3)).toEqual(['ID', 'Name', 'Role']);
     expect(rows[0]).toContain('Soft mean, HU');
     const mean = rows[0]?.indexOf('Soft mean, HU') ?? -1;
     expect(rows[1]?.[mean]).toBe('108.0');

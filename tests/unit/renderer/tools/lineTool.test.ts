@@ -6,7 +6,7 @@ import { redo, undo } from '../../../../renderer/state/history.js';
 import { linesOn } from '../../../../renderer/state/lineSelectors.js';
 import { giveUp, plateKey } from '../../../../renderer/tools/plateKeys.js';
 import { sampleState } from '../sample.js';
-import { NOW, pointer, toolsOn } from './fakePort.js';
+import { EMPTY_BENCH, NOW, pointer, toolsOn } from './fakePort.js';
 
 // The plate is 400 px wide at 20 px to the mm about (0, −10): the place (200, 200) is (0, −10, 2) mm.
 const withTool = (tool: AppState['tool']): AppState => ({ ...sampleState(), tool });
@@ -175,7 +175,7 @@ describe('Lines by key', () => {
         sharp: { ...tools.store.now().plates.sharp, alongMm: 0 },
       },
     };
-    expect(goToRegion(away).plates.soft.alongMm).toBe(2);
+    expect(goToRegion(EMPTY_BENCH.cuts)(away).plates.soft.alongMm).toBe(2);
     tools.store.change('Delete', removeSelected(NOW));
     expect(tools.store.now().note?.edges).toEqual([]);
     expect(tools.store.now()).toMatchObject({ selected: undefined });

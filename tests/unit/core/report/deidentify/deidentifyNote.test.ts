@@ -1,7 +1,8 @@
 import { beforeAll, describe, expect, it } from 'vitest';
-import { type Note, parseNote } from '../../../../../core/note/index.js';
+import { type Note, PROFILE_DEFINITION, parseNote } from '../../../../../core/note/index.js';
 import { REMOVED } from '../../../../../core/report/deidentify/cleanText.js';
 import { deidentifyNote, measurementTable } from '../../../../../core/report/index.js';
+import { linesNote } from '../linesNote.js';
 import { digest, TELLING, tellingNote } from '../sr/tellingNote.js';
 
 const SALT = 'a salt of this test alone';
@@ -109,5 +110,81 @@ describe('deidentifyNote', () => {
       ['W1', 'Wall 1'],
     ]);
     expect(JSON.stringify(note)).not.toContain('Somebody');
+  });
+
+  it('names lines, stents and cuts anew, and keeps places, numbers and which lies on which cut', () => {
+    expect(clean.profiles.map(({ id, label, plane }) => [id, label, plane])).toEqual([
+      ['X1', 'Profile 1', undefined],
+      ['X2', 'Profile 2', 'O1'],
+    ]);
+    expect(clean.stents.map(({ id, label, plane, findingId }) => [id, label, plane, findingId]))
+      // The first stent belongs to the finding, the last lies on the cut.
+      .toEqual([
+        ['S1', 'Stent 1', undefined, 'D1'],
+        ['S2', 'Stent 2', undefined, null],
+        ['S3', 'Stent 3', 'O1', null],
+      ]);
+    expect(clean.planes.map(({ id, label, courseMm }) => [id, label, courseMm])).toEqual([
+      ['O1', 'Cut 1', told.planes[0]?.courseMm],
+    ]);
+    expect(clean.profiles[0]?.definition).toBe(PROFILE_DEFINITION);
+    expect(clean.profiles[1]?.definition).toBe(REMOVED);
+    expect(clean.planes[0]?.resampling).toBe(REMOVED);
+    expect(clean.stents[1]?.fit?.reason).toEqual({ code: 'motion', text: REMOVED });
+    expect(clean.profiles[0]?.quoteReason).toBe('');
+    const { images: _, ...numbers } = clean.stents[0]?.fit ?? { images: [] };
+    const { images: __, ...before } = told.stents[0]?.fit ?? { images: [] };
+    expect(numbers).toEqual(before);
+  });
+
+  it('makes the reason of a profile anew where it is the program’s', async () => {
+    const profiles = told.profiles.map((profile) => ({
+      ...profile,
+      quoteBy: 'proposal' as const,
+      quoteReason: 'Fernsby says so',
+    }));
+    const { note } = await deidentifyNote({ ...told, profiles }, { salt: SALT, digest });
+    expect(note.profiles.map(({ quoteReason }) => quoteReason)).toEqual([
+      'Edges and widths: the sharp kernel blurs less.',
+      'No visible width on the sharp kernel. The soft one is quoted.',
+    ]);
+  });
+
+  it('gives images of fits and cuts the new UIDs of the same images elsewhere', () => {
+    const [profile] = clean.profiles;
+    const [stent] = clean.stents;
+    const [plane] = clean.planes;
+    expect(stent?.fit?.images[0]?.sopInstanceUid).toBe(profile?.soft?.sopInstanceUid);
+    expect(stent?.fit?.images[1]?.sopInstanceUid).toBe(plane?.source.sharp?.last.sopInstanceUid);
+    expect(plane?.source.soft?.first).toEqual({
+      sopInstanceUid: expect.stringMatching(/^2\.25\.\d{30,39}$/),
+      frameNumber: null,
+      sliceIndex: 0,
+    });
+  });
+
+  it('maps names that are not the program’s, wherever a cut or a stent is named', async () => {
+    const lines = linesNote();
+    const foreign: Note = {
+      ...lines,
+      planes: lines.planes.map((plane) => ({ ...plane, id: 'Quillfeather' })),
+      stents: lines.stents.map((stent, index) => ({
+        ...stent,
+        id: `Ottoline ${index}`,
+        ...(stent.plane === undefined ? {} : { plane: 'Quillfeather' }),
+      })),
+      regions: lines.regions.map((region) =>
+        region.plane === undefined ? region : { ...region, plane: 'Quillfeather' },
+      ),
+      edges: lines.edges.map((edge) => ({ ...edge, plane: 'a cut that is gone' })),
+    };
+    const { note } = await deidentifyNote(foreign, { salt: SALT, digest });
+    expect(JSON.stringify(note)).not.toMatch(/Quillfeather|Ottoline|gone/);
+    const [plane] = note.planes;
+    expect(plane?.id).toMatch(/^item-\d$/);
+    expect(note.stents.at(-1)?.plane).toBe(plane?.id);
+    expect(note.regions.find(({ id }) => id === 'R1')?.plane).toBe(plane?.id);
+    expect(note.edges[0]?.plane).toBe('unknown');
+    expect(parseNote(note).ok).toBe(true);
   });
 });

@@ -3,6 +3,7 @@ import type { Note } from '../../../../../core/note/index.js';
 import { amendNote, type Digest, verifyNote } from '../../../../../core/note/life/index.js';
 import type { Result } from '../../../../../core/result.js';
 import { richNote } from '../../note/richNote.js';
+import { linesNote } from '../linesNote.js';
 
 export const digest: Digest = async (bytes) => createHash('sha256').update(bytes).digest('hex');
 
@@ -47,6 +48,7 @@ function got<T>(result: Result<T>): T {
 /** A verified note, amended once and verified again, in which every text of people and files says who or when. */
 export async function tellingNote(): Promise<Note> {
   const rich = richNote();
+  const { edges, profiles, stents, planes } = linesNote();
   const { soft, sharp } = rich.pair;
   if (sharp === null) throw new Error('the rich note has a pair');
   const told: Note = {
@@ -119,6 +121,27 @@ export async function tellingNote(): Promise<Note> {
                 },
               ],
             },
+    })),
+    edges: edges.map((edge) => ({ ...edge, label: 'Edge of Quillfeather' })),
+    profiles: profiles.map((profile, index) => ({
+      ...profile,
+      label: 'Hollis’ line',
+      definition: index === 0 ? profile.definition : 'Widths as Fernsby reads them.',
+      quoteBy: 'reader',
+      quoteReason: 'struts of her stent',
+    })),
+    stents: stents.map((stent) => ({
+      ...stent,
+      label: 'Stent of 2026-01-05',
+      fit:
+        stent.fit === null || stent.fit.reason === null
+          ? stent.fit
+          : { ...stent.fit, reason: { code: 'motion', text: 'Quillfeather moved.' } },
+    })),
+    planes: planes.map((plane) => ({
+      ...plane,
+      label: 'Cut by Marrow',
+      resampling: 'cubic convolution of 2026-01-05',
     })),
     comment: 'Ottoline Quillfeather, seen by my neighbour.\nSecond line.',
     frames: [
