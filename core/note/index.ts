@@ -37,6 +37,7 @@ export * from './repeat.js';
 export * from './schema.js';
 export * from './segments.js';
 export * from './selectStack.js';
+export * from './stentOnCutValue.js';
 export * from './stentSchema.js';
 export * from './stents.js';
 export * from './stentValue.js';

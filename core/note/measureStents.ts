@@ -5,6 +5,7 @@ import type { Stack } from '../stack/index.js';
 import { fitStent } from '../stent/index.js';
 import type { RegionGround } from './measureRegions.js';
 import type { PlanStent } from './plan.js';
+import { stentOnCutValue } from './stentOnCutValue.js';
 import type { StentValue } from './stentSchema.js';
 import { noStentValue, stentValue } from './stentValue.js';
 
@@ -36,13 +37,17 @@ export function measureStents(
 /** Fits one stent on both stacks, for the note and for a plan alike. */
 export function fitOf(
   stent: Omit<PlanStent, 'id'>,
-  { soft, sharp, storedOf, noise, notOnSharp }: RegionGround,
+  { soft, sharp, storedOf, noise, notOnSharp, cuts }: RegionGround,
 ): StentValue {
   if (sharp === undefined) return noStentValue(ONE_STACK);
   if (notOnSharp !== undefined) return noStentValue(notOnSharp);
   const texture = { soft: textureOf(noise.soft), sharp: textureOf(noise.sharp) };
-  const fit = fitStent(stent, soft, sharp, storedOf, texture);
-  return stentValue(fit, { soft, sharp, storedOf });
+  const stacks = { soft, sharp, storedOf };
+  if (stent.plane === undefined)
+    return stentValue(fitStent(stent, soft, sharp, storedOf, texture), stacks);
+  const plane = cuts.gridOf(stent.plane);
+  if (!plane.ok) return noStentValue(plane.refusal);
+  return stentOnCutValue(stent, plane.value, stacks, texture).value;
 }
 
 function textureOf(noise: NoiseOfStack): KernelTexture | null {

@@ -1,4 +1,5 @@
 export * from './asSlice.js';
+export { cutApodisation, type SampledStack } from './cutApodisation.js';
 export {
   type CutOptions,
   cutStack,
@@ -6,6 +7,8 @@ export {
   slicesOfCut,
   THICKEST_SLAB_MM,
 } from './cutStack.js';
+export * from './fitStentOnCut.js';
+export { keysResponse } from './keysResponse.js';
 export * from './measureOnCut.js';
 export * from './obliquePlane.js';
 export * from './resampling.js';

@@ -4,6 +4,7 @@ import {
   type Flag,
   measureEdgeLine,
   measureRegion,
+  type NoiseOfStack,
   type RegionValue,
   type Shape,
 } from '../region/index.js';
@@ -31,9 +32,13 @@ export function measureRegionOnCut(shape: Shape, cut: CutSlice): RegionValue {
   return ofCut({ ...value, flags }, cut, value.meanHu !== null);
 }
 
-/** Measures a line across a stent or a lumen on an oblique cut as on a slice. */
-export function measureProfileOnCut(line: ProfileLine, cut: CutSlice): ProfileValue {
-  const value = measureProfile(line, cut.stack, cut.storedOf);
+/** Measures a line across a stent or a lumen on an oblique cut as on a slice. @param noise that of the slices: it is no less */
+export function measureProfileOnCut(
+  line: ProfileLine,
+  cut: CutSlice,
+  noise?: NoiseOfStack,
+): ProfileValue {
+  const value = measureProfile(line, cut.stack, cut.storedOf, noise);
   return ofCut(value, cut, value.samples !== null);
 }
 

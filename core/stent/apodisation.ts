@@ -12,6 +12,11 @@ export interface Apodised {
   readonly amplitude: Float64Array;
   /** What W is wrong by where its end is wrong by one standard error. */
   readonly endError: Float64Array;
+  /**
+   * What goes twice round the circle, of images that the kernel blurs more in one direction than in the other: amplitudes of
+   * cos 2φ and sin 2φ, φ from the u axis to the v axis. Absent where the kernel is the same in all directions.
+   */
+  readonly twofold?: { readonly cos: Float64Array; readonly sin: Float64Array };
 }
 
 /** All kernels of a fit, with how well their noise tells them. */

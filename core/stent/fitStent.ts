@@ -5,7 +5,7 @@ import { FLAGS } from '../region/index.js';
 import type { Refusal } from '../result.js';
 import { isUnscaled, type Stack } from '../stack/index.js';
 import type { Uncertainty } from './annuliCovariance.js';
-import { apodisationOf } from './apodisation.js';
+import { type Apodisation, apodisationOf } from './apodisation.js';
 import { centroidAxis } from './centroid.js';
 import { kernelResults } from './kernelResults.js';
 import { leaningApodisation } from './leaningApodisation.js';
@@ -39,6 +39,9 @@ const STRUT_MM = 0.1;
 const REFITS = 12;
 /** The local noise is taken into the weights within these factors of the variance. */
 const NOISE_FACTOR = [0.5, 4] as const;
+/** Blur that scanner and patient share as a rule, and the range in which a first fit's is believed, mm. */
+const USUAL_BLUR_MM = 0.25;
+const BLUR_MM = [0.1, 0.4] as const;
 /** Planes of two kernels may lean against each other by this. */
 const PARALLEL = 0.9999;
 
@@ -70,11 +73,31 @@ export function fitStent(
   );
 }
 
-/** The same for one kernel alone or for two, the softer first. */
+/** What kernels do on images that are no slices of theirs. */
+export interface SeenApodisation {
+  readonly apodisation: Apodisation;
+  /** SD of the noise there over that of the slices on which the textures were measured, for each kernel. */
+  readonly noiseParts: readonly number[];
+}
+
+/** Turns the kernels' apodisation, told by the slices, into that of other images, for a shared blur that is expected. */
+export type SeenBy = (apodisation: Apodisation, blurSigmaMm: number) => SeenApodisation;
+
+const AS_SLICES: SeenBy = (apodisation) => ({
+  apodisation,
+  noiseParts: apodisation.kernels.map(() => 1),
+});
+
+/**
+ * The same for one kernel alone or for two, the softer first.
+ *
+ * @param seenBy for images that are no slices; their stacks are given, with the textures of the slices
+ */
 export function fitStentOn(
   { centreMm, nominalMm }: StentPlace,
   kernels: readonly StentKernel[],
   storedOf: StoredOfStack,
+  seenBy: SeenBy = AS_SLICES,
 ): FittedStent {
   const [first] = kernels;
   if (first === undefined) throw new RangeError('no kernels to fit');
@@ -89,8 +112,9 @@ export function fitStentOn(
     )
   )
     return none('not-parallel', 'The slices of the two stacks are not parallel: no joint fit.');
-  const apodisation = apodisationOf(kernels.map(({ texture }) => texture));
-  if (!apodisation.ok) return { reason: apodisation.refusal };
+  const told = apodisationOf(kernels.map(({ texture }) => texture));
+  if (!told.ok) return { reason: told.refusal };
+  const expected = seenBy(told.value, USUAL_BLUR_MM);
   const windows: KernelWindow[] = [];
   for (const { stack } of kernels) {
     const window = readWindow(stack, frame, storedOf);
@@ -104,7 +128,11 @@ export function fitStentOn(
       'Nothing here is brighter than its surroundings: put the point into the lumen.',
     );
   const startRadiusMm = nominalMm === undefined ? undefined : (nominalMm + STRUT_MM) / 2;
-  const plain: Uncertainty = { apodisation: apodisation.value, noiseFactor: 1, independentPart: 1 };
+  const plain: Uncertainty = {
+    apodisation: expected.apodisation,
+    noiseFactor: 1,
+    independentPart: 1,
+  };
   const rough = searchStent(windows, start, plain, startRadiusMm);
   if (rough === undefined)
     return none(
@@ -114,7 +142,7 @@ export function fitStentOn(
   const noises = kernels.map((_, kernel) => {
     const profile = modelProfiles(
       rough.round.parameters,
-      leaningApodisation(apodisation.value, rough.axis),
+      leaningApodisation(expected.apodisation, rough.axis),
     )[kernel];
     return profile === undefined
       ? undefined
@@ -129,12 +157,13 @@ export function fitStentOn(
   const [noise] = noises;
   if (noise === undefined || sharpest === undefined)
     return none('no-surroundings', 'Too few pixels around the point: the noise here is not told.');
+  // The blur is known better now than when it was only expected.
+  const seen = seenBy(told.value, clamp(rough.round.parameters.blurSigmaMm, BLUR_MM));
+  const sdOf = (kernel: number): number =>
+    (kernels.at(kernel) as StentKernel).texture.noiseSdHu * (seen.noiseParts.at(kernel) ?? 1);
   const weighed: Uncertainty = {
-    apodisation: apodisation.value,
-    noiseFactor: clamp(
-      (sharpest.sdHu / (kernels.at(-1) as StentKernel).texture.noiseSdHu) ** 2,
-      NOISE_FACTOR,
-    ),
+    apodisation: seen.apodisation,
+    noiseFactor: clamp((sharpest.sdHu / sdOf(-1)) ** 2, NOISE_FACTOR),
     independentPart: independentPart(
       Math.min(...windows.map(({ slices }) => slices.length)),
       sharpest.neighbours,
@@ -148,7 +177,7 @@ export function fitStentOn(
     );
   const leaning: Uncertainty = {
     ...weighed,
-    apodisation: leaningApodisation(apodisation.value, found.axis),
+    apodisation: leaningApodisation(seen.apodisation, found.axis),
   };
   const profiles = modelProfiles(found.round.parameters, leaning.apodisation);
   const sectors = sectorResiduals(
@@ -160,7 +189,7 @@ export function fitStentOn(
   const reason = refusalOf({
     found,
     sectors,
-    softSdHu: first.texture.noiseSdHu,
+    softSdHu: sdOf(0),
     softLocalSdHu: noise.sdHu,
   });
   if (reason !== undefined) return { reason };

@@ -1,6 +1,7 @@
 export * from './apodisation.js';
 export * from './findStentCentre.js';
 export * from './fitStent.js';
+export { FREQUENCIES, STEP_PER_MM } from './frequencies.js';
 export * from './measureProfile.js';
 export * from './profileSamples.js';
 export * from './profileShape.js';

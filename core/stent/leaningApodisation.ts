@@ -22,7 +22,8 @@ export function leaningApodisation(apodisation: Apodisation, { drift }: VesselAx
     });
   return {
     ...apodisation,
-    kernels: apodisation.kernels.map(({ response, amplitude, endError }) => ({
+    kernels: apodisation.kernels.map(({ response, amplitude, endError, twofold }) => ({
+      ...(twofold === undefined ? {} : { twofold }),
       response: scaled(response),
       endError: scaled(endError),
       amplitude: scaled(amplitude),

@@ -1,5 +1,5 @@
 import { solveSymmetric } from './linear.js';
-import { atRadius, type ModelProfile } from './modelProfile.js';
+import { atPlace, type ModelProfile } from './modelProfile.js';
 import { axisAt, distanceFrom, type VesselAxis } from './vesselAxis.js';
 import type { KernelWindow } from './windows.js';
 
@@ -32,10 +32,11 @@ export function localNoise(
     const values = new Float64Array(hu.length).fill(Number.NaN);
     const used: number[] = [];
     for (let index = 0; index < hu.length; index += 1) {
-      const rho = distance((uMm[index] as number) - u, (vMm[index] as number) - v);
+      const [du, dv] = [(uMm[index] as number) - u, (vMm[index] as number) - v];
+      const rho = distance(du, dv);
       if (rho < radiusMm + FROM_MM || rho > TO_MM) continue;
       used.push(index);
-      values[index] = (hu[index] as number) - atRadius(profile.hu, rho);
+      values[index] = (hu[index] as number) - atPlace(profile, rho, du, dv);
     }
     return withoutSurface(values, used, uMm, vMm);
   });

@@ -1,6 +1,13 @@
 import type { Vec3 } from '../geometry/index.js';
-import { FLAGS, type Flag, findLineSlice, type StoredOf } from '../region/index.js';
+import {
+  FLAGS,
+  type Flag,
+  findLineSlice,
+  type NoiseOfStack,
+  type StoredOf,
+} from '../region/index.js';
 import { isUnscaled, type Stack, type StackSlice } from '../stack/index.js';
+import { profileNoiseHu } from './profileNoise.js';
 import { type ProfileLine, type ProfileSamples, profileSamples } from './profileSamples.js';
 import { type ProfileShape, profileShape, type StrutPeak } from './profileShape.js';
 
@@ -40,9 +47,14 @@ const NO_NOMINAL: Flag = {
 
 /**
  * Measures a line across a stent or a lumen on one stack, on the nearest slice. The definitions are those of
- * {@link profileShape}. With a nominal diameter, a stent is expected: a profile that shows one hump only has no width.
+ * {@link profileShape}; struts must stand out from the kernel's noise where it is known. With a nominal diameter, a stent is expected: a profile that shows one hump only has no width.
  */
-export function measureProfile(line: ProfileLine, stack: Stack, storedOf: StoredOf): ProfileValue {
+export function measureProfile(
+  line: ProfileLine,
+  stack: Stack,
+  storedOf: StoredOf,
+  noise: NoiseOfStack = FLAGS.noStandardError,
+): ProfileValue {
   if (isUnscaled(stack)) return notProfiled(FLAGS.noPixelSpacing);
   const found = findLineSlice(line, stack);
   if (!found.ok) return notProfiled(found.refusal);
@@ -60,7 +72,8 @@ export function measureProfile(line: ProfileLine, stack: Stack, storedOf: Stored
   if (stack.unit !== 'HU') return { ...notProfiled(FLAGS.notHu(stack.unit)), ...placed };
   const samples = profileSamples(line, slice, stored);
   if (!samples.ok) return { ...notProfiled(samples.refusal), ...placed };
-  const shape = profileShape(samples.value);
+  const noiseHu = 'code' in noise ? 0 : profileNoiseHu(noise, line.bandMm);
+  const shape = profileShape(samples.value, noiseHu);
   if (!shape.ok) return { ...notProfiled(shape.refusal), ...placed, samples: samples.value };
   const { nominalMm } = line;
   if (nominalMm !== undefined && shape.value.kind === 'lumen')

@@ -25,8 +25,10 @@ export interface ProfileShape {
   readonly riseMm: number | null;
 }
 
-/** A peak stands out from both sides by this part of the whole range of the profile, or it is none. */
-const LEAST_PROMINENCE = 0.08;
+/** A peak stands out from both sides by this part of the whole range of the profile, or it is none: interpolation rings by less. */
+const LEAST_PROMINENCE = 0.1;
+/** And by this many SD of a sample's noise: the highest of many samples stands out by three or four. */
+const LEAST_NOISE = 5;
 /** Two struts are no nearer than this, mm. */
 const LEAST_APART_MM = 1;
 /** Range below which a profile is flat, HU. */
@@ -39,20 +41,23 @@ const LEAST_RANGE_HU = 50;
  * the middle third between the peaks), that of an outer flank midway between the peak and the lowest value beyond
  * it. The visible width is the distance of the inner half-height points (artificial lumen narrowing as in common practice, no
  * source). Without: half height lies midway between the highest value and the lower of the two ends' levels' mean.
+ *
+ * @param noiseHu SD of a sample by noise ({@link profileNoiseHu}); 0 where it is not known
  */
-export function profileShape(samples: ProfileSamples): Result<ProfileShape> {
+export function profileShape(samples: ProfileSamples, noiseHu = 0): Result<ProfileShape> {
   const { atMm, hu } = samples;
   const range = Math.max(...hu) - Math.min(...hu);
   if (hu.length < 9 || !(range >= LEAST_RANGE_HU))
     return refuse('flat-profile', 'The profile shows no vessel: draw the line across one.');
-  const peaks = strutPeaks(samples, range);
+  const least = Math.max(LEAST_PROMINENCE * range, LEAST_NOISE * noiseHu);
+  const peaks = strutPeaks(samples, least);
   return peaks === undefined ? lumenShape(atMm, hu) : stentShape(atMm, hu, peaks);
 }
 
 type Peaks = readonly [number, number];
 
 /** Indices of the two peaks that stand out most; undefined where there is but one. */
-function strutPeaks({ atMm, hu }: ProfileSamples, range: number): Peaks | undefined {
+function strutPeaks({ atMm, hu }: ProfileSamples, least: number): Peaks | undefined {
   const all = hu
     .flatMap((value, index) =>
       index > 0 &&
@@ -62,7 +67,7 @@ function strutPeaks({ atMm, hu }: ProfileSamples, range: number): Peaks | undefi
         ? [{ index, prominence: prominence(hu, index) }]
         : [],
     )
-    .filter((peak) => peak.prominence >= LEAST_PROMINENCE * range)
+    .filter((peak) => peak.prominence >= least)
     .sort((a, b) => b.prominence - a.prominence);
   const [first] = all;
   const second = all.find(
@@ -81,7 +86,8 @@ function prominence(hu: readonly number[], peak: number): number {
     let lowest = height;
     for (let index = peak + step; index >= 0 && index < hu.length; index += step) {
       const value = hu[index] as number;
-      if (value > height) break;
+      // Of two peaks of one height the first one is the higher ground.
+      if (value > height || (value === height && step < 0)) break;
       lowest = Math.min(lowest, value);
     }
     return lowest;

@@ -2,7 +2,7 @@ import type { StoredValues } from '../dicom/index.js';
 import { dot, patientToPixel, pixelToPatient, subtract } from '../geometry/index.js';
 import { rescaled } from '../intensity/index.js';
 import type { StackSlice } from '../stack/index.js';
-import { atRadius, type ModelProfile } from './modelProfile.js';
+import { atPlace, type ModelProfile } from './modelProfile.js';
 import type { ResidualMap } from './stentFit.js';
 import { axisAt, distanceFrom, type VesselAxis } from './vesselAxis.js';
 import { type Frame, inPatient } from './windows.js';
@@ -38,9 +38,10 @@ export function residualMap(
     for (let x = 0; x < columns; x += 1) {
       const [column, row] = [left + x, top + y];
       const away = subtract(pixelToPatient(grid, { column, row }), frame.originMm);
-      const rho = distance(dot(away, frame.u) - u, dot(away, frame.v) - v);
+      const [du, dv] = [dot(away, frame.u) - u, dot(away, frame.v) - v];
+      const rho = distance(du, dv);
       const value = rescaled(stored[row * grid.columns + column] as number, pixels);
-      hu[y * columns + x] = value - atRadius(profile.hu, rho);
+      hu[y * columns + x] = value - atPlace(profile, rho, du, dv);
     }
   return {
     sliceIndex,

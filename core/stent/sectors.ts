@@ -1,4 +1,4 @@
-import { atRadius, type ModelProfile } from './modelProfile.js';
+import { atPlace, type ModelProfile } from './modelProfile.js';
 import { axisAt, distanceFrom, type VesselAxis } from './vesselAxis.js';
 import type { KernelWindow } from './windows.js';
 
@@ -36,7 +36,7 @@ export function sectorResiduals(
       const turn = Math.atan2(dv, du) / (2 * Math.PI);
       const sector = Math.floor((turn + 1) * SECTORS) % SECTORS;
       const place = ring * SECTORS + sector;
-      sums[place] = (sums[place] as number) + (hu[index] as number) - atRadius(profile.hu, rho);
+      sums[place] = (sums[place] as number) + (hu[index] as number) - atPlace(profile, rho, du, dv);
       counts[place] = (counts[place] as number) + 1;
     }
   }

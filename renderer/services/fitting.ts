@@ -33,7 +33,7 @@ export interface Fitting {
 }
 
 /** Slices around a place that a fit may look at: on slices a few, on an oblique plane as far as its square reaches, mm. */
-const REACH_MM = { slices: 2, plane: 9 } as const;
+const REACH_MM = { slices: 2, plane: 10 } as const;
 
 interface Asked {
   readonly volumes: PairVolumes;
@@ -123,7 +123,7 @@ export function createFitting({ store, volumes, cuts, now, signal }: FittingOpti
     ask(made).then(
       (answer) => {
         if (answer === undefined || asked.get(key) !== mine || volumes() !== both) return;
-        mine.answer = withWholeIndices(answer, made);
+        mine.answer = made.plane === undefined ? withWholeIndices(answer, made) : answer;
         put(key, mine.answer);
       },
       (error: unknown) => {

@@ -23,6 +23,7 @@ import {
   FLAGS,
   type Flag,
   measureEdgeLine,
+  type NoiseOfStack,
   notMeasured,
   type Shape,
 } from '../../core/region/index.js';
@@ -52,7 +53,7 @@ export interface Measuring {
 /** How one kind of thing is measured, and what it has where it can't be. */
 interface Ways<T, V> {
   readonly onSlices: (of: T, volumes: PairVolumes) => LineValues<V>;
-  readonly onCut: (of: T, cut: CutSlice) => V;
+  readonly onCut: (of: T, cut: CutSlice, noise: NoiseOfStack) => V;
   readonly not: (of: T, why: Flag) => V;
 }
 
@@ -93,7 +94,11 @@ export function createMeasuring(
     // Before all slices have come a value would rest on a part of the plane.
     if (!cut.value.isWhole) return { soft: null, sharp: null };
     const { soft, sharp } = cut.value;
-    return { soft: onCut(of, soft), sharp: sharp === undefined ? null : onCut(of, sharp) };
+    const noise = (kernel: Kernel): NoiseOfStack => noiseOfKernel(store.now(), kernel);
+    return {
+      soft: onCut(of, soft, noise('soft')),
+      sharp: sharp === undefined ? null : onCut(of, sharp, noise('sharp')),
+    };
   };
 
   const shapes: Ways<Shape, NonNullable<RegionValues['soft']>> = {
@@ -102,7 +107,10 @@ export function createMeasuring(
     not: notMeasured,
   };
   const edges: Ways<BandLine, NonNullable<EdgeValues['soft']>> = {
-    onSlices: createMeasureLine(measureEdgeLine, isGap),
+    onSlices: createMeasureLine(
+      (line, stack, storedOf) => measureEdgeLine(line, stack, storedOf),
+      isGap,
+    ),
     onCut: measureEdgeLineOnCut,
     not: (_line, why) => edgeNotMeasured(why),
   };
@@ -111,6 +119,7 @@ export function createMeasuring(
       measureProfile,
       isGap,
       (a: PlacedProfile, b) => a.bandMm === b.bandMm && a.nominalMm === b.nominalMm,
+      noiseOf,
     ),
     onCut: measureProfileOnCut,
     not: (_line, why) => notProfiled(why),

@@ -13,6 +13,7 @@ import { goToRegion } from '../state/changes/goToRegion.js';
 import { selectRegion } from '../state/changes/regions.js';
 import { moveStent } from '../state/changes/stents.js';
 import { selectedProfile } from '../state/lineSelectors.js';
+import { noiseOfKernel } from '../state/noiseOfKernel.js';
 import { isOnSurface, takesMarks } from '../state/regionSelectors.js';
 import { stackOf } from '../state/selectors.js';
 import { selectedStent } from '../state/stentSelectors.js';
@@ -74,16 +75,18 @@ function ProfileView({ profile }: { readonly profile: NoteProfile }) {
   const { store, bench } = useEngine();
   const loading = useSelected((state) => state.loading);
   const cut = useSelected((state) => state.cut);
+  const assessment = useSelected((state) => state.assessment);
   const across = useMemo(() => {
     const on = (kernel: Kernel): ProfileValue | undefined => {
       const state = store.now();
       const stack = stackOf(state, kernel);
       if (stack === undefined || !takesMarks(state, kernel) || !isOnSurface(state, profile))
         return undefined;
-      return measureProfile(profile, stack, (index) => bench.shown(kernel, index));
+      const noise = noiseOfKernel(state, kernel);
+      return measureProfile(profile, stack, (index) => bench.shown(kernel, index), noise);
     };
     return acrossProfile(profile, { soft: on('soft'), sharp: on('sharp') });
-  }, [profile, loading, cut]);
+  }, [profile, loading, cut, assessment]);
   const flags = [...(profile.soft?.flags ?? []), ...(profile.sharp?.flags ?? [])];
   return (
     <AcrossPlot

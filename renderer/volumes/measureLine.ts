@@ -1,4 +1,10 @@
-import { type BandLine, findLineSlice, type StoredOf } from '../../core/region/index.js';
+import {
+  type BandLine,
+  FLAGS,
+  findLineSlice,
+  type NoiseOfStack,
+  type StoredOf,
+} from '../../core/region/index.js';
 import type { Stack } from '../../core/stack/index.js';
 import type { PairVolumes } from './loadPair.js';
 import type { StoredSlice, Volume } from './volume.js';
@@ -8,6 +14,7 @@ export type MeasureOnStack<L extends BandLine, V> = (
   line: L,
   stack: Stack,
   storedOf: StoredOf,
+  noise: NoiseOfStack,
 ) => V;
 
 /** What a line measures on both stacks; null on a stack whose slice is still to come. */
@@ -20,6 +27,7 @@ interface Remembered<L, V> {
   readonly line: L;
   readonly volume: Volume;
   readonly stored: StoredSlice | undefined;
+  readonly noise: NoiseOfStack;
   readonly value: V;
 }
 
@@ -28,11 +36,13 @@ interface Remembered<L, V> {
  * dropped since. A line's start is never changed in place, so that it is the key.
  *
  * @param isSame whether two lines of one start and end measure the same
+ * @param noiseOf the noise of a stack, the same object as long as nothing new is known
  */
 export function createMeasureLine<L extends BandLine, V>(
   measureOn: MeasureOnStack<L, V>,
   isGap: (volume: Volume, index: number) => boolean,
   isSame: (a: L, b: L) => boolean = (a, b) => a.bandMm === b.bandMm,
+  noiseOf: (volume: Volume) => NoiseOfStack = () => FLAGS.noStandardError,
 ): (line: L, volumes: PairVolumes) => LineValues<V> {
   const memory = new WeakMap<BandLine['fromMm'], readonly Remembered<L, V>[]>();
 
@@ -49,12 +59,13 @@ export function createMeasureLine<L extends BandLine, V>(
       if (before === undefined) volume.ask(index);
       return before?.value ?? null;
     }
-    const same = here.find((entry) => entry.stored === stored);
+    const noise = noiseOf(volume);
+    const same = here.find((entry) => entry.stored === stored && entry.noise === noise);
     if (same !== undefined) return same.value;
-    const value = measureOn(line, volume.stack, (slice) => volume.slice(slice));
+    const value = measureOn(line, volume.stack, (slice) => volume.slice(slice), noise);
     memory.set(line.fromMm, [
       ...known.filter((entry) => entry.volume !== volume),
-      { line, volume, stored, value },
+      { line, volume, stored, noise, value },
     ]);
     return value;
   };

@@ -5,12 +5,16 @@ import { firstImage } from './rows/firstImage.js';
 import { folderIndex } from './rows/folderIndex.js';
 import { linkedScroll } from './rows/linkedScroll.js';
 import { memory } from './rows/memory.js';
+import { obliqueCut } from './rows/obliqueCut.js';
 import { regionStatistics } from './rows/regionStatistics.js';
+import { stentFit } from './rows/stentFit.js';
 import { windowMapping } from './rows/windowMapping.js';
 
 const BENCHMARKS: readonly (() => Promise<Row | readonly Row[]>)[] = [
   windowMapping,
   regionStatistics,
+  obliqueCut,
+  stentFit,
   backProjection,
   folderIndex,
   firstImage,

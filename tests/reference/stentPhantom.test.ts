@@ -207,3 +207,41 @@ function checkResiduals({ kernels }: StentFit): void {
     expect(sd).toBeLessThan(1.5 * noiseSdHu);
   }
 }
+
+describe('profiles on noisy images', () => {
+  it('take plain lumens for lumens on both kernels, and stents for stents on the sharp one', async () => {
+    const stents = drawStents(seededUniform(31, 1), 10).map(
+      (stent, index): TrueStent => ({
+        ...stent,
+        lumenHu: 340,
+        massHuMm: index < 4 ? 0 : 500,
+      }),
+    );
+    const pair = await stentPair((zMm) => stentSlice(stents, zMm, 380), {
+      seed: 77,
+      photonsPerRay: 6e3,
+      kernels: STENT_KERNELS[0] as (typeof STENT_KERNELS)[number],
+    });
+    const kindsOf = (side: 'soft' | 'sharp', some: readonly TrueStent[]) =>
+      some.flatMap(({ centreMm: [x, y] }) =>
+        Array.from({ length: 6 }, (_, turn) => {
+          const [c, s] = [Math.cos((turn * Math.PI) / 6), Math.sin((turn * Math.PI) / 6)];
+          const line = {
+            fromMm: [x - 4 * c, y - 4 * s, 0] as const,
+            toMm: [x + 4 * c, y + 4 * s, 0] as const,
+            bandMm: 0.8,
+          };
+          const storedOf = (slice: number) => pair[side].stored[slice];
+          return measureProfile(line, pair[side].stack, storedOf, pair.texture[side] ?? undefined)
+            .kind;
+        }),
+      );
+    const plain = stents.slice(0, 4);
+    const lumens = [...kindsOf('soft', plain), ...kindsOf('sharp', plain)];
+    expect(lumens).toHaveLength(48);
+    expect(lumens.filter((kind) => kind === 'lumen').length).toBeGreaterThanOrEqual(46);
+    const struts = kindsOf('sharp', stents.slice(4));
+    expect(struts).toHaveLength(18);
+    expect(struts.filter((kind) => kind === 'stent').length).toBeGreaterThanOrEqual(17);
+  }, 60_000);
+});

@@ -104,3 +104,32 @@ describe('cubic interpolation', () => {
     }
   });
 });
+
+describe('a peak that is no strut', () => {
+  it('of two ripples of one height on a plain lumen none is a strut', () => {
+    // A plateau with overshoots of 6 HU at both edges, as interpolation leaves them.
+    const found = profileShape(
+      sampled(
+        (x) =>
+          400 * (edge(x - 2, 0.3) - edge(x - 6, 0.3)) +
+          6 * (gauss(x - 2.8, 0.1) + gauss(x - 5.2, 0.1)),
+      ),
+    );
+    if (!found.ok) throw new Error(found.refusal.text);
+    expect(found.value.kind).toBe('lumen');
+    expect(found.value.visibleWidthMm).toBeCloseTo(4, 1);
+  });
+
+  it('must stand out from the noise: peaks of 100 HU are struts at an SD of 15 HU, and none at 25', () => {
+    const profile = sampled(
+      (x) =>
+        400 * (edge(x - 2, 0.2) - edge(x - 6, 0.2)) +
+        100 * (gauss(x - 2.8, 0.2) + gauss(x - 5.2, 0.2)),
+    );
+    const kinds = [15, 25].map((noiseHu) => {
+      const found = profileShape(profile, noiseHu);
+      return found.ok ? found.value.kind : found.refusal.code;
+    });
+    expect(kinds).toEqual(['stent', 'lumen']);
+  });
+});
