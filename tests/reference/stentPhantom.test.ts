@@ -11,7 +11,8 @@ import {
   measureProfile,
   type StentFit,
 } from '../../core/stent/index.js';
-import { fitOn, gridCases, STENT_KERNELS, summaryOf } from '../bench/evidence/stentGrid.js';
+import { summaryOf } from '../bench/evidence/stentAccuracy.js';
+import { fitOn, gridCases, STENT_KERNELS } from '../bench/evidence/stentGrid.js';
 import { type StentPair, stentPair } from '../bench/evidence/stentPhantom.js';
 import {
   drawStents,

@@ -1,8 +1,9 @@
-import { type Kernel, seededUniform } from '../../../core/phantom/index.js';
+import { type Kernel, seededUniform, type UniformSource } from '../../../core/phantom/index.js';
 import { type FittedStent, fitStentOn, type StentKernel } from '../../../core/stent/index.js';
 import { noStentScene } from './noStentScene.js';
+import { type PlainReading, plainReading } from './plainReading.js';
 import { type StentPair, stentPair } from './stentPhantom.js';
-import { drawStents, stentSlice, strutDiameterMm, type TrueStent } from './stentScene.js';
+import { drawStents, stentSlice, type TrueStent } from './stentScene.js';
 
 /** Which images a fit was given. */
 export type FittedOn = 'both' | 'soft' | 'sharp';
@@ -12,6 +13,8 @@ export const FITTED_ON: readonly FittedOn[] = ['both', 'soft', 'sharp'];
 export interface GridCase {
   readonly truth: TrueStent;
   readonly fits: Readonly<Partial<Record<FittedOn, FittedStent>>>;
+  /** What is read without a fit. */
+  readonly plain: Readonly<Partial<Record<'soft' | 'sharp', PlainReading>>>;
   /** Processor time of the fit on both kernels, ms. */
   readonly timeMs: number;
 }
@@ -32,21 +35,42 @@ export const STENT_KERNELS: readonly { readonly soft: Kernel; readonly sharp: Ke
   },
 ];
 
+/** What the stents of a grid are like. */
+export interface GridScene {
+  readonly areWires?: boolean;
+  /** Least and most angle between axis and the slices' normal. */
+  readonly tiltDeg?: readonly [number, number];
+}
+
 /** Seven stents of one acquisition. Starts lie up to half the inner radius off the axis. */
 export async function gridCases(
   batch: number,
   index: number,
   fittedOn: readonly FittedOn[] = FITTED_ON,
-  areWires = false,
+  { areWires = false, tiltDeg = [0, 20] }: GridScene = {},
 ): Promise<readonly GridCase[]> {
   const uniform = seededUniform(batch, index, 1);
-  const stents = drawStents(uniform, 20, areWires);
+  const [least, most] = tiltDeg;
+  const stents = drawStents(uniform, most - least, areWires).map((stent) => ({
+    ...stent,
+    tiltDeg: stent.tiltDeg + least,
+  }));
   const kernels = STENT_KERNELS[index % STENT_KERNELS.length] as (typeof STENT_KERNELS)[number];
   const pair = await stentPair((zMm) => stentSlice(stents, zMm, 380), {
     seed: seededInteger(batch, index),
     photonsPerRay: 5e3 * 5 ** uniform(),
     kernels,
   });
+  return casesOf(pair, stents, uniform, fittedOn);
+}
+
+/** Fits and reads all stents of a pair. */
+export function casesOf(
+  pair: StentPair,
+  stents: readonly TrueStent[],
+  uniform: UniformSource,
+  fittedOn: readonly FittedOn[],
+): readonly GridCase[] {
   return stents.map((truth) => {
     const angle = 2 * Math.PI * uniform();
     const away = (truth.innerDiameterMm / 4) * Math.sqrt(uniform());
@@ -65,7 +89,11 @@ export async function gridCases(
         return [side, fit];
       }),
     );
-    return { truth, fits, timeMs };
+    const plain = {
+      soft: plainReading(pair, 'soft', truth),
+      sharp: plainReading(pair, 'sharp', truth),
+    };
+    return { truth, fits, plain, timeMs };
   });
 }
 
@@ -105,69 +133,6 @@ export function fitOn(
   return fitStentOn({ centreMm }, kernels, (stack, slice) =>
     (stack === soft.stack ? soft : sharp).stored.at(slice),
   );
-}
-
-/** What fits of one kind came to. */
-export interface GridSummary {
-  readonly fits: number;
-  readonly refused: Readonly<Record<string, number>>;
-  readonly diameterMm: Accuracy;
-  readonly lumenHu: Accuracy;
-}
-
-/** Absolute errors, and the share of truths within 1.96 standard errors of the fit and of the refits. */
-export interface Accuracy {
-  readonly median: number;
-  readonly most95: number;
-  readonly covered: number;
-  readonly coveredByRefits: number;
-}
-
-export function summaryOf(cases: readonly GridCase[], side: FittedOn): GridSummary {
-  const refused: Record<string, number> = {};
-  const diameters: Deviation[] = [];
-  const lumens: Deviation[] = [];
-  for (const { truth, fits } of cases) {
-    const fit = fits[side];
-    if (fit === undefined) continue;
-    if (fit.reason !== undefined) {
-      refused[fit.reason.code] = (refused[fit.reason.code] ?? 0) + 1;
-      continue;
-    }
-    const { strutDiameterMm: d, lumenHu: l, refitted } = fit;
-    diameters.push({
-      off: d.value - strutDiameterMm(truth),
-      se: d.se,
-      refitted: refitted?.strutDiameterMm ?? 0,
-    });
-    lumens.push({ off: l.value - truth.lumenHu, se: l.se, refitted: refitted?.lumenHu ?? 0 });
-  }
-  return {
-    fits: diameters.length,
-    refused,
-    diameterMm: accuracyOf(diameters),
-    lumenHu: accuracyOf(lumens),
-  };
-}
-
-interface Deviation {
-  readonly off: number;
-  readonly se: number;
-  readonly refitted: number;
-}
-
-function accuracyOf(all: readonly Deviation[]): Accuracy {
-  const sizes = all.map(({ off }) => Math.abs(off)).sort((a, b) => a - b);
-  const at = (part: number): number =>
-    sizes[Math.min(sizes.length - 1, Math.floor(sizes.length * part))] ?? Number.NaN;
-  const within = (error: (one: Deviation) => number): number =>
-    all.filter((one) => Math.abs(one.off) <= 1.96 * error(one)).length / Math.max(1, all.length);
-  return {
-    median: at(0.5),
-    most95: at(0.95),
-    covered: within(({ se }) => se),
-    coveredByRefits: within(({ refitted }) => refitted),
-  };
 }
 
 function seededInteger(batch: number, index: number): number {
