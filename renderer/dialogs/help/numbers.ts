@@ -123,4 +123,33 @@ export const NUMBERS: readonly NumberHelp[] = [
     formula: 'FWHM = rise / 2.5631 × 2.3548',
     source: 'Quantiles of the normal distribution; least squares by Levenberg and Marquardt.',
   },
+  {
+    title: 'Profile',
+    text: [
+      'A line across a vessel, averaged over its band, in steps of a quarter of a pixel by cubic interpolation. Two peaks that stand out from noise and from the rest are struts: the visible width lies between the inner half-height points, midway between each peak and the median of the middle third between the peaks. Without struts it lies between the half-height points of the whole hump. Blurred struts move their peaks inwards and their half-height points into the lumen: a visible width is no diameter.',
+      'Artificial lumen narrowing needs the nominal inner diameter, which you type.',
+    ],
+    formula: 'narrowing = 1 − visible width / nominal inner diameter',
+    source: 'Half height and artificial narrowing: common practice, no source.',
+  },
+  {
+    title: 'Fitted stent',
+    text: [
+      'A lumen in a thin ring of struts in a wall in fat, blurred by one Gaussian and by each kernel, is fitted to both kernels at once, over the slices next to the click. What a kernel does to detail is read off its own noise: after filtered back projection the noise power is the ramp times the square of the kernel’s response. Strut diameter is that of the circle in the middle of the struts: the inner diameter and one strut thickness.',
+      'The standard errors come from the fit, with noise that both kernels share and with what is not known of the kernels; beside them stand those of refits to simulated noise. No value is given, and the reason told, where the noise does not look like that of filtered back projection, where no ring stands out, where calcium or a second stent lies near, where the vessel bends or runs more than 25° oblique to the slices, and where the fit leaves structure over. Then an oblique cut may help.',
+      'It was tried on synthetic phantoms only: no motion, no beam hardening, even lumens, round stents. Look at what the fit leaves over on both plates (letter D) before you quote it.',
+    ],
+    formula: 'NPS(f) = c² · f · W(f)²',
+    source:
+      'Riederer, Pelc & Chesler 1978, Phys Med Biol 23:446, doi 10.1088/0031-9155/23/3/008; Kijewski & Judy 1987, Phys Med Biol 32:565, doi 10.1088/0031-9155/32/5/003.',
+  },
+  {
+    title: 'Oblique cut',
+    text: [
+      'A plane at right angles to the line between two points on the vessel’s course, cut from both stacks at the same places in the patient’s space, by trilinear interpolation or cubic convolution, or as the mean of a slab. It is resampled and says so: noise is smoothed by it, so that SD is smaller and SNR seems better than on slices; there is no standard error, and struts close by are not looked for. A fitted stent on a cut knows the kernel, the thickness of the slices and the interpolation as the plane sees them; where the slices smear more than 0.56 mm in the plane it gives no value.',
+      'What is measured on a plane holds it where it is. As long as nothing is, the page keys and the wheel move it along the vessel.',
+    ],
+    source:
+      'Cubic convolution: Keys 1981, IEEE Trans Acoust 29:1153, doi 10.1109/TASSP.1981.1163711.',
+  },
 ];

@@ -4,30 +4,61 @@ import {
   type ImageGrid,
   projectSlice,
   seededUniform,
+  type UniformSource,
 } from '../../../core/phantom/index.js';
 import { type AlgebraicRecipe, algebraicHu } from './algebraic.js';
 import { imageStack, readFrom } from './imageStack.js';
 import { casesOf, type GridCase } from './stentGrid.js';
 import type { StentPair } from './stentPhantom.js';
-import { drawStents, STENT_HEIGHTS_MM, STENT_SCAN, stentSlice } from './stentScene.js';
+import {
+  drawStents,
+  STENT_HEIGHTS_MM,
+  STENT_SCAN,
+  stentSlice,
+  type TrueStent,
+} from './stentScene.js';
 
 /** Holds the whole body: what lies outside of an algebraic image is put into it. */
 const GRID: ImageGrid = { centreMm: [0, 0], fieldOfViewMm: 118.75, matrix: 304 };
 
-/** Smoothed much, and little. */
-const RECIPES: Readonly<Record<'soft' | 'sharp', AlgebraicRecipe>> = {
-  soft: { passes: 2, edgeHu: 60, smoothing: 0.35 },
-  sharp: { passes: 3, edgeHu: 25, smoothing: 0.12 },
-};
+/** Pairs of strengths, from much smoothing to little. */
+const RECIPES: readonly Readonly<Record<'soft' | 'sharp', AlgebraicRecipe>>[] = [
+  {
+    soft: { passes: 3, edgeHu: 90, smoothing: 0.8 },
+    sharp: { passes: 3, edgeHu: 50, smoothing: 0.5 },
+  },
+  {
+    soft: { passes: 3, edgeHu: 60, smoothing: 0.5 },
+    sharp: { passes: 3, edgeHu: 25, smoothing: 0.15 },
+  },
+  {
+    soft: { passes: 2, edgeHu: 40, smoothing: 0.3 },
+    sharp: { passes: 2, edgeHu: 20, smoothing: 0.06 },
+  },
+];
 
 /** Seven stents of one acquisition on two algebraic reconstructions with edge-preserving smoothing. */
 export async function iterativeCases(batch: number, index: number): Promise<readonly GridCase[]> {
+  const { pair, stents, uniform } = await iterativePair(batch, index);
+  return casesOf(pair, stents, uniform, ['both']);
+}
+
+/** The pair of images, with its stents. */
+export async function iterativePair(
+  batch: number,
+  index: number,
+): Promise<{
+  readonly pair: StentPair;
+  readonly stents: readonly TrueStent[];
+  readonly uniform: UniformSource;
+}> {
   const uniform = seededUniform(batch, index, 4);
   const stents = drawStents(uniform, 10);
+  const recipe = RECIPES[index % RECIPES.length] as (typeof RECIPES)[number];
   const slices = STENT_HEIGHTS_MM.map((zMm, slice) => {
     const clean = projectSlice(stentSlice(stents, zMm, 380), STENT_SCAN);
     const noisy = addQuantumNoise(clean, 1.2e4, seededUniform(batch, 50 + index, slice));
-    const on = (side: 'soft' | 'sharp') => algebraicHu(noisy, STENT_SCAN, GRID, RECIPES[side]);
+    const on = (side: 'soft' | 'sharp') => algebraicHu(noisy, STENT_SCAN, GRID, recipe[side]);
     return { zMm, soft: on('soft'), sharp: on('sharp') };
   });
   const stackOf = (side: 'soft' | 'sharp') =>
@@ -44,5 +75,5 @@ export async function iterativeCases(batch: number, index: number): Promise<read
     sharp,
     texture: { soft: textures.first, sharp: textures.second },
   };
-  return casesOf(pair, stents, uniform, ['both']);
+  return { pair, stents, uniform };
 }

@@ -9,7 +9,7 @@ const BATCH = 7;
 const ACQUISITIONS = 24;
 const WIRED_ACQUISITIONS = 6;
 const LEANING_ACQUISITIONS = 6;
-const ITERATIVE_ACQUISITIONS = 2;
+const ITERATIVE_ACQUISITIONS = 3;
 const BARE_ACQUISITIONS = 10;
 
 /** What the fit on both kernels has to keep. */
