@@ -1,47 +1,43 @@
-import { alongNormal, type Vec3 } from '../../core/geometry/index.js';
+import type { Vec3 } from '../../core/geometry/index.js';
 import type { Kernel } from '../../core/note/index.js';
-import { sliceIndexAt } from '../link/slicePosition.js';
-import type { AppState } from '../state/appState.js';
-import { takesMarks } from '../state/regionSelectors.js';
-import { shownSlice, stackOf, transformOf } from '../state/selectors.js';
+import { courseEndsOn, isOnSlice } from '../state/courseSelectors.js';
+import { transformOf } from '../state/selectors.js';
 import type { Store } from '../state/store.js';
 import { type PlateTransform, patientToPlate } from './plateTransform.js';
 
-/** The courses of oblique cuts on the slices: their points where they lie on this slice, and the line between both. */
+/** The courses of oblique cuts on the slices: their ends where they lie on this slice, and the line between both. */
 export function CourseMarks({ kernel, store }: { readonly kernel: Kernel; readonly store: Store }) {
   const state = store.state.value;
   const transform = transformOf(state, kernel);
-  if (transform === undefined || state.cut !== undefined || !takesMarks(state, kernel)) return null;
+  if (transform === undefined || state.cut !== undefined) return null;
   const { courseStart, note } = state;
+  const ends = courseEndsOn(state, kernel);
   return (
     <g>
-      {(note?.planes ?? []).map(({ id, label, courseMm }) => (
+      {(note?.planes ?? []).map(({ id, label }) => (
         <Course
           key={id}
           id={id}
           label={label}
-          points={courseMm.filter((point) => isHere(state, kernel, point))}
+          points={ends.filter(({ plane }) => plane.id === id).map(({ pointMm }) => pointMm)}
           transform={transform}
         />
       ))}
-      {courseStart !== undefined && isHere(state, kernel, courseStart.pointMm) && (
+      {courseStart !== undefined && isOnSlice(state, kernel, courseStart.pointMm) && (
         <Course id="" label="" points={[courseStart.pointMm]} transform={transform} />
       )}
     </g>
   );
 }
 
-function Course({
-  id,
-  label,
-  points,
-  transform,
-}: {
+interface CourseProps {
   readonly id: string;
   readonly label: string;
   readonly points: readonly Vec3[];
   readonly transform: PlateTransform;
-}) {
+}
+
+function Course({ id, label, points, transform }: CourseProps) {
   const places = points.map((point) => patientToPlate(transform, point));
   const [from, to] = places;
   if (from === undefined) return null;
@@ -56,12 +52,4 @@ function Course({
       </text>
     </g>
   );
-}
-
-/** Whether a point lies on the slice that a plate shows. */
-function isHere(state: AppState, kernel: Kernel, point: Vec3): boolean {
-  const stack = stackOf(state, kernel);
-  const shown = shownSlice(state, kernel);
-  if (stack === undefined || shown === undefined) return false;
-  return sliceIndexAt(stack, alongNormal(stack.slices[0].image.grid, point)) === shown.index;
 }

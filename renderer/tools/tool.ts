@@ -42,6 +42,9 @@ export interface ToolPort {
   moveStent(id: string, centreMm: Vec3, key?: string): void;
   /** Puts the oblique plane across the line between two points into the note, and shows it. */
   placePlane(courseMm: readonly [Vec3, Vec3]): void;
+  /** Gives an oblique plane another course; refused, and told, where something is measured on it. */
+  movePlane(id: string, courseMm: readonly [Vec3, Vec3]): void;
+  showPlane(id: string): void;
 }
 
 /**

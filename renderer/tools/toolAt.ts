@@ -1,4 +1,5 @@
 import type { AppState, ToolId } from '../state/appState.js';
+import { courseAt, courseHandleTool } from './courseHandle.js';
 import { cutTool } from './cutTool.js';
 import { ellipseTool } from './ellipseTool.js';
 import { isLineTool } from './lineKeys.js';
@@ -30,6 +31,9 @@ export function toolAt(state: AppState, pointer: ToolPointer): Tool {
   if (state.openOutline !== undefined) return TOOLS[state.tool];
   // A course is set through marks, wherever they are.
   if (state.tool === 'cut') return TOOLS.cut;
+  const course = courseAt(state, pointer);
+  if (course !== undefined && state.note?.verification !== 'VERIFIED')
+    return courseHandleTool(course);
   const line = lineAt(state, pointer);
   if (line !== undefined && state.note?.verification !== 'VERIFIED') return lineHandleTool(line);
   const stent = stentAt(state, pointer);

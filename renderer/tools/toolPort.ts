@@ -1,6 +1,6 @@
 import type { StentPlacement } from '../../core/note/index.js';
 import type { Bench } from '../services/bench.js';
-import { placePlane } from '../state/changes/cut.js';
+import { movePlane, placePlane, showPlane } from '../state/changes/cut.js';
 import { placeEdge, placeProfile, reshapeEdge, reshapeProfile } from '../state/changes/lines.js';
 import { placeRegion, reshapeRegion } from '../state/changes/regions.js';
 import { moveStent, placeStent } from '../state/changes/stents.js';
@@ -82,6 +82,18 @@ export function createToolPort(
       };
       store.change('Move stent', moveStent(id, place, null, now(), key));
     },
+    movePlane: (id, courseMm) => {
+      const plane = store.now().note?.planes.find((one) => one.id === id);
+      if (plane === undefined) return;
+      const { interpolation, slabMm } = plane;
+      const placement = {
+        courseMm,
+        ...(interpolation === undefined ? {} : { interpolation }),
+        ...(slabMm === undefined ? {} : { slabMm }),
+      };
+      store.change('Move the course', movePlane(id, placement, bench.cuts, now()));
+    },
+    showPlane: (id) => store.change('Show plane', showPlane(id, bench.cuts)),
     placePlane: (courseMm) => store.change('Cut', placePlane({ courseMm }, bench.cuts, now())),
   };
 }

@@ -398,6 +398,25 @@ async function leavePage(): Promise<void> {
     .toBe(true);
 }
 
+/** Fits the stent of the demonstration study by a click in its lumen; the soft plate shows the whole slice. */
+async function fitStent(): Promise<void> {
+  const box = await softPlate(page).boundingBox();
+  if (box === null) throw new Error('the plate is not on the screen');
+  // The study's field is 200 mm wide around (24, −14); the stent stands at (56, −50).
+  const pxPerMm = Math.min(box.width, box.height) / 200;
+  await softPlate(page).focus();
+  await page.keyboard.press('Escape');
+  await page.keyboard.press('Escape');
+  await page.keyboard.press('s');
+  await page.mouse.click(
+    box.x + box.width / 2 + (56 - 24) * pxPerMm,
+    box.y + box.height / 2 + (-50 + 14) * pxPerMm,
+  );
+  await expect(page.locator('tr[data-stent="S1"]')).toContainText('Fitted: strut diameter 3.1', {
+    timeout: 60_000,
+  });
+}
+
 test('the window shows a stent on both kernels, at two sizes', async () => {
   await expect.poll(() => savedNote().regions.length).toBe(2);
   await leavePage();
@@ -417,6 +436,17 @@ test('the window shows a stent on both kernels, at two sizes', async () => {
     Number(mean),
   );
   expect(soft).toBeGreaterThan(sharp + 80);
+  // The fit takes the struts away.
+  await page.keyboard.press('f');
+  await fitStent();
+  const fitted = Number(
+    /lumen (\d+) ±/.exec(await page.locator('tr[data-stent="S1"]').innerText())?.[1],
+  );
+  expect(Math.abs(fitted - 350)).toBeLessThan(60);
+  await softPlate(page).hover({ position: { x: 382, y: 162 } });
+  await page.keyboard.down('Control');
+  await page.mouse.wheel(0, -600);
+  await page.keyboard.up('Control');
   await page.setViewportSize({ width: 1280, height: 720 });
   await page.screenshot({ path: 'test-results/window-1280.png' });
   await page.setViewportSize({ width: 1440, height: 900 });
@@ -436,6 +466,9 @@ test('a full reading is verified and exported in all forms, and the command line
     })
     .toBe(true);
   await expect.poll(() => savedNote().densities.length).toBe(2);
+  await regionRow(page, 'L1').click();
+  await fitStent();
+  await expect.poll(() => savedNote().stents[0]?.fit?.strutDiameterMm?.se ?? 0).toBeGreaterThan(0);
   await page.keyboard.press('Control+i');
   const dialog = page.getByRole('dialog', { name: 'Reading note' });
   await dialog.getByLabel('Completion').selectOption('complete');

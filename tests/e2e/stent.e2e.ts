@@ -184,7 +184,9 @@ test('a region on the cut says that it is resampled and has no standard error', 
   // What lies on a plane holds it where it is.
   await softPlate(page).focus();
   await page.keyboard.press('PageUp');
-  await expect(page.locator('footer [role=status]')).toContainText('Something is measured on Cut 1');
+  await expect(page.locator('footer [role=status]')).toContainText(
+    'Something is measured on Cut 1',
+  );
 });
 
 test('the stent is fitted on the cut too', async () => {
