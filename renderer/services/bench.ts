@@ -1,20 +1,11 @@
 import type { OpenFolder } from '../../app/host/contract.js';
-import { formatFixed } from '../../core/format/index.js';
-import { defaultWindow, LOWEST_IMAGE_HU } from '../../core/intensity/index.js';
+import { defaultWindow } from '../../core/intensity/index.js';
 import type { Kernel, PairOverride } from '../../core/note/index.js';
 import { checkSeal } from '../../core/note/life/index.js';
-import type { Result } from '../../core/result.js';
 import type { Stack } from '../../core/stack/index.js';
-import type { HostClient, KeptNote } from '../host/client.js';
-import { type MeasuredPair, swappedPair } from '../pairing/measuredPair.js';
-import type { PairState } from '../state/appState.js';
-import {
-  KEEP_MEASURED,
-  keepMeasured,
-  samePlaces,
-  swapPlates,
-} from '../state/changes/assessment.js';
-import { platesOnSlices, renewedCut } from '../state/changes/cut.js';
+import type { HostClient } from '../host/client.js';
+import { KEEP_MEASURED, keepMeasured } from '../state/changes/assessment.js';
+import { renewedCut } from '../state/changes/cut.js';
 import { showPair } from '../state/changes/view.js';
 import { NOTHING_LOADED, NOTHING_MARKED } from '../state/initialState.js';
 import type { Store } from '../state/store.js';
@@ -26,14 +17,15 @@ import { createAssessment } from './assessment.js';
 import { createAssessor } from './assessor.js';
 import { type Autosave, createAutosave } from './autosave.js';
 import { beginNote } from './beginNote.js';
-import { type Candidate, studyOf } from './choosePair.js';
+import { studyOf } from './choosePair.js';
 import { createFitting, type Fitting } from './fitting.js';
 import { createJobs } from './jobs.js';
 import { loadVolumes } from './loadVolumes.js';
-import { asOnPlates, isMasked, withMaskTurned } from './masking.js';
+import { asOnPlates } from './masking.js';
 import { createMeasuring, type Measuring } from './measuring.js';
 import { createOpenFolder } from './openFolder.js';
 import { pageDigest } from './pageDigest.js';
+import { createPairChanges, type UsePair } from './pairChanges.js';
 import { pairMessage } from './pairMessage.js';
 import { pairOf } from './pairOf.js';
 import { createFindPairs } from './proposals.js';
@@ -87,8 +79,6 @@ export interface Bench extends Measuring {
 
 const SEAL_BROKEN =
   'This note says that it is verified, but its content is not what was verified. Measure it again (Note menu), and do not rely on it.';
-const MASK_ON = `Values below ${formatFixed(LOWEST_IMAGE_HU, 0)} HU are left out as no image on both stacks; the note says so.`;
-const MASK_OFF = 'Nothing is left out any more but what the files mark as padding.';
 
 export function createBench(options: BenchOptions): Bench {
   const { store, client, signal, now } = options;
@@ -138,12 +128,7 @@ export function createBench(options: BenchOptions): Bench {
     },
   });
 
-  const usePair = async (
-    candidate: Candidate,
-    chosenBy: PairState['chosenBy'],
-    found?: Result<KeptNote | undefined>,
-    known?: MeasuredPair,
-  ): Promise<void> => {
+  const usePair: UsePair = async (candidate, chosenBy, found, known) => {
     const { soft, sharp } = candidate;
     const made = pairOf(candidate, chosenBy);
     if (!made.ok) {
@@ -228,35 +213,7 @@ export function createBench(options: BenchOptions): Bench {
     },
   });
 
-  /** Soft and sharp change places; the plates stay where they are. */
-  const swap = async (chosenBy: 'measure' | 'reader'): Promise<void> => {
-    const { pair, compare, assessment } = store.now();
-    const plates = platesOnSlices(store.now());
-    if (pair?.sharp === undefined) return;
-    const known = assessment.kind === 'done' ? swappedPair(assessment.measured) : undefined;
-    const { soft, sharp, overrides } = pair;
-    await autosave.settled();
-    if (store.now().pair?.soft !== soft) return;
-    await usePair({ soft: sharp, sharp: soft, overrides }, chosenBy, undefined, known);
-    store.change('Places as before', (state) => ({ ...swapPlates(plates)(state), compare }));
-  };
-
-  /** The pair is shown anew, because everything that was measured of it changes; the plates stay where they are. */
-  const turnMask = async (): Promise<void> => {
-    const { pair, index, compare } = store.now();
-    const plates = platesOnSlices(store.now());
-    if (pair === undefined || index === undefined) return;
-    const turned = withMaskTurned(pair, index.stacks);
-    if (!turned.ok) return warn(turned.refusal.text);
-    await autosave.settled();
-    if (store.now().pair?.soft !== pair.soft) return;
-    await usePair(turned.value, pair.chosenBy);
-    store.change('Places as before', (state) => ({
-      ...samePlaces(plates)(state),
-      compare,
-      message: { tone: 'plain', text: isMasked(pair) ? MASK_OFF : MASK_ON },
-    }));
-  };
+  const { swap, turnMask } = createPairChanges({ store, autosave, usePair, warn });
 
   return {
     autosave,
