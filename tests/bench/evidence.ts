@@ -1,3 +1,4 @@
+import { spawnSync } from 'node:child_process';
 import { availableParallelism } from 'node:os';
 import { fileURLToPath } from 'node:url';
 import { isMainThread, parentPort, Worker, workerData } from 'node:worker_threads';
@@ -105,6 +106,15 @@ const PARTS: Readonly<Record<string, () => Promise<boolean>>> = {
   observer: () => reportObserver(print),
   edges: () => reportEdges(print),
   stents: () => reportStents(print),
+  kills: async () => {
+    const test = 'tests/unit/app/host/notes/killedWriter.test.ts';
+    const run = spawnSync(
+      process.execPath,
+      ['node_modules/vitest/vitest.mjs', 'run', '--config', 'tests/vitest.config.ts', test],
+      { env: { ...process.env, DIPTYCH_KILLS: '500' }, stdio: 'inherit' },
+    );
+    return run.status === 0;
+  },
 };
 
 // npm run evidence -- stents runs a part alone; --each prints every case of the sharpness order, --batch 3 makes others, --every 5
