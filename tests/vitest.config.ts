@@ -14,7 +14,9 @@ export default defineConfig({
   test: {
     environment: 'node',
     pool: 'threads',
-    testTimeout: 20_000,
+    // All cores: the browser tests come after these and not beside them.
+    maxWorkers: '100%',
+    testTimeout: 40_000,
     projects: [
       {
         extends: true,

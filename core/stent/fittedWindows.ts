@@ -1,12 +1,16 @@
-import { edgeRiseMm } from './edgeRise.js';
 import { FREQUENCIES } from './frequencies.js';
-import { type Bounds, levenbergMarquardt } from './levenbergMarquardt.js';
+import type { LeastSquares } from './levenbergMarquardt.js';
 import { shownRoots } from './shownRoots.js';
 import type { TextureRings } from './textureRings.js';
-import { rolledResponse } from './windowRoll.js';
-
-/** Blur that the edges share beside the kernels, mean and SD, mm: common practice, no source. */
-const EDGE_BLUR_MM = [0.22, 0.06] as const;
+import {
+  amplitudeAt,
+  BEYOND_LAST_PER_MM,
+  FORM,
+  type Form,
+  lastFrequency,
+  responseAt,
+  searchWindows,
+} from './windowSearch.js';
 
 /** Windows of all kernels with one scale. */
 export interface FittedWindows {
@@ -20,90 +24,50 @@ export interface FittedWindows {
   readonly misfits: readonly number[];
 }
 
-const SHAPE_BOUNDS: readonly Bounds[] = [
-  { low: -12, high: 2 },
-  { low: -40, high: 20 },
-  { low: 0, high: 3 },
-  { low: 0.3, high: 1.6 },
-];
-
-/** The end lies about where the last ring stands out; SD of that, per mm. */
-const END_SD_PER_MM = 0.12;
 /** Rings tell an end to about this, per mm. */
 const END_ERROR_PER_MM = 0.02;
 
-/** One scale and four numbers of form for each kernel. */
+/** Powers of the forms that a search begins from: one that rolls off and one that breaks off lie in valleys of their own. */
+const START_POWERS = [1, 0];
+
+/**
+ * Windows of a common form that have the rings' roots, and the measured rises of edges. Each kernel is sought alone first,
+ * from either kind of form; from what comes nearest to its rings the search for all of them begins.
+ */
 export function fittedWindows(all: readonly TextureRings[]): FittedWindows | undefined {
-  const start = Float64Array.from([
-    Math.log(Math.max(...all.map(({ root }) => root[0] as number))),
-    ...all.flatMap(({ f, root, error }) => {
-      const last = f.findLast((_, k) => (root[k] as number) > 4 * (error[k] as number)) ?? 1;
-      return [-0.5 / last ** 2, -0.1 / last ** 4, 1, last + 0.06];
-    }),
-    EDGE_BLUR_MM[0],
-  ]);
-  const blur = start.length - 1;
-  const bounds = [
-    { low: -20, high: 20 },
-    ...all.flatMap(() => SHAPE_BOUNDS),
-    { low: 0.02, high: 0.6 },
-  ];
-  const residuals = (point: Float64Array): Float64Array =>
-    Float64Array.from([
-      ...all.flatMap(({ f, root, error, rise }, kernel) => {
-        const roots = shownRoots(amplitudeAt(point, kernel), f);
-        return [
-          ...roots.map((value, k) => (value - (root[k] as number)) / (error[k] as number)),
-          // Keeps the form smooth where the rings don't tell it.
-          (point[1 + 4 * kernel] as number) / 4,
-          (point[2 + 4 * kernel] as number) / 8,
-          ((point[3 + 4 * kernel] as number) - 1) / 1.5,
-          ((point[4 + 4 * kernel] as number) - (start[4 + 4 * kernel] as number)) / END_SD_PER_MM,
-          // An edge tells how far W falls at the low frequencies, which the rings tell least.
-          ...(rise === null
-            ? []
-            : [
-                (edgeRiseMm(responseAt(point, kernel), point[blur] as number) - rise.mm) /
-                  rise.error,
-              ]),
-        ];
-      }),
-      ((point[blur] as number) - EDGE_BLUR_MM[0]) / EDGE_BLUR_MM[1],
-    ]);
-  const model = (point: Float64Array) => {
-    const here = residuals(point);
-    const slopes = Array.from(point, (value, k) => {
-      const step = 1e-4 * Math.max(1, Math.abs(value));
-      const moved = Float64Array.from(point);
-      moved[k] = value + step;
-      const there = residuals(moved);
-      return there.map((one, index) => (one - (here[index] as number)) / step);
-    });
-    return { residuals: here, slopes };
-  };
-  const fit = levenbergMarquardt(model, start, bounds);
+  const alone = all.map(nearestAlone);
+  const fit =
+    all.length === 1
+      ? alone[0]
+      : searchWindows(
+          all,
+          all.map((rings, kernel) => formOf(alone[kernel]?.point) ?? startForm(rings)),
+        );
   if (fit === undefined) return undefined;
-  const scale = Math.exp(fit.point[0] as number);
   const corrected = all.map((rings, kernel) => correctedResponse(fit.point, kernel, rings));
   return {
-    scale,
+    scale: Math.exp(fit.point[0] as number),
     scaleError: Math.sqrt(fit.covariance[0]?.[0] ?? 1),
     responses: corrected,
-
     misfits: corrected.map(({ misfit }) => misfit),
   };
 }
 
-function responseAt(point: Float64Array, kernel: number): Float64Array {
-  const [a = 0, b = 0, power = 0, endPerMm = 0] = point.subarray(1 + 4 * kernel, 5 + 4 * kernel);
-  return rolledResponse({ a, b, power, endPerMm });
+function nearestAlone(rings: TextureRings): LeastSquares | undefined {
+  return START_POWERS.flatMap(
+    (power) => searchWindows([rings], [startForm(rings, power)]) ?? [],
+  ).toSorted((a, b) => a.squares - b.squares)[0];
 }
 
-function amplitudeAt(point: Float64Array, kernel: number): Float64Array {
-  const scale = Math.exp(point[0] as number);
-  return responseAt(point, kernel).map(
-    (w, index) => scale * w * Math.sqrt(FREQUENCIES[index] as number),
-  );
+function startForm(rings: TextureRings, power = 1): Form {
+  const last = lastFrequency(rings);
+  return [-0.5 / last ** 2, -0.1 / last ** 4, power, last + BEYOND_LAST_PER_MM];
+}
+
+function formOf(point: Float64Array | undefined): Form | undefined {
+  if (point === undefined) return undefined;
+  const [, a = 0, b = 0, power = 0, endPerMm = 0] = point;
+  return [a, b, power, endPerMm];
 }
 
 /** Rings whose root is below this part of the highest correct nothing. */
@@ -117,7 +81,7 @@ function correctedResponse(
 ): { readonly response: Float64Array; readonly endError: Float64Array; readonly misfit: number } {
   const response = responseAt(point, kernel);
   const later = Float64Array.from(point);
-  later[4 + 4 * kernel] = (later[4 + 4 * kernel] as number) + END_ERROR_PER_MM;
+  later[FORM + FORM * kernel] = (later[FORM + FORM * kernel] as number) + END_ERROR_PER_MM;
   const roots = shownRoots(amplitudeAt(point, kernel), f);
   const highest = Math.max(...root);
   const used = f.flatMap((_, k) =>

@@ -5,6 +5,7 @@ import {
   type Kernel,
   type NotePlane,
   type NoteStent,
+  noStentValue,
   type PlanCuts,
   type StentPlacement,
   withStentFits,
@@ -69,14 +70,15 @@ export function createFitting({ store, volumes, cuts, now, signal }: FittingOpti
   const put = (key: string, answer: FitAnswer): void => {
     store.change('Stent fitted', (state) => {
       const { note } = state;
-      if (note === undefined || note.verification === 'VERIFIED') return state;
+      const answered = { ...state, fitsAnswered: state.fitsAnswered + 1 };
+      if (note === undefined || note.verification === 'VERIFIED') return answered;
       const fitted = withStentFits(note, (s) => (keyOf(s) === key ? answer.value : null), now());
-      if (fitted === note) return state;
+      if (fitted === note) return answered;
       const told = fitted.stents.find(({ id }) => id === state.selected);
       const isNew = told !== undefined && keyOf(told) === key;
       const text = isNew ? `${told.label}. ${stentSentence(told)}` : undefined;
       return {
-        ...state,
+        ...answered,
         note: fitted,
         message: text === undefined ? state.message : { tone: 'plain', text },
       };
@@ -107,12 +109,12 @@ export function createFitting({ store, volumes, cuts, now, signal }: FittingOpti
     const known = asked.get(key);
     const isSame = known?.volumes === both && known.noise[0] === noise.soft;
     if (known !== undefined && isSame && known.noise[1] === noise.sharp) {
-      if (known.answer !== undefined) put(key, known.answer);
+      if (known.answer !== undefined && stent.fit === null) put(key, known.answer);
       return;
     }
     const refused = refusalOf(pair, both, stent, noise);
     if (refused !== undefined) {
-      put(key, refused);
+      if (stent.fit === null) put(key, refused);
       return;
     }
     const made = request(stent, both, noise);
@@ -146,7 +148,7 @@ export function createFitting({ store, volumes, cuts, now, signal }: FittingOpti
     const { note, pair } = store.now();
     const both = volumes();
     if (note === undefined || pair === undefined || both === undefined) return;
-    if (note.verification === 'VERIFIED') return;
+    // Of a verified note too: its numbers stay, and the curves are drawn.
     for (const stent of note.stents) fitNow(stent, both, pair);
   };
 
@@ -173,7 +175,7 @@ export function createFitting({ store, volumes, cuts, now, signal }: FittingOpti
   };
 }
 
-/** What has no fit for a reason that needs no pixels: one stack alone, or two without a common space. */
+/** What has no fit for a reason that needs no pixels: one stack alone, two without a common space, a place beyond them. */
 function refusalOf(
   pair: PairState,
   both: PairVolumes,
@@ -181,7 +183,12 @@ function refusalOf(
   noise: { readonly [K in Kernel]: NoiseOfStack },
 ): FitAnswer | undefined {
   const notOnSharp = pair.link === 'index' ? FLAGS.positionsNotComparable : undefined;
-  if (both.sharp !== undefined && notOnSharp === undefined) return undefined;
+  if (both.sharp !== undefined && notOnSharp === undefined) {
+    const isHere = [both.soft, both.sharp].every(
+      (volume) => stackPart(volume, stent.centreMm, REACH_MM.slices) !== undefined,
+    );
+    return isHere ? undefined : { fit: { reason: NO_SLICE }, value: noStentValue(NO_SLICE) };
+  }
   const value = fitOnGround(stent, {
     soft: both.soft.stack,
     sharp: both.sharp?.stack,
@@ -193,6 +200,11 @@ function refusalOf(
   const reason = value.reason ?? refuse('not-fitted', 'No stent was fitted.').refusal;
   return { fit: { reason }, value };
 }
+
+const NO_SLICE = {
+  code: 'no-slice',
+  text: 'No slice lies at the point on one of the stacks: choose another.',
+} as const;
 
 /** A reason that needs no pixels needs no cut either. */
 const NO_CUTS: PlanCuts = {

@@ -219,6 +219,8 @@ export interface AppState {
   readonly courseStart: CourseStart | undefined;
   /** What a fitted stent leaves over is drawn over the plates while it is selected. */
   readonly residuals: boolean;
+  /** Fits of stents that have come: with each there are curves to draw that there were not before. */
+  readonly fitsAnswered: number;
   readonly caret: Caret | undefined;
   readonly hover: Hover | undefined;
   readonly tool: ToolId;

@@ -39,6 +39,7 @@ export const INITIAL_STATE: AppState = {
   compare: { way: 'open', foldAt: 0.5, resting: 'soft', held: false, rangeHu: 200 },
   noiseAreas: false,
   residuals: false,
+  fitsAnswered: 0,
   plot: 'histogram',
   plates: { soft: plate, sharp: plate },
   active: 'soft',

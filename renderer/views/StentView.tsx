@@ -98,6 +98,7 @@ function ProfileView({ profile }: { readonly profile: NoteProfile }) {
 
 function FitView({ stent }: { readonly stent: NoteStent }) {
   const { bench } = useEngine();
+  useSelected((state) => state.fitsAnswered);
   const answer = bench.fitting.fitOf(stent);
   const across = useMemo(
     () => (answer === undefined ? undefined : acrossStent(stent, answer.fit)),

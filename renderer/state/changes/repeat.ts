@@ -12,6 +12,7 @@ import type { AppState } from '../appState.js';
 import { editNote } from '../history.js';
 import { sliceOf } from '../regionSelectors.js';
 import type { Change } from '../store.js';
+import { leavePlane } from './cut.js';
 import { scrollTo } from './view.js';
 
 const NOTHING_SELECTED = {
@@ -26,10 +27,13 @@ export function startRepeat(reader: string, now: string): Change {
     if (state.note === undefined) return state;
     const begun = beginRepeat(state.note, { reader, now });
     if (!begun.ok) return { ...state, message: { tone: 'warning', text: begun.refusal.text } };
-    return toNext({
-      ...editNote('Begin a repeat reading', () => begun.value)(state),
-      ...NOTHING_SELECTED,
-    });
+    // What is read again lies on the slices.
+    return toNext(
+      leavePlane({
+        ...editNote('Begin a repeat reading', () => begun.value)(state),
+        ...NOTHING_SELECTED,
+      }),
+    );
   };
 }
 

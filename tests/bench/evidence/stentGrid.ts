@@ -1,5 +1,10 @@
 import { type Kernel, seededUniform, type UniformSource } from '../../../core/phantom/index.js';
-import { type FittedStent, fitStentOn, type StentKernel } from '../../../core/stent/index.js';
+import {
+  type FittedStent,
+  fitStentOn,
+  type SeenBy,
+  type StentKernel,
+} from '../../../core/stent/index.js';
 import { noStentScene } from './noStentScene.js';
 import { type PlainReading, plainReading } from './plainReading.js';
 import { type StentPair, stentPair } from './stentPhantom.js';
@@ -42,13 +47,20 @@ export interface GridScene {
   readonly tiltDeg?: readonly [number, number];
 }
 
-/** Seven stents of one acquisition. Starts lie up to half the inner radius off the axis. */
-export async function gridCases(
+/** Images of seven stents, and what is drawn further from the same numbers. */
+export interface GridPair {
+  readonly pair: StentPair;
+  readonly stents: readonly TrueStent[];
+  readonly kernels: (typeof STENT_KERNELS)[number];
+  readonly uniform: UniformSource;
+}
+
+/** One acquisition of seven stents. */
+export async function gridPair(
   batch: number,
   index: number,
-  fittedOn: readonly FittedOn[] = FITTED_ON,
   { areWires = false, tiltDeg = [0, 20] }: GridScene = {},
-): Promise<readonly GridCase[]> {
+): Promise<GridPair> {
   const uniform = seededUniform(batch, index, 1);
   const [least, most] = tiltDeg;
   const stents = drawStents(uniform, most - least, areWires).map((stent) => ({
@@ -61,7 +73,28 @@ export async function gridCases(
     photonsPerRay: 5e3 * 5 ** uniform(),
     kernels,
   });
+  return { pair, stents, kernels, uniform };
+}
+
+/** Seven stents of one acquisition. */
+export async function gridCases(
+  batch: number,
+  index: number,
+  fittedOn: readonly FittedOn[] = FITTED_ON,
+  scene?: GridScene,
+): Promise<readonly GridCase[]> {
+  const { pair, stents, uniform } = await gridPair(batch, index, scene);
   return casesOf(pair, stents, uniform, fittedOn);
+}
+
+/** A start up to half the inner radius off the axis. */
+export function startOf(
+  { centreMm: [x, y], innerDiameterMm }: TrueStent,
+  uniform: UniformSource,
+): readonly [number, number, number] {
+  const angle = 2 * Math.PI * uniform();
+  const away = (innerDiameterMm / 4) * Math.sqrt(uniform());
+  return [x + away * Math.cos(angle), y + away * Math.sin(angle), 0.2 * (uniform() - 0.5)];
 }
 
 /** Fits and reads all stents of a pair. */
@@ -72,13 +105,7 @@ export function casesOf(
   fittedOn: readonly FittedOn[],
 ): readonly GridCase[] {
   return stents.map((truth) => {
-    const angle = 2 * Math.PI * uniform();
-    const away = (truth.innerDiameterMm / 4) * Math.sqrt(uniform());
-    const centreMm = [
-      truth.centreMm[0] + away * Math.cos(angle),
-      truth.centreMm[1] + away * Math.sin(angle),
-      0.2 * (uniform() - 0.5),
-    ] as const;
+    const centreMm = startOf(truth, uniform);
     let timeMs = 0;
     const fits = Object.fromEntries(
       fittedOn.map((side) => {
@@ -123,6 +150,7 @@ export function fitOn(
   { soft, sharp, texture }: StentPair,
   side: FittedOn,
   centreMm: readonly [number, number, number],
+  seenBy?: SeenBy,
 ): FittedStent {
   if (texture.soft === null || texture.sharp === null) throw new RangeError('no texture measured');
   const all: Readonly<Record<'soft' | 'sharp', StentKernel>> = {
@@ -130,8 +158,11 @@ export function fitOn(
     sharp: { stack: sharp.stack, texture: texture.sharp },
   };
   const kernels = side === 'both' ? [all.soft, all.sharp] : [all[side]];
-  return fitStentOn({ centreMm }, kernels, (stack, slice) =>
-    (stack === soft.stack ? soft : sharp).stored.at(slice),
+  return fitStentOn(
+    { centreMm },
+    kernels,
+    (stack, slice) => (stack === soft.stack ? soft : sharp).stored.at(slice),
+    seenBy,
   );
 }
 

@@ -1,16 +1,7 @@
-import { iterativeCases } from './iterativeCases.js';
-import { obliqueFits } from './obliqueFits.js';
-import { type Accuracy, type GridSummary, summaryOf } from './stentAccuracy.js';
-import { bareCases, type FittedOn, type GridCase, type GridScene, gridCases } from './stentGrid.js';
-import { percent, STENT_TABLE_HEAD, stentTable } from './stentTable.js';
-
-/** The weights and limits were made on batch 100; the one that is run by default is another. */
-const BATCH = 7;
-const ACQUISITIONS = 24;
-const WIRED_ACQUISITIONS = 6;
-const LEANING_ACQUISITIONS = 6;
-const ITERATIVE_ACQUISITIONS = 3;
-const BARE_ACQUISITIONS = 10;
+import type { Accuracy, GridSummary } from './stentAccuracy.js';
+import { type StentEvidence, type StentPart, stentEvidence } from './stentEvidence.js';
+import { gainInWords } from './stentJoint.js';
+import { percent, reasonsInWords, rowInMarkdown, STENT_TABLE_HEAD } from './stentTable.js';
 
 /** What the fit on both kernels has to keep. */
 export const STENT_LIMITS = {
@@ -27,40 +18,27 @@ type Print = (line: string) => void;
 /** Prints the grid of stents and the places without one. @returns whether the fit on both kernels keeps its limits */
 export async function reportStents(print: Print): Promise<boolean> {
   print(
-    'Stents of 2.25 to 4 mm, 200 to 800 HU·mm, lumen 60 to 450 HU, three pairs of kernels, five-fold dose',
+    'Stents of 2.25 to 4 mm, 200 to 800 HU·mm, lumen 60 to 450 HU, three pairs of kernels, five-fold dose, starts off the axis',
   );
-  const rings = await casesFor(ACQUISITIONS, 0);
-  table(print, 'rings, tilt up to 20°', rings);
-  const both = summaryOf(rings, 'both');
+  const evidence = await stentEvidence();
+  const { rings, wires, leaning, cuts, iterative, bare, timeMs, gain } = evidence;
+  printPart(rings, print);
   print(
-    `  refused on both: ${reasons(both.refused)}; refits cover ${percent(both.diameterMm.coveredByRefits)} and ${percent(both.lumenHu.coveredByRefits)}`,
+    `  refits cover ${percent(rings.both.diameterMm.coveredByRefits)} and ${percent(rings.both.lumenHu.coveredByRefits)}; ${timeMs.toFixed(0)} ms of processor a fit on both (median)`,
   );
-  const times = rings.map(({ timeMs }) => timeMs).sort((a, b) => a - b);
-  const timeMs = times[Math.floor(times.length / 2)] ?? Number.NaN;
-  print(`  ${timeMs.toFixed(0)} ms of processor a fit on both (median)`);
-  printJointGain(rings, print);
-  const wired = await casesFor(WIRED_ACQUISITIONS, 100, undefined, { areWires: true });
-  table(print, 'struts that are 8 to 16 wires', wired);
-  const ofWires = summaryOf(wired, 'both');
-  const leaning = await casesFor(LEANING_ACQUISITIONS, 200, ['both'], { tiltDeg: [20, 45] });
-  table(print, 'tilt 20 to 45°, fitted on the slices', leaning, ['both']);
-  print(`  refused: ${reasons(summaryOf(leaning, 'both').refused)}`);
-  const areCutsKept = reportCuts(await obliqueFits(), print);
-  const iterative: GridCase[] = [];
-  for (let index = 0; index < ITERATIVE_ACQUISITIONS; index += 1)
-    iterative.push(...(await iterativeCases(BATCH, index)));
-  table(print, 'algebraic reconstruction with edge-preserving smoothing', iterative, ['both']);
-  const smoothed = summaryOf(iterative, 'both');
-  print(`  refused: ${reasons(smoothed.refused)}`);
-  const given = await reportBare(print);
-  const isKept =
-    keepsLimits(both) &&
-    ofWires.diameterMm.most95 < STENT_LIMITS.diameterMm.most95 &&
-    ofWires.lumenHu.most95 < WIRED_LUMEN_HU &&
-    timeMs < STENT_LIMITS.timeMs &&
-    areCutsKept &&
-    isRefusedOrCovered(smoothed) &&
-    given === 0;
+  print(gainInWords('soft', gain.soft));
+  print(gainInWords('sharp', gain.sharp));
+  print(gainInWords('sharp', evidence.gainWithTrueWindows).replace('both', 'true windows: both'));
+  for (const part of [wires, leaning]) printPart(part, print);
+  if (cuts === undefined) print('\noblique cuts: not run, numpy and scipy are not installed');
+  else printPart(cuts, print);
+  printPart(iterative, print);
+  print('');
+  print(
+    `${bare.places} places without a stent: ${bare.given.length} values; refused: ${reasonsInWords(bare.refused)}`,
+  );
+  for (const kind of bare.given) print(`  a value was given to: ${kind}`);
+  const isKept = keepsAll(evidence);
   print(
     isKept
       ? 'kept: accuracy, coverage, time and refusals'
@@ -69,60 +47,25 @@ export async function reportStents(print: Print): Promise<boolean> {
   return isKept;
 }
 
-async function casesFor(
-  acquisitions: number,
-  first: number,
-  fittedOn?: readonly FittedOn[],
-  scene?: GridScene,
-): Promise<readonly GridCase[]> {
-  const cases: GridCase[] = [];
-  for (let index = 0; index < acquisitions; index += 1)
-    cases.push(...(await gridCases(BATCH, first + index, fittedOn, scene)));
-  return cases;
-}
-
-function table(
-  print: Print,
-  title: string,
-  cases: readonly GridCase[],
-  fittedOn?: readonly FittedOn[],
-): void {
+function printPart({ title, rows, both }: StentPart, print: Print): void {
   print('');
   print(title);
-  for (const line of [...STENT_TABLE_HEAD, ...stentTable(cases, fittedOn)]) print(line);
+  for (const line of [...STENT_TABLE_HEAD, ...rows.map(rowInMarkdown)]) print(line);
+  print(`  refused on both: ${reasonsInWords(both.refused)}`);
 }
 
-/** Fits on oblique cuts; where the programs that make the volumes are not installed there are none, and it is said. */
-function reportCuts(fits: Awaited<ReturnType<typeof obliqueFits>>, print: Print): boolean {
-  print('');
-  if (fits === undefined) {
-    print('oblique cuts: not run, numpy and scipy are not installed');
-    return true;
-  }
-  const summary = summaryOf(fits, 'both');
-  const { diameterMm: d, lumenHu: l } = summary;
-  print(
-    `oblique cuts at 30 to 65°, volumes by numpy: ${summary.fits} of ${fits.length} fitted (${reasons(summary.refused)}); diameter ${d.median.toFixed(3)}, 95 % ${d.most95.toFixed(3)} mm, covered ${percent(d.covered)}; lumen ${l.median.toFixed(1)}, 95 % ${l.most95.toFixed(1)} HU, covered ${percent(l.covered)}`,
+function keepsAll({ rings, wires, cuts, iterative, bare, timeMs }: StentEvidence): boolean {
+  return (
+    keepsLimits(rings.both) &&
+    wires.both.diameterMm.most95 < STENT_LIMITS.diameterMm.most95 &&
+    wires.both.lumenHu.most95 < WIRED_LUMEN_HU &&
+    (cuts === undefined ||
+      (cuts.both.diameterMm.most95 < STENT_LIMITS.diameterMm.most95 &&
+        cuts.both.lumenHu.most95 < STENT_LIMITS.lumenHu.most95)) &&
+    isRefusedOrCovered(iterative.both) &&
+    bare.given.length === 0 &&
+    timeMs < STENT_LIMITS.timeMs
   );
-  return d.most95 < STENT_LIMITS.diameterMm.most95 && l.most95 < STENT_LIMITS.lumenHu.most95;
-}
-
-async function reportBare(print: Print): Promise<number> {
-  let [places, given] = [0, 0];
-  const refused: Record<string, number> = {};
-  for (let index = 0; index < BARE_ACQUISITIONS; index += 1)
-    for (const { kind, fit } of await bareCases(BATCH, index)) {
-      places += 1;
-      if (fit.reason !== undefined) {
-        refused[fit.reason.code] = (refused[fit.reason.code] ?? 0) + 1;
-        continue;
-      }
-      given += 1;
-      print(`  a value was given to: ${kind}`);
-    }
-  print('');
-  print(`${places} places without a stent: ${given} values; refused: ${reasons(refused)}`);
-  return given;
 }
 
 /** Whether errors and coverage keep the limits. */
@@ -140,22 +83,4 @@ export function keepsLimits({ diameterMm, lumenHu }: GridSummary): boolean {
 function isRefusedOrCovered({ fits, diameterMm, lumenHu }: GridSummary): boolean {
   const [least] = STENT_LIMITS.covered;
   return fits === 0 || (diameterMm.covered >= least && lumenHu.covered >= least);
-}
-
-/** Told, not judged: where both were fitted, which has the smaller median error, and in how many stents. */
-function printJointGain(cases: readonly GridCase[], print: Print): void {
-  for (const side of ['soft', 'sharp'] as const) {
-    const shared = cases.filter(
-      ({ fits }) => fits.both?.reason === undefined && fits[side]?.reason === undefined,
-    );
-    const [joint, single] = [summaryOf(shared, 'both'), summaryOf(shared, side)];
-    print(
-      `  median error on both and on ${side} alone, ${shared.length} stents that each could fit: ${joint.diameterMm.median.toFixed(4)} and ${single.diameterMm.median.toFixed(4)} mm, ${joint.lumenHu.median.toFixed(1)} and ${single.lumenHu.median.toFixed(1)} HU`,
-    );
-  }
-}
-
-function reasons(refused: Readonly<Record<string, number>>): string {
-  const all = Object.entries(refused).map(([code, count]) => `${count} ${code}`);
-  return all.length === 0 ? 'none' : all.join(', ');
 }

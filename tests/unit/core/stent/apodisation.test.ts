@@ -58,6 +58,40 @@ describe('apodisationOf', () => {
     },
   );
 
+  it('sees that a window breaks off where noisy rings would let it roll off as well', () => {
+    // Rings of a synthetic pair, back projected with windows that end at 0.65 and, broken off, at 1.1 per mm.
+    const rings = (powerHu2Mm2: readonly number[], riseMm: number): KernelTexture => ({
+      ...textureOf(() => 1),
+      areas: 120,
+      riseMm,
+      powerHu2Mm2,
+    });
+    const soft = [
+      1037, 1058, 1085, 1256, 1214, 831.7, 519.6, 103, 1.774, 0.02987, 11.08, 8.269, 5.996, 5.156,
+      4.389, 3.771, 2.966,
+    ];
+    const sharp = [
+      1344, 1344, 1227, 1616, 2243, 2257, 2830, 2632, 2886, 2728, 2245, 2050, 1784, 1360, 537,
+      161.2, 108.4,
+    ];
+    const textures = [rings(soft, 1.216), rings(sharp, 0.62)];
+    for (const some of [textures, textures.slice(1)]) {
+      const found = apodisationOf(some);
+      if (!found.ok) throw new Error(found.refusal.text);
+      const response = found.value.kernels.at(-1)?.response;
+      const at = (f: number): number => response?.[Math.round(f / 0.02 - 0.5)] ?? Number.NaN;
+      // Interpolation between detectors 0.35 mm apart multiplies the window with sinc²(0.35·f).
+      const seen = (f: number): number => {
+        const x = 0.35 * Math.PI * f;
+        return (WINDOWS['shepp-logan']?.(f / 1.1) ?? Number.NaN) * (Math.sin(x) / x) ** 2;
+      };
+      expect(Math.abs(at(1.03) - seen(1.03))).toBeLessThan(0.03);
+      expect(Math.abs(at(1.07) - seen(1.07))).toBeLessThan(0.03);
+      expect(at(1.15)).toBeLessThan(0.1);
+      expect(at(1.17)).toBeLessThan(0.02);
+    }
+  });
+
   it('refuses noise that has its power at low frequencies, as that of other reconstructions', () => {
     const found = apodisationOf([
       textureOf((f) => 40 * Math.exp(-f / 0.12)),

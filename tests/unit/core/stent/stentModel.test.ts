@@ -57,6 +57,18 @@ describe('the model of a stent', () => {
       ).toBeLessThan(3);
   });
 
+  // MTF exp(−2π²σ²f²): half at 0.187391/σ, a tenth at 0.341541/σ.
+  it.each([
+    [0.5, 0.187391],
+    [0.1, 0.341541],
+  ])('is blurred to %f of itself at the frequency that a Gaussian has it at', (part, times) => {
+    const index = 40;
+    const f = FREQUENCIES[index] ?? Number.NaN;
+    const blurred = stentSpectrum({ ...STENT, blurSigmaMm: times / f }).value[index] ?? Number.NaN;
+    const plain = stentSpectrum({ ...STENT, blurSigmaMm: 0 }).value[index] ?? Number.NaN;
+    expect(blurred / plain).toBeCloseTo(part, 5);
+  });
+
   it('has the slopes that small changes of each parameter give', () => {
     const point = listOf(STENT);
     const { slopes } = stentSpectrum(STENT);

@@ -9,7 +9,7 @@ import { parseNote } from '../../../../../core/note/index.js';
 import { sampleNote } from '../sampleNote.js';
 
 /** A sample in every run; `npm run evidence -- kills` asks for more. */
-const KILLS = Number(process.env.DIPTYCH_KILLS ?? 100);
+const KILLS = Number(process.env.DIPTYCH_KILLS ?? 60);
 /** Processes at a time, each with a folder of its own. */
 const LANES = 4;
 /** A version is stored in a few milliseconds: the kill falls anywhere in the first few of them. */
