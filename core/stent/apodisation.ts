@@ -42,6 +42,11 @@ const MOST_OVER_SHARP = 0.08;
 const MOST_LOW_POWER = 2.2;
 /** Mean misfit of the rings' roots, relative, beyond which the spectra don't look like f·W² of one scale. */
 const MOST_MISFIT = 0.1;
+/**
+ * Edges on the softer kernel rise over this part at least of what its noise lets expect. A linear reconstruction blurs both alike;
+ * smoothing that keeps edges takes the noise and leaves them sharp.
+ */
+const LEAST_RISE_PART = 0.88;
 
 const KNOWN = new WeakMap<
   KernelTexture,
@@ -99,6 +104,12 @@ function computed(textures: readonly KernelTexture[]): Result<Apodisation> {
     return refuse(
       'not-linear',
       'The noise of the two kernels does not meet at low frequencies, as that of one acquisition does after filtered back projection: their blur can’t be told from it.',
+    );
+  const [softRise] = fit.riseParts;
+  if (sharp !== undefined && typeof softRise === 'number' && softRise < LEAST_RISE_PART)
+    return refuse(
+      'not-linear',
+      'The edges are sharper than the noise lets expect, as after smoothing that keeps edges: the blur of the kernels can’t be told from the noise.',
     );
   if (textures.some((texture, k) => !looksLinear(texture, kernels[k] as Apodised)))
     return refuse(

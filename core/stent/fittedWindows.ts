@@ -1,3 +1,4 @@
+import { edgeRiseMm } from './edgeRise.js';
 import { FREQUENCIES } from './frequencies.js';
 import type { LeastSquares } from './levenbergMarquardt.js';
 import { shownRoots } from './shownRoots.js';
@@ -7,6 +8,7 @@ import {
   BEYOND_LAST_PER_MM,
   FORM,
   type Form,
+  formAt,
   lastFrequency,
   responseAt,
   searchWindows,
@@ -22,6 +24,8 @@ export interface FittedWindows {
   }[];
   /** Of each kernel, root mean square of the rings' relative misfit where its root is not small. */
   readonly misfits: readonly number[];
+  /** Of each kernel, the measured rise of edges over that which the rings alone let expect at least; null where none was measured. */
+  readonly riseParts: readonly (number | null)[];
 }
 
 /** Rings tell an end to about this, per mm. */
@@ -41,7 +45,10 @@ export function fittedWindows(all: readonly TextureRings[]): FittedWindows | und
       ? alone[0]
       : searchWindows(
           all,
-          all.map((rings, kernel) => formOf(alone[kernel]?.point) ?? startForm(rings)),
+          all.map((rings, kernel) => {
+            const point = alone[kernel]?.point;
+            return point === undefined ? startForm(rings) : formAt(point, 0);
+          }),
         );
   if (fit === undefined) return undefined;
   const corrected = all.map((rings, kernel) => correctedResponse(fit.point, kernel, rings));
@@ -50,7 +57,20 @@ export function fittedWindows(all: readonly TextureRings[]): FittedWindows | und
     scaleError: Math.sqrt(fit.covariance[0]?.[0] ?? 1),
     responses: corrected,
     misfits: corrected.map(({ misfit }) => misfit),
+    riseParts: riseParts(all, fit.point),
   };
+}
+
+/** Edges are blurred beside the kernels by no less than this, mm: common practice, no source. */
+const LEAST_EDGE_BLUR_MM = 0.1;
+
+function riseParts(all: readonly TextureRings[], found: Float64Array): readonly (number | null)[] {
+  const ringsOnly = all.map((rings) => ({ ...rings, rise: null }));
+  const forms = all.map((_, kernel) => formAt(found, kernel));
+  const point = searchWindows(ringsOnly, forms)?.point ?? found;
+  return all.map(({ rise }, kernel) =>
+    rise === null ? null : rise.mm / edgeRiseMm(responseAt(point, kernel), LEAST_EDGE_BLUR_MM),
+  );
 }
 
 function nearestAlone(rings: TextureRings): LeastSquares | undefined {
@@ -62,12 +82,6 @@ function nearestAlone(rings: TextureRings): LeastSquares | undefined {
 function startForm(rings: TextureRings, power = 1): Form {
   const last = lastFrequency(rings);
   return [-0.5 / last ** 2, -0.1 / last ** 4, power, last + BEYOND_LAST_PER_MM];
-}
-
-function formOf(point: Float64Array | undefined): Form | undefined {
-  if (point === undefined) return undefined;
-  const [, a = 0, b = 0, power = 0, endPerMm = 0] = point;
-  return [a, b, power, endPerMm];
 }
 
 /** Rings whose root is below this part of the highest correct nothing. */

@@ -31,6 +31,8 @@ const MOST_OFF_AXIS_MM = 0.15;
 const MOST_OFF_AXIS_ERRORS = 4;
 /** A lumen holds no less and no more than this, HU. */
 const LUMEN_HU = [-100, 850] as const;
+/** Scanner and patient blur by more than this whatever the kernel, SD, mm: common practice, no source. */
+const LEAST_BLUR_MM = 0.09;
 /** Standard errors above these are no measurement: mm of diameter and HU of lumen. */
 const MOST_ERRORS = [0.15, 35] as const;
 
@@ -40,6 +42,8 @@ const text = {
   ring: 'The images show no ring of struts here.',
   bound:
     'The search ran into the border of what a stent in a coronary can be: no stent, or none that can be told.',
+  sharp:
+    'The struts are sharper than the noise of the kernels lets expect, as after smoothing that keeps edges: no fit holds for such images.',
   lumen: 'What fills the ring is no blood, soft tissue or fat: calcium or metal lies here.',
   around:
     'Something beside the stent disturbs it, calcium or a second stent: what is left over lies on one side.',
@@ -69,6 +73,7 @@ export function refusalOf({
     return { code: 'no-ring', text: text.ring };
   if (tilt > MOST_TILT_DEG) return { code: 'oblique', text: text.tilt(tilt) };
   if (onBound(parameters)) return { code: 'on-bound', text: text.bound };
+  if (parameters.blurSigmaMm < LEAST_BLUR_MM) return { code: 'not-linear', text: text.sharp };
   const { lumenHu } = parameters;
   if (lumenHu < LUMEN_HU[0] || lumenHu > LUMEN_HU[1]) return { code: 'filling', text: text.lumen };
   const off = centres.some(({ zMm, at, errorMm }) => {

@@ -80,7 +80,7 @@ export function searchWindows(
 /** What one kernel's rings and edge say of a point, and what keeps its form smooth where they don't tell it. */
 function residualsOf(rings: TextureRings, point: Float64Array, kernel: number): readonly number[] {
   const { f, root, error, rise } = rings;
-  const [a = 0, b = 0, power = 0, endPerMm = 0] = formAt(point, kernel);
+  const [a, b, power, endPerMm] = formAt(point, kernel);
   const roots = shownRoots(amplitudeAt(point, kernel), f);
   return [
     ...Array.from(roots, (value, k) => (value - (root[k] as number)) / (error[k] as number)),
@@ -95,14 +95,15 @@ function residualsOf(rings: TextureRings, point: Float64Array, kernel: number): 
   ];
 }
 
-/** The numbers of form of a kernel in a point. */
-function formAt(point: Float64Array, kernel: number): Float64Array {
-  return point.subarray(1 + FORM * kernel, 1 + FORM * (kernel + 1));
+/** The form of a kernel in a point. */
+export function formAt(point: Float64Array, kernel: number): Form {
+  const [a = 0, b = 0, power = 0, endPerMm = 0] = point.subarray(1 + FORM * kernel);
+  return [a, b, power, endPerMm];
 }
 
 /** W of a kernel at a point of the search. */
 export function responseAt(point: Float64Array, kernel: number): Float64Array {
-  const [a = 0, b = 0, power = 0, endPerMm = 0] = formAt(point, kernel);
+  const [a, b, power, endPerMm] = formAt(point, kernel);
   return rolledResponse({ a, b, power, endPerMm });
 }
 

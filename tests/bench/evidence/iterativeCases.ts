@@ -21,19 +21,23 @@ import {
 /** Holds the whole body: what lies outside of an algebraic image is put into it. */
 const GRID: ImageGrid = { centreMm: [0, 0], fieldOfViewMm: 118.75, matrix: 304 };
 
-/** Pairs of strengths, from much smoothing to little. */
+/** Pairs of strengths: much smoothing, less, so little that it can hardly be told, and one that spares strong edges alone. */
 const RECIPES: readonly Readonly<Record<'soft' | 'sharp', AlgebraicRecipe>>[] = [
   {
     soft: { passes: 3, edgeHu: 90, smoothing: 0.8 },
     sharp: { passes: 3, edgeHu: 50, smoothing: 0.5 },
   },
   {
-    soft: { passes: 3, edgeHu: 60, smoothing: 0.5 },
-    sharp: { passes: 3, edgeHu: 25, smoothing: 0.15 },
+    soft: { passes: 1, edgeHu: 60, smoothing: 0.4 },
+    sharp: { passes: 1, edgeHu: 20, smoothing: 0.03 },
   },
   {
-    soft: { passes: 2, edgeHu: 40, smoothing: 0.3 },
-    sharp: { passes: 2, edgeHu: 20, smoothing: 0.06 },
+    soft: { passes: 1, edgeHu: 40, smoothing: 0.3 },
+    sharp: { passes: 1, edgeHu: 40, smoothing: 0.1 },
+  },
+  {
+    soft: { passes: 2, edgeHu: 400, smoothing: 0.6 },
+    sharp: { passes: 2, edgeHu: 200, smoothing: 0.1 },
   },
 ];
 

@@ -15,12 +15,16 @@ const WIRED_LUMEN_HU = 60;
 
 type Print = (line: string) => void;
 
-/** Prints the grid of stents and the places without one. @returns whether the fit on both kernels keeps its limits */
+/** Runs and prints all parts. @returns whether the fit on both kernels keeps its limits */
 export async function reportStents(print: Print): Promise<boolean> {
+  return printEvidence(await stentEvidence(), print);
+}
+
+/** Prints tables for Markdown, with what belongs to each below it. @returns whether the fit on both kernels keeps its limits */
+export function printEvidence(evidence: StentEvidence, print: Print): boolean {
   print(
     'Stents of 2.25 to 4 mm, 200 to 800 HU·mm, lumen 60 to 450 HU, three pairs of kernels, five-fold dose, starts off the axis',
   );
-  const evidence = await stentEvidence();
   const { rings, wires, leaning, cuts, iterative, bare, timeMs, gain } = evidence;
   printPart(rings, print);
   print(

@@ -100,6 +100,23 @@ describe('apodisationOf', () => {
     expect(found).toMatchObject({ ok: false, refusal: { code: 'not-linear' } });
   });
 
+  it('refuses noise whose edges are sharper than it lets expect: smoothing that keeps edges takes noise alone', () => {
+    const window = (f: number, end: number): number => WINDOWS.hann?.(f / end) ?? 0;
+    const pair = (riseMm: number | null) => [
+      { ...textureOf((f) => 70 * Math.sqrt(f) * window(f, 0.6)), riseMm },
+      textureOf((f) => 70 * Math.sqrt(f) * window(f, 1.2)),
+    ];
+    // Behind a Hann window that ends at 0.6 per mm and a Gaussian of 0.1 mm an edge rises from 10 to 90 % over 1.634 mm (scipy:
+    // brentq on ½ + ∫ W·sin(2πfx)/(πf) df).
+    expect(apodisationOf(pair(1.634)).ok).toBe(true);
+    expect(apodisationOf(pair(1.75)).ok).toBe(true);
+    expect(apodisationOf(pair(null)).ok).toBe(true);
+    expect(apodisationOf(pair(1.3))).toMatchObject({
+      ok: false,
+      refusal: { code: 'not-linear', text: expect.stringContaining('edges are sharper') },
+    });
+  });
+
   it('refuses white noise', () => {
     const found = apodisationOf([textureOf(() => 20), textureOf(() => 40)]);
     expect(found).toMatchObject({ ok: false, refusal: { code: 'not-linear' } });
