@@ -23,7 +23,7 @@ export function shownRoots(amplitude: Float64Array, rings: readonly number[]): F
       return Math.sqrt(power / f);
     }
     let [sum, weights] = [0, 0];
-    for (let index = 0; index < FREQUENCIES.length; index += 1) {
+    for (let index = SPREAD_FROM; index < FREQUENCIES.length; index += 1) {
       const at = FREQUENCIES[index] as number;
       const weight = Math.max(0, 1 - Math.abs(at - f) / RING_STEP_PER_MM) * at;
       sum += weight * (spread[index] as number);
@@ -35,16 +35,23 @@ export function shownRoots(amplitude: Float64Array, rings: readonly number[]): F
 
 let kernel: readonly Float64Array[] | undefined;
 
-/** Each frequency's power spread by the size of an area. */
+/** The first frequency that a ring takes in which is shown as seen. */
+const SPREAD_FROM = FREQUENCIES.findIndex((f) => f > SEEN_FROM_PER_MM - RING_STEP_PER_MM);
+
+/** Each frequency's power spread by the size of an area, from the first that is asked for. */
 function spreadOf(power: Float64Array): Float64Array {
   kernel ??= spreadMatrix();
   const spread = new Float64Array(power.length);
-  kernel.forEach((line, index) => {
+  // Windows end: nothing is spread from beyond.
+  let end = power.length;
+  while (end > 0 && power[end - 1] === 0) end -= 1;
+  for (let index = SPREAD_FROM; index < spread.length; index += 1) {
+    const line = kernel[index] as Float64Array;
     let sum = 0;
-    for (let from = 0; from < power.length; from += 1)
+    for (let from = 0; from < end; from += 1)
       sum += (line[from] as number) * (power[from] as number);
     spread[index] = sum;
-  });
+  }
   return spread;
 }
 

@@ -81,7 +81,8 @@ export function searchWindows(
 function residualsOf(rings: TextureRings, point: Float64Array, kernel: number): readonly number[] {
   const { f, root, error, rise } = rings;
   const [a, b, power, endPerMm] = formAt(point, kernel);
-  const roots = shownRoots(amplitudeAt(point, kernel), f);
+  const response = responseAt(point, kernel);
+  const roots = shownRoots(amplitudeOf(response, point), f);
   return [
     ...Array.from(roots, (value, k) => (value - (root[k] as number)) / (error[k] as number)),
     a / 4,
@@ -91,7 +92,7 @@ function residualsOf(rings: TextureRings, point: Float64Array, kernel: number): 
     // An edge tells how far W falls at the low frequencies, which the rings tell least.
     ...(rise === null
       ? []
-      : [(edgeRiseMm(responseAt(point, kernel), point.at(-1) as number) - rise.mm) / rise.error]),
+      : [(edgeRiseMm(response, point.at(-1) as number) - rise.mm) / rise.error]),
   ];
 }
 
@@ -109,8 +110,12 @@ export function responseAt(point: Float64Array, kernel: number): Float64Array {
 
 /** √NPS of a kernel at a point of the search. */
 export function amplitudeAt(point: Float64Array, kernel: number): Float64Array {
-  const scale = Math.exp(point[0] as number);
-  return responseAt(point, kernel).map(
-    (w, index) => scale * w * Math.sqrt(FREQUENCIES[index] as number),
-  );
+  return amplitudeOf(responseAt(point, kernel), point);
 }
+
+function amplitudeOf(response: Float64Array, point: Float64Array): Float64Array {
+  const scale = Math.exp(point[0] as number);
+  return response.map((w, index) => scale * w * (ROOTS[index] as number));
+}
+
+const ROOTS = FREQUENCIES.map(Math.sqrt);
