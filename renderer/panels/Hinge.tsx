@@ -17,7 +17,10 @@ export interface HingeProps {
 /** The middle column: are the two one, where are we in both, what does the selected region measure in both. */
 export function Hinge({ verdict, ruler, readout, planes, across }: HingeProps) {
   return (
-    <section class="hinge" aria-label="Hinge: the pair, the position, the selected region">
+    <section
+      class={ruler === undefined && planes !== undefined ? 'hinge without-ruler' : 'hinge'}
+      aria-label="Hinge: the pair, the position, the selected region"
+    >
       <Verdict {...verdict} />
       <div class="hinge-planes">{planes}</div>
       {ruler === undefined ? <div class="ruler" /> : <TwinRuler {...ruler} />}

@@ -44,6 +44,17 @@ export function PlaneTabs(props: PlaneTabsProps) {
             {label}
           </button>
         ))}
+        {plane !== undefined && (
+          <button
+            type="button"
+            class="button delete"
+            disabled={frozen}
+            title={`Delete ${plane.label}, where nothing is measured on it`}
+            onClick={props.onDelete}
+          >
+            Delete
+          </button>
+        )}
       </div>
       {plane !== undefined && (
         <>
@@ -81,9 +92,6 @@ export function PlaneTabs(props: PlaneTabsProps) {
               <option value="cubic">cubic</option>
               <option value="linear">trilinear</option>
             </select>
-            <button type="button" class="button" disabled={frozen} onClick={props.onDelete}>
-              Delete
-            </button>
           </div>
         </>
       )}

@@ -132,7 +132,7 @@ function Span({
   return (
     <g class="span">
       <path d={`M${x(fromMm)} ${atPx - 3}v6m0 -3H${x(toMm)}m0 -3v6`} />
-      <text x={x(toMm) + 6} y={atPx + 4}>
+      <text x={(x(fromMm) + x(toMm)) / 2} y={atPx - 2} text-anchor="middle">
         {name}
       </text>
     </g>
