@@ -45,6 +45,11 @@ const NO_NOMINAL: Flag = {
   text: 'No nominal inner diameter was given: no artificial lumen narrowing.',
 };
 
+const NOISE_UNKNOWN: Flag = {
+  code: 'noise-unknown',
+  text: 'The noise of this kernel was not measured: two ripples of it may have been taken for struts.',
+};
+
 /**
  * Measures a line across a stent or a lumen on one stack, on the nearest slice. The definitions are those of
  * {@link profileShape}; struts must stand out from the kernel's noise where it is known. With a nominal diameter, a stent is expected: a profile that shows one hump only has no width.
@@ -87,6 +92,7 @@ export function measureProfile(
       isStent && nominalMm !== undefined ? 1 - shape.value.visibleWidthMm / nominalMm : null,
     flags: [
       ...(isStent && nominalMm === undefined ? [NO_NOMINAL] : []),
+      ...(isStent && 'code' in noise ? [NOISE_UNKNOWN] : []),
       ...(slice.image.acquisition.lossy ? [FLAGS.lossy] : []),
     ].map(({ code, text }) => ({ code, text })),
   };
